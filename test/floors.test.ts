@@ -1,0 +1,72 @@
+import { readdirSync, readFileSync } from "node:fs";
+import { dirname, join, relative, resolve } from "node:path";
+import { describe, expect, it } from "vitest";
+
+const source = new URL("../src", import.meta.url).pathname;
+
+/** The floors, lowest first; a folder may import its own floor's permitted folders and everything below. */
+const floors: readonly (readonly string[])[] = [
+  ["numeric"],
+  ["cover", "antenna", "atmosphere", "path", "receiver", "readings", "safety"],
+  ["scenario"],
+  ["budget"],
+  ["study"],
+  ["report"],
+  ["cli"],
+];
+
+/** Imports between models of floor 2 that physics asks for: importer to imported, with the reason. */
+const crossings: Readonly<Record<string, string>> = {
+  "cover/waterFilm.ts": "atmosphere/waterPermittivity.ts", // the film on a cover is liquid water
+  "cover/wetAntennaLoss.ts": "atmosphere/waterPermittivity.ts", // Leijnse's film is liquid water
+  "path/rainFade.ts": "atmosphere/rainAttenuation.ts", // P.530 starts from the P.838 coefficients
+};
+
+const floorOf = (folder: string) => floors.findIndex((names) => names.includes(folder));
+const files = readdirSync(source, { recursive: true, encoding: "utf8" }).filter((name) =>
+  name.endsWith(".ts"),
+);
+
+/** Every relative import of a file, static or dynamic, as paths below src/. */
+function importsOf(file: string): string[] {
+  const text = readFileSync(join(source, file), "utf8");
+  return [...text.matchAll(/(?:from|import\()\s*"(\.[^"]+)"/g)].map((match) =>
+    relative(source, resolve(source, dirname(file), match[1]!)),
+  );
+}
+
+describe("the floors of the house", () => {
+  it("knows every folder", () => {
+    const folders = new Set(files.filter((file) => file.includes("/")).map((file) => file.split("/")[0]!));
+    expect([...folders].filter((folder) => floorOf(folder) < 0)).toEqual([]);
+  });
+
+  it("lets no import climb", () => {
+    const climbing: string[] = [];
+    for (const file of files.filter((name) => name.includes("/"))) {
+      const folder = file.split("/")[0]!;
+      for (const target of importsOf(file)) {
+        const other = target.split("/")[0]!;
+        const face = target === "index.ts" && folder === "cli";
+        const below = floorOf(other) >= 0 && floorOf(other) < floorOf(folder);
+        if (!(face || other === folder || below || crossings[file] === target)) {
+          climbing.push(`${file} -> ${target}`);
+        }
+      }
+    }
+    expect(climbing).toEqual([]);
+  });
+
+  it("keeps packages and the system out of models and arithmetic", () => {
+    const geodesy = "path/geodesic.ts"; // the one model that rests on a library: geodesics on WGS84
+    const offenders = files
+      .filter((file) => floorOf(file.split("/")[0]!) <= 1 && file.includes("/") && file !== geodesy)
+      .filter((file) => /(?:from|import\()\s*"[^."]/.test(readFileSync(join(source, file), "utf8")));
+    expect(offenders).toEqual([]);
+  });
+
+  it("keeps every file short enough to read in one sitting", () => {
+    const long = files.filter((file) => readFileSync(join(source, file), "utf8").split("\n").length > 400);
+    expect(long).toEqual([]);
+  });
+});
