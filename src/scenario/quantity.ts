@@ -1,0 +1,387 @@
+import { wattToDbm } from "../numeric/decibels.ts";
+import { nearest } from "./nearest.ts";
+
+/** What a field of a scenario holds; the name ends in the canonical unit of the value read. */
+export type QuantityKind =
+  | "frequencyGHz"
+  | "bandwidthHz"
+  | "thicknessMm"
+  | "lengthM"
+  | "distanceKm"
+  | "powerDbm"
+  | "levelDb"
+  | "gainDbi"
+  | "angleDeg"
+  | "rainRateMmPerH"
+  | "temperatureC"
+  | "temperatureK"
+  | "pressureHPa"
+  | "percent"
+  | "densityGm3"
+  | "speedMPerS"
+  | "durationMin"
+  | "ratio";
+
+/** A quantity read: `value` in the canonical unit of its kind, `number` and `unit` as they were written. */
+export interface Quantity {
+  readonly ok: true;
+  readonly value: number;
+  readonly number: number;
+  readonly unit: string;
+  /** Standard deviation in the canonical unit; in dB for powers and gains. Only where a spread was written. */
+  readonly sigma?: number;
+}
+
+export type RefusalCode =
+  | "bare_number" // a number where a unit is needed
+  | "wrong_dimension" // a known unit of another quantity
+  | "unknown_unit"
+  | "no_number" // nothing numeric in the text
+  | "unreadable" // a number, then something that is no unit
+  | "decimal_comma"
+  | "thousands_separator"
+  | "not_finite" // too large, or divided by zero
+  | "no_level" // zero or negative power has no level in dBm
+  | "spread" // +/- where none is read, or one that makes no sense
+  | "too_long"
+  | "forbidden" // arithmetic that a scenario may not hold: functions, names, lists
+  | "contradiction" // position: sign against letter, letter against axis
+  | "out_of_range"; // position: beyond the globe
+
+/** A text refused, with everything that a message needs but the place in the file. */
+export interface Refusal {
+  readonly ok: false;
+  readonly code: RefusalCode;
+  readonly read: string;
+  readonly expected: string;
+  readonly hint?: string;
+  /** True where `mathUnits.ts` may still read the text: arithmetic or a rare unit. */
+  readonly libraryMayRead: boolean;
+}
+
+export type Reading = Quantity | Refusal;
+
+/** `read "5", expected a length with a unit, such as ... (bare number; write 5 mm or 5 mil)` */
+export function describeRefusal({ read, expected, hint }: Refusal): string {
+  const shown = read.length > 60 ? `${read.slice(0, 57)}...` : read;
+  return `read ${JSON.stringify(shown)}, expected ${expected}${hint === undefined ? "" : ` (${hint})`}`;
+}
+
+type Dimension = keyof typeof dimensionNouns;
+
+const dimensionNouns = {
+  length: "a length",
+  frequency: "a frequency",
+  power: "a power",
+  level: "a ratio in dB",
+  gain: "an antenna gain",
+  angle: "an angle",
+  rainRate: "a rain rate",
+  speed: "a speed",
+  temperature: "a temperature",
+  pressure: "a pressure",
+  percent: "a percentage",
+  density: "a density",
+  duration: "a duration",
+  number: "a bare number",
+};
+
+interface Unit {
+  readonly dimension: Dimension;
+  readonly names: readonly string[];
+  /** Base units of the dimension in this unit: integers where the definition allows, so that 5 mil is 0.127 mm. */
+  readonly factor: number;
+  /** Added before scaling: degrees that do not start at the base's zero, decibels of another reference. */
+  readonly shift: number;
+}
+
+/** The half-wave dipole over the isotropic radiator, 10 lg 1.641 rounded as the trade rounds it (from memory). */
+const DIPOLE_GAIN_DBI = 2.15;
+
+// Foot and inch: international yard and pound agreement, 1959 (1 yd = 0.9144 m exactly). Nautical mile 1852 m:
+// Monaco 1929. Inch of mercury: conventional, 3386.389 Pa (NIST SP 811, appendix B.8, from memory).
+const units: readonly Unit[] = [
+  ...family("length", { "um µm micron microns": 10, "mm millimetre millimeter": 1e4 }), // base 0.1 um
+  ...family("length", { "cm centimetre centimeter": 1e5, "m metre meter metres meters": 1e7 }),
+  ...family("length", { "km kilometre kilometer": 1e10, "mil mils thou": 254, 'in inch inches "': 254_000 }),
+  ...family("length", { "ft foot feet '": 3_048_000, "yd yard yards": 9_144_000 }),
+  ...family("length", { "mi mile miles": 16_093_440_000 }),
+  ...family("frequency", { Hz: 1, kHz: 1e3, MHz: 1e6, GHz: 1e9 }),
+  ...family("power", { "W watt watts": 1, mW: 1e-3, "uW µW": 1e-6, kW: 1e3 }), // to dBm by logarithm
+  ...family("power", { dBm: 1 }),
+  ...family("power", { dBW: 1 }, 30),
+  ...family("level", { dB: 1 }),
+  ...family("gain", { dBi: 1 }),
+  ...family("gain", { dBd: 1 }, DIPOLE_GAIN_DBI),
+  ...family("angle", { "deg ° degree degrees": 3600, arcmin: 60, arcsec: 1 }),
+  ...family("angle", { mrad: 648 / Math.PI, "rad radian radians": 648_000 / Math.PI }),
+  ...family("rainRate", { "mm/h mm/hr mm/hour": 10, "cm/h cm/hr": 100, "in/h in/hr inch/h inch/hr": 254 }),
+  ...family("speed", { "m/s": 3_600_000, "km/h km/hr kph": 1_000_000, mph: 1_609_344 }), // base mm/h
+  ...family("speed", { "kn kt knot knots": 1_852_000, "ft/s": 1_097_280 }),
+  ...family("temperature", { "degC °C C celsius": 1 }),
+  ...family("temperature", { "K kelvin": 1 }, -273.15),
+  ...family("temperature", { "degF °F F fahrenheit": 5 / 9 }, -32),
+  ...family("pressure", { Pa: 1, "hPa mbar mb": 100, kPa: 1000, bar: 1e5, inHg: 3386.389 }),
+  ...family("percent", { "% percent": 1 }),
+  ...family("density", { "g/m3 g/m^3 g/m³": 1, "kg/m3 kg/m^3 kg/m³": 1e3, "g/cm3 g/cm^3 g/cm³": 1e6 }),
+  ...family("duration", { "s sec second seconds": 1, "min minute minutes": 60 }),
+  ...family("duration", { "h hr hour hours": 3600, "d day days": 86_400 }),
+  { dimension: "number", names: [""], factor: 1, shift: 0 },
+];
+
+function family(dimension: Dimension, factors: Readonly<Record<string, number>>, shift = 0): Unit[] {
+  return Object.entries(factors).map(([names, factor]) => {
+    return { dimension, names: names.split(" "), factor, shift };
+  });
+}
+
+/** Units whose first letter is read as written, because m and M are a thousand million apart. */
+const strictCase = new Set(["MHz", "mW", "mm", "m", "mbar", "mb", "mrad"]);
+const strictUnits = new Map<string, Unit>();
+const looseUnits = new Map<string, Unit>();
+for (const unit of units) {
+  for (const name of unit.names) {
+    if (strictCase.has(name)) strictUnits.set(firstAsWritten(name), unit);
+    else looseUnits.set(name.toLowerCase(), unit);
+  }
+}
+
+function firstAsWritten(name: string): string {
+  return name.slice(0, 1) + name.slice(1).toLowerCase();
+}
+
+function findUnit(name: string): Unit | undefined {
+  return strictUnits.get(firstAsWritten(name)) ?? looseUnits.get(name.toLowerCase());
+}
+
+interface Kind {
+  readonly expected: string;
+  /** The units people use for it, the canonical one first. */
+  readonly usual: readonly string[];
+}
+
+export const kinds: Readonly<Record<QuantityKind, Kind>> = {
+  frequencyGHz: kind("a frequency", "10.368 GHz or 5760 MHz", "GHz", "MHz"),
+  bandwidthHz: kind("a bandwidth", "500 Hz or 2.4 kHz", "Hz", "kHz", "MHz"),
+  thicknessMm: kind("a length", "0.8 mm, 5 mil or 3/32 in", "mm", "mil", "in"),
+  lengthM: kind("a length", "60 cm, 5 ft or 412 m", "m", "cm", "ft"),
+  distanceKm: kind("a distance", "8 km or 5 mi", "km", "mi", "m"),
+  powerDbm: kind("a power", "3 W, 200 mW or 34.8 dBm", "dBm", "W", "mW"),
+  levelDb: kind("a ratio", "0.25 dB", "dB"),
+  gainDbi: kind("an antenna gain", "34.5 dBi or 32.4 dBd", "dBi", "dBd"),
+  angleDeg: kind("an angle", "0.5 deg", "deg", "mrad"),
+  rainRateMmPerH: kind("a rain rate", "16 mm/h or 0.6 in/h", "mm/h", "in/h"),
+  temperatureC: kind("a temperature", "20 degC, 68 degF or 293 K", "degC", "degF", "K"),
+  temperatureK: kind("a temperature", "200 K", "K"),
+  pressureHPa: kind("a pressure", "1013 hPa or 29.92 inHg", "hPa", "kPa", "inHg"),
+  percent: { expected: "a percentage, such as 90 %", usual: ["%"] },
+  densityGm3: kind("a density", "0.05 g/m3", "g/m3", "kg/m3"),
+  speedMPerS: kind("a speed", "12 m/s, 43 km/h or 23 kn", "m/s", "km/h", "kn"),
+  durationMin: kind("a duration", "30 min or 2 h", "min", "h", "s"),
+  ratio: { expected: "a number without a unit, such as 0.4 or 4/3", usual: [""] },
+};
+
+function kind(noun: string, examples: string, ...usual: string[]): Kind {
+  return { expected: `${noun} with a unit, such as ${examples}`, usual };
+}
+
+/** Longest text that is read at all; the longest sensible sum of lengths is far shorter. */
+export const LONGEST_TEXT = 200;
+
+const numberThenRest = /^([+-]?)(?:(\d+) +(\d+\/\d+)|(\d+\/\d+)|((?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?))(.*)$/i;
+const spreadSign = /\s*(?:\+\/?-|±)\s*/;
+
+/**
+ * Reads what stands in a scenario where a quantity is needed.
+ *
+ * Optional sign, then a decimal number, a fraction `3/32` or a mixed number `1 1/2`, then the unit, which only
+ * `ratio` goes without. The case of letters matters only between m and M. Arithmetic and rare units are left to
+ * `mathUnits.ts`: the refusal says whether it may help. Whether the value makes sense is the caller's question.
+ *
+ * @param input  text of the scalar, or the number that YAML made of it
+ * @param kind  what the field holds, and so the canonical unit of the value
+ * @param spread  true where `0.22 dB +/- 0.05 dB` is welcome; then `sigma` is returned where one was written
+ */
+export function readQuantity(
+  input: string | number,
+  kind: QuantityKind,
+  { spread = false }: { spread?: boolean } = {},
+): Reading {
+  const text = tidy(String(input));
+  const early = refuseEarly(text, kind);
+  if (early) return early;
+  if (!spreadSign.test(text)) return readPlain(text, kind);
+  if (!spread) return refuse("spread", text, kind, "no uncertainty is taken here");
+  return readSpread(text, kind);
+}
+
+/** Typographic signs to the plain ones that the grammar knows. */
+export function tidy(text: string): string {
+  return text
+    .trim()
+    .replace(/\s/g, " ")
+    .replace(/[−–]/g, "-")
+    .replace(/μ/g, "µ") // Greek mu to the micro sign
+    .replace(/º/g, "°") // ordinal sign, a common slip
+    .replace(/[′’]/g, "'")
+    .replace(/[″”]|''/g, '"');
+}
+
+export function refuse(
+  code: RefusalCode,
+  read: string,
+  kind: QuantityKind,
+  hint?: string,
+  libraryMayRead = false,
+): Refusal {
+  const { expected } = kinds[kind];
+  return { ok: false, code, read, expected, libraryMayRead, ...(hint === undefined ? {} : { hint }) };
+}
+
+/** Shapes that must not reach the grammar, nor the arithmetic, because they would be read as something else. */
+function refuseEarly(text: string, kind: QuantityKind): Refusal | undefined {
+  if (text.length > LONGEST_TEXT) {
+    return refuse("too_long", text, kind, `longer than ${LONGEST_TEXT} characters`);
+  }
+  if (!/\d/.test(text)) return refuse("no_number", text, kind);
+  const thousands = /^[+-]?\d{1,3}([, _']\d{3})+(?![\d/])/.exec(text);
+  if (thousands) {
+    const joined = thousands[0].replace(/[, _']/g, "");
+    const point = thousands[1]!.startsWith(",")
+      ? `, or ${thousands[0].replace(",", ".")} if the comma is a decimal sign`
+      : "";
+    return refuse("thousands_separator", text, kind, `write ${joined} without a separator${point}`);
+  }
+  const comma = /(\d*),(\d+)/.exec(text);
+  if (comma) return refuse("decimal_comma", text, kind, `write ${comma[1] || "0"}.${comma[2]} with a point`);
+  const hyphened = /^(\d+)-(\d+\/\d+)(?!\d)\s*(.*)$/.exec(text);
+  if (hyphened) {
+    return refuse("unreadable", text, kind, `write ${`${hyphened[1]} ${hyphened[2]} ${hyphened[3]}`.trim()}`);
+  }
+  const feetAndInches = /^(\d+)\s*(?:ft|feet|foot|')\s*(\d[\d./ ]*?)\s*(?:in|inch|inches|")?$/i.exec(text);
+  if (feetAndInches) {
+    return refuse("unreadable", text, kind, `write ${feetAndInches[1]} ft + ${feetAndInches[2]} in`);
+  }
+  return undefined;
+}
+
+function readPlain(text: string, kind: QuantityKind): Reading {
+  const parts = split(text);
+  if (!parts) return refuse("unreadable", text, kind, undefined, true);
+  const { number, unit: written } = parts;
+  if (!Number.isFinite(number)) return refuse("not_finite", text, kind, "too large, or divided by zero");
+  const unit = findUnit(written);
+  if (!unit) return refuseUnit(text, written, kind);
+  const target = findUnit(kinds[kind].usual[0]!)!;
+  if (unit.dimension !== target.dimension) return refuseDimension(text, number, unit, kind);
+  if (kind === "temperatureK" && unit !== target) {
+    const kelvin = round(convert(number, unit, target));
+    return refuse("wrong_dimension", text, kind, `a noise temperature is in kelvin; write ${kelvin} K`);
+  }
+  const value = convert(number, unit, target);
+  if (Number.isNaN(value)) {
+    return refuse("no_level", text, kind, "a power of zero or less has no level in dBm");
+  }
+  if (!Number.isFinite(value)) return refuse("not_finite", text, kind, "too large");
+  return { ok: true, value, number, unit: written };
+}
+
+function split(text: string): { number: number; unit: string } | undefined {
+  const match = numberThenRest.exec(text);
+  if (!match) return undefined;
+  const [, sign, whole = "0", mixed, fraction, decimal, rest] = match;
+  const part = mixed ?? fraction;
+  const [above, below] = (part ?? "0/1").split("/").map(Number);
+  const magnitude = decimal === undefined ? Number(whole) + above! / below! : Number(decimal);
+  const unit = rest!
+    .trim()
+    .replace(/ *\/ */g, "/")
+    .replace(/° (?=[CF]$)/i, "°");
+  return { number: sign === "-" ? -magnitude : magnitude, unit };
+}
+
+/** From unit to unit of one dimension; NaN for a power that has no level. */
+function convert(number: number, from: Unit, to: Unit): number {
+  if (from === to) return number;
+  if (isWatts(from)) return number > 0 ? wattToDbm(number * from.factor) : Number.NaN;
+  return ((number + from.shift) * from.factor) / to.factor - to.shift;
+}
+
+function isWatts({ dimension, names }: Unit): boolean {
+  return dimension === "power" && !names[0]!.startsWith("dB");
+}
+
+function refuseUnit(text: string, written: string, kind: QuantityKind): Refusal {
+  if (!/^[\p{L}°%"'µ][\p{L}\d°/^³-]*$/u.test(written)) {
+    return refuse("unreadable", text, kind, undefined, true);
+  }
+  const strict = [...strictCase].find((name) => name.toLowerCase() === written.toLowerCase());
+  if (strict) return refuse("unknown_unit", text, kind, `case matters: did you mean ${strict}?`);
+  const close = nearestUnit(written, kind);
+  return refuse("unknown_unit", text, kind, close && `unknown unit; did you mean ${close}?`, true);
+}
+
+/** The unit closest to a mistyped one; one that fits the kind is preferred. */
+export function nearestUnit(written: string, kind: QuantityKind): string | undefined {
+  const { dimension } = findUnit(kinds[kind].usual[0]!)!;
+  const fitting = units.filter((unit) => unit.dimension === dimension).flatMap(({ names }) => names);
+  return (
+    nearest(written, fitting) ??
+    nearest(
+      written,
+      units.flatMap(({ names }) => names),
+    )
+  );
+}
+
+function refuseDimension(text: string, number: number, unit: Unit, kind: QuantityKind): Refusal {
+  const { usual } = kinds[kind];
+  const withUnit = `write ${either(usual.map((name) => `${number} ${name}`))}`;
+  const target = findUnit(usual[0]!)!;
+  if (unit.dimension === "number") {
+    const meant =
+      kind === "percent" && number > 0 && number <= 1 ? `write ${round(number * 100)} %` : withUnit;
+    return refuse("bare_number", text, kind, `bare number; ${meant}`);
+  }
+  const fact = `${text} is ${dimensionNouns[unit.dimension]}`;
+  if (kind === "ratio" && unit.dimension === "percent") {
+    return refuse("wrong_dimension", text, kind, `write ${round(number / 100)}`);
+  }
+  const bothDecibels = isDecibel(unit) && isDecibel(target);
+  return refuse("wrong_dimension", text, kind, bothDecibels ? `${fact}; ${withUnit}` : fact);
+}
+
+function isDecibel({ names }: Unit): boolean {
+  return names[0]!.startsWith("dB");
+}
+
+/** `3 W +/- 0.5 dB`, `0.22 +/- 0.05 dB`, `(0.22 ± 0.05) dB`; powers and gains have their spread in dB. */
+function readSpread(text: string, kind: QuantityKind): Reading {
+  const open = text.replace(/^\(([^()]*)\)(.+)$/, "$1 $2");
+  const [left = "", right = "", ...more] = open.split(spreadSign);
+  const deviation = split(right);
+  if (more.length > 0 || !deviation || !(deviation.number >= 0) || deviation.number === Infinity) {
+    return refuse("spread", text, kind, "write one spread, not negative, after +/-");
+  }
+  const shared = /[^\d.eE/+\s-]/.test(left) ? left : `${left} ${deviation.unit}`;
+  const centre = readPlain(shared, kind);
+  if (!centre.ok) return { ...centre, read: text, libraryMayRead: false };
+  const target = findUnit(kinds[kind].usual[0]!)!;
+  const unit = findUnit(deviation.unit);
+  const fits = unit && (isDecibel(target) ? isDecibel(unit) : unit.dimension === target.dimension);
+  if (!fits) {
+    const wanted = isDecibel(target) ? "dB" : either(kinds[kind].usual) || "a bare number";
+    return refuse("spread", text, kind, `write the spread in ${wanted}`);
+  }
+  return { ...centre, sigma: (deviation.number * unit.factor) / target.factor };
+}
+
+/** `a`, `a or b`, `a, b or c` */
+export function either(choices: readonly string[]): string {
+  return choices.join(", ").replace(/, ([^,]*)$/, " or $1");
+}
+
+/** Ten digits: enough for a hint, and free of the last binary digit's noise. */
+export function round(value: number): number {
+  return Number(value.toPrecision(10));
+}
