@@ -1,0 +1,168 @@
+import { requireFinite } from "../numeric/check.ts";
+
+/** Radio-climatic zone: `coastal` is low land near a large body of water, `inland` all other land. */
+export type Zone = "inland" | "coastal" | "sea";
+
+/** Terrain along a path: point 0 stands under the transmitter, the last one under the receiver. */
+export interface Profile {
+  /** Distance from the transmitter [km]: the first is 0, then rising strictly. */
+  readonly distancesKm: ArrayLike<number>;
+  /** Bare ground above mean sea level [m]. */
+  readonly heightsM: ArrayLike<number>;
+  /** Trees and buildings above ground [m]; absent: none. */
+  readonly coverM?: ArrayLike<number> | undefined;
+  /** Zone of each point; absent: all inland. */
+  readonly zones?: readonly Zone[] | undefined;
+}
+
+/**
+ * Refuses a profile that no path model can use.
+ *
+ * @throws RangeError on fewer than three points, lists of unequal length, distances that do not start at 0
+ *   or do not rise, a non-finite number, a negative cover or an unknown zone
+ */
+export function requireProfile({ distancesKm, heightsM, coverM, zones }: Profile): void {
+  const points = distancesKm.length;
+  if (points < 3) throw new RangeError(`a profile needs at least 3 points, got ${points}`);
+  for (const [name, list] of Object.entries({ heightsM, coverM, zones })) {
+    if (list !== undefined && list.length !== points) {
+      throw new RangeError(`${name} holds ${list.length} values for ${points} distances`);
+    }
+  }
+  if (distancesKm[0] !== 0) throw new RangeError(`distancesKm must start at 0, got ${distancesKm[0]}`);
+  for (let i = 1; i < points; i++) {
+    if (!(distancesKm[i]! > distancesKm[i - 1]!)) {
+      throw new RangeError(`distancesKm must rise from point to point, point ${i} does not`);
+    }
+  }
+  requireFinite("distancesKm", distancesKm[points - 1]!);
+  for (let i = 0; i < points; i++) {
+    if (!Number.isFinite(heightsM[i])) {
+      throw new RangeError(`heightsM must hold finite numbers, point ${i} does not`);
+    }
+  }
+  if (coverM !== undefined) {
+    for (let i = 0; i < points; i++) {
+      if (!(coverM[i]! >= 0 && coverM[i]! < Infinity)) {
+        throw new RangeError(`coverM must hold finite numbers of at least 0, point ${i} does not`);
+      }
+    }
+  }
+  const unknown = zones?.find((zone) => zone !== "inland" && zone !== "coastal" && zone !== "sea");
+  if (unknown !== undefined) throw new RangeError(`unknown zone ${unknown}`);
+}
+
+/** Length of the path that a profile describes [km]. */
+export function pathLengthKm({ distancesKm }: Profile): number {
+  return distancesKm[distancesKm.length - 1]!;
+}
+
+/** How the path divides between land and sea. */
+export interface ZoneLengths {
+  /** Longest unbroken run of coastal and inland points [km]. */
+  readonly longestLandKm: number;
+  /** Longest unbroken run of inland points [km]. */
+  readonly longestInlandKm: number;
+  /** Part of the path over sea, 0 to 1. */
+  readonly seaFraction: number;
+}
+
+/**
+ * Land and sea sections of a profile.
+ *
+ * A run of points of one kind reaches half a step towards its neighbours of another kind.
+ *
+ * Source: ITU-R P.452-18, section 3.2 and Table 3
+ */
+export function zoneLengths(profile: Profile): ZoneLengths {
+  const { zones } = profile;
+  const distanceKm = pathLengthKm(profile);
+  if (zones === undefined) {
+    return { longestLandKm: distanceKm, longestInlandKm: distanceKm, seaFraction: 0 };
+  }
+  const land = runsKm(profile.distancesKm, zones, (zone) => zone !== "sea");
+  const inland = runsKm(profile.distancesKm, zones, (zone) => zone === "inland");
+  const sea = runsKm(profile.distancesKm, zones, (zone) => zone === "sea");
+  return {
+    longestLandKm: land.longest,
+    longestInlandKm: inland.longest,
+    seaFraction: sea.total / distanceKm,
+  };
+}
+
+function runsKm(
+  distancesKm: ArrayLike<number>,
+  zones: readonly Zone[],
+  belongs: (zone: Zone) => boolean,
+): { longest: number; total: number } {
+  const last = zones.length - 1;
+  let longest = 0;
+  let total = 0;
+  for (let i = 0; i <= last; i++) {
+    if (!belongs(zones[i]!)) continue;
+    const start = i;
+    while (i < last && belongs(zones[i + 1]!)) i++;
+    const from = start === 0 ? 0 : (distancesKm[start - 1]! + distancesKm[start]!) / 2;
+    const to = i === last ? distancesKm[last]! : (distancesKm[i]! + distancesKm[i + 1]!) / 2;
+    longest = Math.max(longest, to - from);
+    total += to - from;
+  }
+  return { longest, total };
+}
+
+/** Heights above mean sea level [m] of a smooth surface under the two antennas. */
+export interface SmoothSurface {
+  /** Straight line of least squares through the ground. */
+  readonly fitTxM: number;
+  readonly fitRxM: number;
+  /** The same lowered where terrain blocks the ray, and never above the ground: for diffraction. */
+  readonly diffractionTxM: number;
+  readonly diffractionRxM: number;
+}
+
+/**
+ * Smooth surface that stands for the bare ground of a profile.
+ *
+ * Source: ITU-R P.452-18, Attachment 2, sections 5.1.6.2 and 5.1.6.3, equations 161 to 167
+ *
+ * @param profile         as accepted by `requireProfile`; its cover is not counted
+ * @param txHeightAmslM   transmitting antenna above mean sea level [m]
+ * @param rxHeightAmslM   receiving antenna above mean sea level [m]
+ */
+export function smoothSurface(profile: Profile, txHeightAmslM: number, rxHeightAmslM: number): SmoothSurface {
+  const { distancesKm, heightsM } = profile;
+  const last = distancesKm.length - 1;
+  const distance = distancesKm[last]!;
+  const slope = (rxHeightAmslM - txHeightAmslM) / distance;
+  let v1 = 0;
+  let v2 = 0;
+  let obstruction = -Infinity;
+  let slopeTx = -Infinity;
+  let slopeRx = -Infinity;
+  let d0 = 0;
+  let h0 = heightsM[0]!;
+  for (let i = 1; i <= last; i++) {
+    const d = distancesKm[i]!;
+    const h = heightsM[i]!;
+    v1 += (d - d0) * (h + h0);
+    v2 += (d - d0) * (h * (2 * d + d0) + h0 * (d + 2 * d0));
+    d0 = d;
+    h0 = h;
+    if (i === last) break;
+    const aboveRay = h - txHeightAmslM - slope * d;
+    const left = distance - d;
+    const perProduct = aboveRay / (d * left);
+    if (aboveRay > obstruction) obstruction = aboveRay;
+    if (perProduct * left > slopeTx) slopeTx = perProduct * left;
+    if (perProduct * d > slopeRx) slopeRx = perProduct * d;
+  }
+  const fitTxM = (2 * v1 * distance - v2) / distance ** 2;
+  const fitRxM = (v2 - v1 * distance) / distance ** 2;
+  const lowering = obstruction > 0 ? obstruction / (slopeTx + slopeRx) : 0;
+  return {
+    fitTxM,
+    fitRxM,
+    diffractionTxM: Math.min(fitTxM - lowering * slopeTx, heightsM[0]!),
+    diffractionRxM: Math.min(fitRxM - lowering * slopeRx, heightsM[last]!),
+  };
+}
