@@ -68,6 +68,31 @@ describe("Maidenhead locator", () => {
     );
   });
 
+  it("measures the half diagonal to the farthest of the four corners, in both hemispheres", () => {
+    for (const locator of ["JP40", "JB49", "JJ00", "II99", "RE78ir"]) {
+      const { southWest, halfDiagonalKm, ...centre } = locatorToPoint(locator);
+      const opposite = {
+        latitude: 2 * centre.latitude - southWest.latitude,
+        longitude: 2 * centre.longitude - southWest.longitude,
+      };
+      const corners = [southWest.latitude, opposite.latitude].flatMap((latitude) =>
+        [southWest.longitude, opposite.longitude].map((longitude) => ({ latitude, longitude })),
+      );
+      const farthest = Math.max(...corners.map((corner) => geodesicPath(centre, corner).distanceKm));
+      expect(halfDiagonalKm).toBeCloseTo(farthest, 8);
+    }
+  });
+
+  it("puts every border, however rounded, into the cell north and east of it", () => {
+    for (let i = 0; i < 24; i++) {
+      const letter = "abcdefghijklmnopqrstuvwx".charAt(i);
+      for (const degree of [0, 8, 61, -56]) {
+        const place = { latitude: degree + (i * 2.5) / 60, longitude: 2 * degree + (i * 5) / 60 };
+        expect(pointToLocator(place, 8).slice(4)).toBe(`${letter}${letter}00`);
+      }
+    }
+  });
+
   it("gives back the locator whose centre it is", () => {
     fc.assert(
       fc.property(
