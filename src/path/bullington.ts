@@ -15,7 +15,7 @@ const BARE_END_KM = 0.05;
  *
  * The edge stands where the steepest rays from both ends meet; on a clear path it is the point of least
  * clearance. A correction that grows with distance makes up for the edges that one edge cannot stand for.
- * The profile is read twice at most and nothing is allocated.
+ * The profile is read once and no list is allocated.
  *
  * Source: ITU-R P.526-15, section 4.5.1; ITU-R P.452-18, section 4.2.1, equations 13 to 22
  *
@@ -27,57 +27,51 @@ const BARE_END_KM = 0.05;
  * @returns loss [dB] against free space
  */
 export function bullingtonLoss(
-  { distancesKm, heightsM, coverM }: Ground,
+  ground: Ground,
   frequencyGHz: number,
   txHeightM: number,
   rxHeightM: number,
   effectiveRadiusKm: number,
 ): number {
+  const distance = ground.distancesKm[ground.distancesKm.length - 1]!;
+  const rays = steepestRays(ground, txHeightM, rxHeightM, 500 / effectiveRadiusKm);
+  const clear = rays.steepestTx < 0;
+  const product = clear ? rays.leastProduct : rays.steepestTx * rays.steepestRx;
+  const size = Math.sqrt(((0.002 * distance) / diffractionWavelengthM(frequencyGHz)) * product);
+  const edgeDb = knifeEdgeLoss(clear ? -size : size);
+  return edgeDb + (1 - Math.exp(-edgeDb / 6)) * (10 + 0.02 * distance);
+}
+
+/**
+ * Slopes of the steepest rays from each end to the ground, over the ray between the antennas [m/km].
+ *
+ * With the height x of a point over that ray the slopes are x/d and x/left, so that their product is nu^2
+ * but for a factor: at a point of the ground (the least one counts where all is clear) as well as at the
+ * edge where the two steepest rays meet.
+ */
+function steepestRays(
+  { distancesKm, heightsM, coverM }: Ground,
+  txHeightM: number,
+  rxHeightM: number,
+  halfCurvature: number,
+) {
   const last = distancesKm.length - 1;
   const distance = distancesKm[last]!;
-  const halfCurvature = 500 / effectiveRadiusKm;
-  let firstCovered = last;
-  let lastCovered = -1;
-  if (coverM !== undefined) {
-    firstCovered = 1;
-    while (firstCovered < last && distancesKm[firstCovered]! < BARE_END_KM) firstCovered++;
-    lastCovered = last - 1;
-    while (lastCovered > 0 && distance - distancesKm[lastCovered]! < BARE_END_KM) lastCovered--;
-  }
-
-  let txSlope = -Infinity;
-  let rxSlope = -Infinity;
+  const raySlope = (rxHeightM - txHeightM) / distance;
+  let steepestTx = -Infinity;
+  let steepestRx = -Infinity;
+  let leastProduct = Infinity;
   for (let i = 1; i < last; i++) {
     const d = distancesKm[i]!;
     const left = distance - d;
     let height = heightsM === undefined ? 0 : heightsM[i]!;
-    if (i >= firstCovered && i <= lastCovered) height += coverM![i]!;
-    // One division serves both slopes: 1/d = left/(d left) and 1/left = d/(d left).
-    const perProduct = 1 / (d * left);
-    const fromTx = (height - txHeightM) * left * perProduct + halfCurvature * left;
-    const fromRx = (height - rxHeightM) * d * perProduct + halfCurvature * d;
-    if (fromTx > txSlope) txSlope = fromTx;
-    if (fromRx > rxSlope) rxSlope = fromRx;
+    if (coverM !== undefined && d >= BARE_END_KM && left >= BARE_END_KM) height += coverM[i]!;
+    const overRay = (height - txHeightM - raySlope * d) / (d * left) + halfCurvature;
+    const fromTx = overRay * left;
+    const fromRx = overRay * d;
+    if (fromTx > steepestTx) steepestTx = fromTx;
+    if (fromRx > steepestRx) steepestRx = fromRx;
+    if (fromTx * fromRx < leastProduct) leastProduct = fromTx * fromRx;
   }
-
-  const raySlope = (rxHeightM - txHeightM) / distance;
-  const nuFactor = (0.002 * distance) / diffractionWavelengthM(frequencyGHz);
-  let nu = -Infinity;
-  if (txSlope < raySlope) {
-    for (let i = 1; i < last; i++) {
-      const d = distancesKm[i]!;
-      const product = d * (distance - d);
-      let height = heightsM === undefined ? 0 : heightsM[i]!;
-      if (i >= firstCovered && i <= lastCovered) height += coverM![i]!;
-      const above = height + halfCurvature * product - txHeightM - raySlope * d;
-      const here = above * Math.sqrt(nuFactor / product);
-      if (here > nu) nu = here;
-    }
-  } else {
-    // Equations 18 and 19 with the crossing of the two rays inserted: no division by the sum of slopes,
-    // which vanishes where the terrain just grazes.
-    nu = Math.sqrt(nuFactor * (txSlope - raySlope) * Math.max(rxSlope + raySlope, 0));
-  }
-  const edgeDb = knifeEdgeLoss(nu);
-  return edgeDb + (1 - Math.exp(-edgeDb / 6)) * (10 + 0.02 * distance);
+  return { steepestTx, steepestRx, leastProduct };
 }

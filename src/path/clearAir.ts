@@ -217,9 +217,9 @@ function requireInput(input: ClearAirInput): void {
   if (!(input.percent > 0 && input.percent <= 50)) {
     throw new RangeError(`percent must lie above 0 and at most at 50, got ${input.percent}`);
   }
-  for (const end of ["from", "to"] as const) {
-    requireWithin(`${end}.latitude`, input[end].latitude, -90, 90);
-    requireWithin(`${end}.longitude`, input[end].longitude, -360, 360);
+  for (const [end, position] of Object.entries({ from: input.from, to: input.to })) {
+    requireWithin(`${end}.latitude`, position.latitude, -90, 90);
+    requireWithin(`${end}.longitude`, position.longitude, -360, 360);
   }
 }
 

@@ -30,26 +30,35 @@ export function requireProfile({ distancesKm, heightsM, coverM, zones }: Profile
     }
   }
   if (distancesKm[0] !== 0) throw new RangeError(`distancesKm must start at 0, got ${distancesKm[0]}`);
-  for (let i = 1; i < points; i++) {
-    if (!(distancesKm[i]! > distancesKm[i - 1]!)) {
-      throw new RangeError(`distancesKm must rise from point to point, point ${i} does not`);
-    }
-  }
+  const stuck = firstNotRising(distancesKm);
+  if (stuck >= 0) throw new RangeError(`distancesKm must rise from point to point, point ${stuck} does not`);
   requireFinite("distancesKm", distancesKm[points - 1]!);
-  for (let i = 0; i < points; i++) {
-    if (!Number.isFinite(heightsM[i])) {
-      throw new RangeError(`heightsM must hold finite numbers, point ${i} does not`);
-    }
+  const unknownHeight = firstBelow(heightsM, -Number.MAX_VALUE);
+  if (unknownHeight >= 0) {
+    throw new RangeError(`heightsM must hold finite numbers, point ${unknownHeight} does not`);
   }
-  if (coverM !== undefined) {
-    for (let i = 0; i < points; i++) {
-      if (!(coverM[i]! >= 0 && coverM[i]! < Infinity)) {
-        throw new RangeError(`coverM must hold finite numbers of at least 0, point ${i} does not`);
-      }
-    }
+  const negative = coverM === undefined ? -1 : firstBelow(coverM, 0);
+  if (negative >= 0) {
+    throw new RangeError(`coverM must hold finite numbers of at least 0, point ${negative} does not`);
   }
   const unknown = zones?.find((zone) => zone !== "inland" && zone !== "coastal" && zone !== "sea");
   if (unknown !== undefined) throw new RangeError(`unknown zone ${unknown}`);
+}
+
+/** Index of the first number that is not above the one before it, or -1. */
+function firstNotRising(list: ArrayLike<number>): number {
+  for (let i = 1; i < list.length; i++) {
+    if (!(list[i]! > list[i - 1]!)) return i;
+  }
+  return -1;
+}
+
+/** Index of the first number that is below `low` or not finite, or -1. */
+function firstBelow(list: ArrayLike<number>, low: number): number {
+  for (let i = 0; i < list.length; i++) {
+    if (!(list[i]! >= low && list[i]! < Infinity)) return i;
+  }
+  return -1;
 }
 
 /** Length of the path that a profile describes [km]. */
@@ -133,29 +142,8 @@ export function smoothSurface(profile: Profile, txHeightAmslM: number, rxHeightA
   const { distancesKm, heightsM } = profile;
   const last = distancesKm.length - 1;
   const distance = distancesKm[last]!;
-  const slope = (rxHeightAmslM - txHeightAmslM) / distance;
-  let v1 = 0;
-  let v2 = 0;
-  let obstruction = -Infinity;
-  let slopeTx = -Infinity;
-  let slopeRx = -Infinity;
-  let d0 = 0;
-  let h0 = heightsM[0]!;
-  for (let i = 1; i <= last; i++) {
-    const d = distancesKm[i]!;
-    const h = heightsM[i]!;
-    v1 += (d - d0) * (h + h0);
-    v2 += (d - d0) * (h * (2 * d + d0) + h0 * (d + 2 * d0));
-    d0 = d;
-    h0 = h;
-    if (i === last) break;
-    const aboveRay = h - txHeightAmslM - slope * d;
-    const left = distance - d;
-    const perProduct = aboveRay / (d * left);
-    if (aboveRay > obstruction) obstruction = aboveRay;
-    if (perProduct * left > slopeTx) slopeTx = perProduct * left;
-    if (perProduct * d > slopeRx) slopeRx = perProduct * d;
-  }
+  const { v1, v2 } = areaAndMoment(profile);
+  const { obstruction, slopeTx, slopeRx } = highestOverRay(profile, txHeightAmslM, rxHeightAmslM);
   const fitTxM = (2 * v1 * distance - v2) / distance ** 2;
   const fitRxM = (v2 - v1 * distance) / distance ** 2;
   const lowering = obstruction > 0 ? obstruction / (slopeTx + slopeRx) : 0;
@@ -165,4 +153,39 @@ export function smoothSurface(profile: Profile, txHeightAmslM: number, rxHeightA
     diffractionTxM: Math.min(fitTxM - lowering * slopeTx, heightsM[0]!),
     diffractionRxM: Math.min(fitRxM - lowering * slopeRx, heightsM[last]!),
   };
+}
+
+/** Twice the area under the ground [km m] and six times its moment about the transmitter [km^2 m]. */
+function areaAndMoment({ distancesKm, heightsM }: Profile): { v1: number; v2: number } {
+  let v1 = 0;
+  let v2 = 0;
+  for (let i = 1; i < distancesKm.length; i++) {
+    const d = distancesKm[i]!;
+    const d0 = distancesKm[i - 1]!;
+    const h = heightsM[i]!;
+    const h0 = heightsM[i - 1]!;
+    v1 += (d - d0) * (h + h0);
+    v2 += (d - d0) * (h * (2 * d + d0) + h0 * (d + 2 * d0));
+  }
+  return { v1, v2 };
+}
+
+/** Highest ground over the straight ray [m], and the steepest rise over it as seen from each end [m/km]. */
+function highestOverRay({ distancesKm, heightsM }: Profile, txHeightAmslM: number, rxHeightAmslM: number) {
+  const last = distancesKm.length - 1;
+  const distance = distancesKm[last]!;
+  const raySlope = (rxHeightAmslM - txHeightAmslM) / distance;
+  let obstruction = -Infinity;
+  let slopeTx = -Infinity;
+  let slopeRx = -Infinity;
+  for (let i = 1; i < last; i++) {
+    const d = distancesKm[i]!;
+    const left = distance - d;
+    const overRay = heightsM[i]! - txHeightAmslM - raySlope * d;
+    const perProduct = overRay / (d * left);
+    if (overRay > obstruction) obstruction = overRay;
+    if (perProduct * left > slopeTx) slopeTx = perProduct * left;
+    if (perProduct * d > slopeRx) slopeRx = perProduct * d;
+  }
+  return { obstruction, slopeTx, slopeRx };
 }
