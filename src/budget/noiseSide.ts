@@ -1,0 +1,93 @@
+import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
+import { dbToPower, powerToDb } from "../numeric/decibels.ts";
+import { antennaTemperatureInRain, levelBeam } from "../receiver/antennaTemperature.ts";
+import type { Mode } from "../receiver/modes.ts";
+import { noiseTemperatureK, thermalNoiseDbm } from "../receiver/noise.ts";
+import type { Receiver } from "../scenario/types.ts";
+import { type Entry, gainEntry, type Heading } from "./entry.ts";
+import type { Mouth, PreparedWeather } from "./types.ts";
+
+/** Noise figure off a label [dB]: common practice, no source. */
+const LABEL_NOISE_FIGURE_SIGMA_DB = 0.5;
+
+export interface NoiseSide {
+  readonly entries: readonly Entry[];
+  readonly noiseDbm: number;
+  readonly systemTemperatureK: number;
+}
+
+/**
+ * Noise at the receiver's input, step by step from 290 K in the mode's bandwidth.
+ *
+ * The feed's mouth is charged in the form of a matched isolator ahead of the line: a share G_T of the antenna's
+ * noise comes through, what the cover absorbs glows at its own temperature, what is reflected comes back from
+ * the receiver's side at 290 K. Each step is an entry, so that all of them add up to the system's noise.
+ *
+ * Source: noise waves after Bosma 1967 for the mouth; D. M. Pozar, Microwave Engineering, for the line
+ */
+export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeather, mouth: Mouth): NoiseSide {
+  const figureDb = receiver.noiseFigureDb;
+  const clear = receiver.antennaTemperatureK ?? { value: levelBeam.temperatureK, sigma: levelBeam.sigmaK };
+  const { temperatureK: antennaK } = antennaTemperatureInRain({
+    clearK: clear.value,
+    attenuationDb: weather.hydrometeorLossDb,
+  });
+  const receiverK = noiseTemperatureK(figureDb.value);
+  const linePass = dbToPower(-receiver.lineLossDb.value);
+  const lineK = REFERENCE_TEMPERATURE_K * (1 - linePass);
+
+  const matched = dbToPower(-mouth.mismatchLossDb);
+  const passed = matched * dbToPower(-mouth.dissipationDb);
+  const mouthK =
+    passed * antennaK + (matched - passed) * weather.ambientK + (1 - matched) * REFERENCE_TEMPERATURE_K;
+
+  const steps = [
+    REFERENCE_TEMPERATURE_K,
+    REFERENCE_TEMPERATURE_K + receiverK,
+    antennaK + receiverK,
+    antennaK * linePass + lineK + receiverK,
+    mouthK * linePass + lineK + receiverK,
+  ] as const;
+  const systemK = steps[4];
+  const step = (from: number, to: number) => powerToDb(from / to);
+
+  const thermalDbm = thermalNoiseDbm({
+    temperatureK: REFERENCE_TEMPERATURE_K,
+    bandwidthHz: mode.noiseBandwidthHz,
+  });
+  const sky = receiver.antennaTemperatureK ? "scenario" : "level beam, common practice";
+  const figureSigma = figureDb.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB;
+  // A dB more of noise figure raises the system by its receiver's part only.
+  const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
+  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * passed * linePass;
+  const entries = [
+    gainEntry(heading("thermal", `290 K in ${bandwidthText(mode.noiseBandwidthHz)}`, "k T B"), -thermalDbm),
+    gainEntry(
+      heading("receiver", "receiver's noise", "scenario"),
+      step(steps[0], steps[1]),
+      figureSigma * figureWeight,
+    ),
+    gainEntry(
+      heading("antenna", `antenna at ${Math.round(antennaK)} K`, sky),
+      step(steps[1], steps[2]),
+      (powerToDb(Math.E) * antennaSigmaK) / systemK,
+    ),
+    gainEntry(heading("line", "line's noise", "Pozar"), step(steps[2], steps[3])),
+    gainEntry(heading("cover", "noise of feed and cover", "Bosma 1967"), step(steps[3], steps[4])),
+  ];
+  return {
+    entries,
+    noiseDbm: thermalDbm + powerToDb(systemK / REFERENCE_TEMPERATURE_K),
+    systemTemperatureK: systemK,
+  };
+}
+
+function heading(id: string, label: string, source: string): Heading {
+  return { id: `noise.${id}`, stage: "noise", label, source };
+}
+
+export function bandwidthText(hertz: number): string {
+  return hertz >= 1000
+    ? `${Number((hertz / 1000).toPrecision(4))} kHz`
+    : `${Number(hertz.toPrecision(4))} Hz`;
+}

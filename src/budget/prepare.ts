@@ -1,0 +1,180 @@
+import type { End, EndName, Scenario, Weather } from "../scenario/types.ts";
+import { prepareWeather } from "./air.ts";
+import { antennaEntries, type EndHeading, endHeading } from "./antennaEntries.ts";
+import { type Entry, gainEntry, lossEntry } from "./entry.ts";
+import { geometryOf, geometryWarnings } from "./geometry.ts";
+import { mouthOf } from "./mouth.ts";
+import type { Case, Link, Mouth, PathGeometry, PreparedEnd, Warning } from "./types.ts";
+import type { Wetness } from "./waterOnCover.ts";
+
+/** 1-sigma of a power read with coupler and diode, and of a line's loss out of a table [dB]: common practice, no source. */
+const POWER_SIGMA_DB = 0.7;
+const LINE_SIGMA_DB = 0.3;
+
+/** Water on a cover where the weather names no temperature [degC]: common practice, no source. */
+const USUAL_WATER_C = 10;
+
+/**
+ * Everything of a scenario that does not depend on the case, computed once: geometry, antennas, air by weather,
+ * and each feed's mouth under each cover in each weather.
+ *
+ * @throws RangeError on a scenario that `loadScenario` would have refused (the same place twice, a name that
+ *         leads nowhere)
+ */
+export function prepare(scenario: Scenario): Link {
+  const path = geometryOf(scenario);
+  const weathers = mapValues(scenario.weather, (weather, name) =>
+    prepareWeather(scenario, path, weather, `weather.${name}`),
+  );
+  const ends = {
+    transmitter: prepareEnds(scenario, "transmitter", path),
+    receiver: prepareEnds(scenario, "receiver", path),
+  };
+  const warnings = geometryWarnings(path, scenario.path.terrain !== undefined);
+  return { scenario, path, ends, weathers, modes: scenario.modes, warnings };
+}
+
+/** The same link with one weather more, or another one under the same name: what a sweep of the rain rate needs. */
+export function withWeather(link: Link, name: string, weather: Weather): Link {
+  const scenario = { ...link.scenario, weather: { ...link.scenario.weather, [name]: weather } };
+  const prepared = prepareWeather(scenario, link.path, weather, `weather.${name}`);
+  const onEnd = (end: EndName) =>
+    mapValues(link.ends[end], (ready, feed) => ({
+      ...ready,
+      mouth: mapValues(ready.mouth, (byWeather, cover) => ({
+        ...byWeather,
+        [name]: mouthIn(scenario, end, feed, cover, weather),
+      })),
+    }));
+  return {
+    ...link,
+    scenario,
+    ends: { transmitter: onEnd("transmitter"), receiver: onEnd("receiver") },
+    weathers: { ...link.weathers, [name]: prepared },
+  };
+}
+
+/** The cases of a report: the ends as the scenario has them, then every cover on both ends; by weather, by mode. */
+export function cases({ scenario }: Link): Case[] {
+  const { transmitter, receiver } = scenario;
+  const choices = [
+    { transmitter: choiceOf(transmitter), receiver: choiceOf(receiver) },
+    ...Object.keys(scenario.covers).map((cover) => ({
+      transmitter: { feed: transmitter.feed, cover },
+      receiver: { feed: receiver.feed, cover },
+    })),
+  ];
+  const asWritten = ({ transmitter: tx, receiver: rx }: (typeof choices)[number]) =>
+    tx.cover === transmitter.cover && rx.cover === receiver.cover;
+  return choices
+    .filter((choice, i) => i === 0 || !asWritten(choice))
+    .flatMap((choice) =>
+      receiver.modes.flatMap((mode) =>
+        Object.keys(scenario.weather).map((weather) => ({ weather, ...choice, mode })),
+      ),
+    );
+}
+
+function choiceOf({ feed, cover }: End) {
+  return { feed, cover };
+}
+
+/** Both ends may try any feed that suits their dish. */
+function prepareEnds(scenario: Scenario, end: EndName, path: PathGeometry): Record<string, PreparedEnd> {
+  const { dish: dishName, feed: own } = scenario[end];
+  const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
+  const suits = (name: string) => {
+    const feed = scenario.feeds[name]!;
+    if (dish === undefined) return (feed.gainDbi ?? feed.pyramidalHorn ?? feed.conicalHorn) !== undefined;
+    return dish.focalRatio === undefined || (feed.edgeTaperDb ?? feed.tenDbWidthDeg) !== undefined;
+  };
+  const names = Object.keys(scenario.feeds).filter((name) => name === own || suits(name));
+  return Object.fromEntries(names.map((name) => [name, prepareEnd(scenario, end, name, path)]));
+}
+
+function prepareEnd(scenario: Scenario, end: EndName, feedName: string, path: PathGeometry): PreparedEnd {
+  const { frequencyGHz } = scenario;
+  const feed = scenario.feeds[feedName]!;
+  const { dish, lineLossDb } = scenario[end];
+  const heading = endHeading(end);
+  const antenna = antennaEntries(
+    heading,
+    frequencyGHz,
+    feed,
+    dish === undefined ? undefined : scenario.dish[dish],
+  );
+  const lineSigma = lineLossDb.sigma ?? Math.min(LINE_SIGMA_DB, lineLossDb.value / 2);
+  return {
+    ...(end === "transmitter" && { power: powerEntry(heading, scenario) }),
+    line: lossEntry(heading("line", "line and joints", "scenario"), lineLossDb.value, lineSigma),
+    antenna: antenna.entries,
+    beamwidthDeg: antenna.beamwidthDeg,
+    mouth: mapValues(scenario.covers, (_, cover) =>
+      mapValues(scenario.weather, (weather) => mouthIn(scenario, end, feedName, cover, weather)),
+    ),
+    warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),
+  };
+}
+
+function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
+  const { value, sigma = POWER_SIGMA_DB } = powerDbm;
+  return gainEntry(heading("power", "transmitter power, dBm", "scenario"), value, sigma);
+}
+
+function mouthIn(
+  scenario: Scenario,
+  end: EndName,
+  feedName: string,
+  coverName: string,
+  weather: Weather,
+): Mouth {
+  const { frequencyGHz, feeds, covers } = scenario;
+  const wetness = wetnessAt(end, weather);
+  return mouthOf(endHeading(end), frequencyGHz, feeds[feedName]!, covers[coverName]!, coverName, wetness);
+}
+
+/** Rain on the covers of one end; a cover may be wet without rain on the path, and dry while it rains. */
+function wetnessAt(end: EndName, weather: Weather): Wetness | undefined {
+  if (!weather.wets.includes(end)) return undefined;
+  return {
+    rainRateMmPerH: weather.coversWetAsAtMmPerH ?? weather.rainMmPerH.value,
+    windMPerS: weather.windMPerS,
+    // Rain that falls is not below freezing for long; ice and snow are other matters.
+    temperatureC: Math.max(0, weather.temperatureC ?? USUAL_WATER_C),
+  };
+}
+
+/** Doubts about where an end points and how far off the other stands. */
+function aimWarnings(
+  end: EndName,
+  beamwidthDeg: number | undefined,
+  farFieldM: number | undefined,
+  path: PathGeometry,
+): Warning[] {
+  const warnings: Warning[] = [];
+  const { headingErrorDeg, distanceKm } = path;
+  if (beamwidthDeg !== undefined && headingErrorDeg > beamwidthDeg / 4) {
+    warnings.push({
+      code: "locator_too_short",
+      message:
+        `the locators leave the heading uncertain by ${headingErrorDeg.toFixed(1)} deg, more than a quarter of ` +
+        `the beamwidth of ${beamwidthDeg.toFixed(1)} deg; use more characters or coordinates`,
+      where: `path, ${end}`,
+    });
+  }
+  if (farFieldM !== undefined && farFieldM > 1000 * distanceKm) {
+    warnings.push({
+      code: "near_field",
+      message: `the far field of the dish begins at ${Math.round(farFieldM)} m, beyond the other end; gains come out lower`,
+      where: end,
+    });
+  }
+  return warnings;
+}
+
+function mapValues<T, U>(
+  group: Readonly<Record<string, T>>,
+  f: (value: T, name: string) => U,
+): Record<string, U> {
+  return Object.fromEntries(Object.entries(group).map(([name, value]) => [name, f(value, name)]));
+}

@@ -1,0 +1,124 @@
+import type { Bounded } from "../cover/bounded.ts";
+import type { Mode } from "../receiver/modes.ts";
+import type { EndName, Scenario, Site, Weather } from "../scenario/types.ts";
+import type { Entry } from "./entry.ts";
+
+/** A doubt that the user should know of; `where` names the part of the scenario. */
+export interface Warning {
+  readonly code: string;
+  readonly message: string;
+  readonly where: string;
+}
+
+/** What may vary from budget to budget. */
+export interface Case {
+  readonly weather: string;
+  readonly transmitter: EndChoice;
+  readonly receiver: EndChoice;
+  readonly mode: string;
+}
+
+export interface EndChoice {
+  readonly feed: string;
+  readonly cover: string;
+}
+
+export type Verdict = "closes" | "thin" | "fails";
+
+export interface Budget {
+  readonly case: Case;
+  /** From transmitter power to the level at the receiver's input; their sum is `receivedDbm`. */
+  readonly entries: readonly Entry[];
+  readonly receivedDbm: number;
+  /** From thermal noise to system noise, signed as they add to the margin; their sum is -`noiseDbm`. */
+  readonly noiseEntries: readonly Entry[];
+  /** Noise power at the receiver's input in the mode's bandwidth. */
+  readonly noiseDbm: number;
+  readonly systemTemperatureK: number;
+  readonly snrDb: number;
+  /** What the mode asks for, as an entry: minus `requiredSnrDb`. */
+  readonly requirement: Entry;
+  readonly requiredSnrDb: number;
+  readonly marginDb: number;
+  readonly marginLowDb: number;
+  readonly marginHighDb: number;
+  /** Root-sum-square of the sigmas of all entries. */
+  readonly marginSigmaDb: number;
+  /** Probability that the margin is above 0, normal distribution. */
+  readonly holdProbability: number;
+  readonly verdict: Verdict;
+  readonly transmitterCover: CoverState;
+  readonly receiverCover: CoverState;
+  readonly warnings: readonly Warning[];
+}
+
+/** What a covered mouth does in one weather. */
+export interface CoverState {
+  /** Cover in the dry against the bare feed [dB]. */
+  readonly dryCostDb: Bounded;
+  /** What water adds [dB]. */
+  readonly waterCostDb: Bounded;
+  readonly bareReturnLossDb: number;
+  /** Return loss in this weather [dB]. */
+  readonly returnLossDb: Bounded;
+  /** Mean thickness of the water film [mm]; 0 where dry or where drops are modelled instead. */
+  readonly filmMm: number;
+}
+
+/** A path between two sites, seen from both. */
+export interface PathGeometry {
+  readonly distanceKm: number;
+  /** True heading from transmitter to receiver [deg], and back. */
+  readonly headingDeg: number;
+  readonly backHeadingDeg: number;
+  /** Largest error of a heading that the locators leave [deg]. */
+  readonly headingErrorDeg: number;
+  /** Elevation at which the transmitter sees the receiver, k = 4/3 [deg], and back. */
+  readonly elevationDeg: number;
+  readonly backElevationDeg: number;
+  /** Distance at which the two antennas meet the smooth horizon, k = 4/3 [km]. */
+  readonly radioHorizonKm: number;
+  readonly from: Site;
+  readonly to: Site;
+}
+
+/** Everything of an end that a case needs: entries of the antenna, and of the mouth by cover and weather. */
+export interface PreparedEnd {
+  readonly power?: Entry;
+  readonly line: Entry;
+  readonly antenna: readonly Entry[];
+  readonly beamwidthDeg: number | undefined;
+  /** By cover name, then weather name. */
+  readonly mouth: Readonly<Record<string, Readonly<Record<string, Mouth>>>>;
+  readonly warnings: readonly Warning[];
+}
+
+/** A feed's mouth under one cover in one weather. */
+export interface Mouth extends CoverState {
+  readonly entries: readonly Entry[];
+  /** Whole mismatch and whole dissipation, nominal [dB]: what the noise side needs. */
+  readonly mismatchLossDb: number;
+  readonly dissipationDb: number;
+  readonly warnings: readonly Warning[];
+}
+
+/** The air of one weather. */
+export interface PreparedWeather {
+  readonly weather: Weather;
+  readonly entries: readonly Entry[];
+  /** Rain and fog on the path [dB]: what warms the beam. */
+  readonly hydrometeorLossDb: number;
+  readonly ambientK: number;
+  readonly warnings: readonly Warning[];
+}
+
+/** A scenario after everything that does not depend on the case has been computed once. */
+export interface Link {
+  readonly scenario: Scenario;
+  readonly path: PathGeometry;
+  /** By feed name. */
+  readonly ends: Readonly<Record<EndName, Readonly<Record<string, PreparedEnd>>>>;
+  readonly weathers: Readonly<Record<string, PreparedWeather>>;
+  readonly modes: Readonly<Record<string, Mode>>;
+  readonly warnings: readonly Warning[];
+}

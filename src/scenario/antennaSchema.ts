@@ -1,0 +1,164 @@
+import { z } from "zod";
+import { reflectionFigures } from "../cover/reflectionFigures.ts";
+import { group } from "./fields.ts";
+import { describeRefusal, readQuantity } from "./quantity.ts";
+import { quantity, shown, uncertain } from "./quantityField.ts";
+import type { Dish, Feed } from "./types.ts";
+
+/** A mouth that looks up to an offset reflector, or down to one (common practice, no source). */
+const FACING_WORDS: Readonly<Record<string, number>> = { level: 0, up: 45, down: -45 };
+
+const facing = z
+  .union([z.string(), z.number()], {
+    error: ({ input }) => `read ${shown(input)}; expected level, up, down or an elevation in degrees`,
+  })
+  .meta({ description: "where the mouth looks: level, up, down, or an elevation such as 30 deg" })
+  .transform((input, context) => {
+    const word = FACING_WORDS[String(input)];
+    if (word !== undefined) return word;
+    const reading = readQuantity(input, "angleDeg");
+    if (reading.ok && Math.abs(reading.value) <= 90) return reading.value;
+    const fault = reading.ok
+      ? `read "${input}", expected an elevation from -90 to 90 deg`
+      : describeRefusal(reading);
+    context.addIssue({
+      code: "custom",
+      message: `${fault}; the words level, up and down are read too`,
+      input,
+    });
+    return z.NEVER;
+  });
+
+const metres = (about: string) => quantity("lengthM", { about, range: [0.0005, 5] });
+
+const pyramidalHorn = group(
+  {
+    guide_width: metres("broad side of the waveguide"),
+    guide_height: metres("narrow side of the waveguide"),
+    mouth_width: metres("side of the mouth along the guide's broad side"),
+    mouth_height: metres("side of the mouth along the guide's narrow side"),
+    slant_e: metres("apex to mouth in the E plane"),
+    slant_h: metres("apex to mouth in the H plane"),
+  },
+  "a pyramidal horn by its measures",
+).transform((horn) => ({
+  guideAM: horn.guide_width,
+  guideBM: horn.guide_height,
+  apertureAM: horn.mouth_width,
+  apertureBM: horn.mouth_height,
+  slantEM: horn.slant_e,
+  slantHM: horn.slant_h,
+}));
+
+const conicalHorn = group(
+  { mouth: metres("diameter of the mouth"), slant: metres("apex to rim") },
+  "a conical horn by its measures",
+).transform(({ mouth, slant }) => ({ diameterM: mouth, slantM: slant }));
+
+/** A feed, horn or other radiator whose mouth can be covered. */
+export const feedSchema = group(
+  {
+    return_loss: quantity("levelDb", { about: "return loss of the bare feed", range: [0.1, 80] }).optional(),
+    vswr: quantity("ratio", {
+      about: "voltage standing wave ratio of the bare feed",
+      range: [1, 100],
+    }).optional(),
+    phase: quantity("angleDeg", {
+      about: "phase of the feed's reflection seen from outside at its mouth",
+      range: [-360, 360],
+    }).optional(),
+    edge_taper: quantity("levelDb", {
+      about: "feed pattern down at the dish's rim",
+      range: [0.1, 40],
+    }).optional(),
+    beamwidth_10db: quantity("angleDeg", {
+      about: "full width of the pattern at -10 dB",
+      range: [5, 179],
+    }).optional(),
+    gain: uncertain("gainDbi", { about: "gain of the feed by itself", range: [-3, 45] }).optional(),
+    pyramidal_horn: pyramidalHorn.optional(),
+    conical_horn: conicalHorn.optional(),
+    aperture: quantity("thicknessMm", { about: "width of the mouth", range: [1, 5000] }).optional(),
+    facing: facing.optional(),
+  },
+  "a feed: return_loss, and edge_taper for a dish or gain for use by itself",
+).transform((feed, context): Feed => {
+  const { return_loss, vswr } = feed;
+  if ((return_loss === undefined) === (vswr === undefined)) {
+    const message =
+      vswr === undefined
+        ? "missing return_loss (or vswr) of the bare feed"
+        : "both return_loss and vswr; write one";
+    context.addIssue({ code: "custom", message, input: feed });
+    return z.NEVER;
+  }
+  const ways = [feed.gain, feed.pyramidal_horn, feed.conical_horn].filter((way) => way !== undefined);
+  if (ways.length > 1 || (feed.edge_taper !== undefined && feed.beamwidth_10db !== undefined)) {
+    const message =
+      "more than one statement of the same thing; write one of gain, pyramidal_horn, conical_horn and one of edge_taper, beamwidth_10db";
+    context.addIssue({ code: "custom", message, input: feed });
+    return z.NEVER;
+  }
+  return {
+    returnLossDb: return_loss ?? reflectionFigures({ vswr: vswr! }).returnLossDb,
+    phaseDeg: feed.phase,
+    edgeTaperDb: feed.edge_taper,
+    tenDbWidthDeg: feed.beamwidth_10db,
+    gainDbi: feed.gain,
+    pyramidalHorn: feed.pyramidal_horn,
+    conicalHorn: feed.conical_horn,
+    apertureMm: feed.aperture,
+    facingDeg: feed.facing ?? 0,
+  };
+});
+
+/** A dish by its diameter, or by a gain that its user states. */
+export const dishSchema = group(
+  {
+    diameter: quantity("lengthM", { about: "diameter of the dish", range: [0.05, 40] }).optional(),
+    focal_ratio: quantity("ratio", { about: "focal length over diameter", range: [0.15, 3] }).optional(),
+    efficiency: quantity("percent", { about: "aperture efficiency", range: [1, 100] }).optional(),
+    gain: uncertain("gainDbi", { about: "gain of dish and feed together", range: [5, 75] }).optional(),
+    surface_rms: quantity("thicknessMm", { about: "rms error of the surface", range: [0, 50] }).optional(),
+    blockage: quantity("lengthM", {
+      about: "diameter of what stands before the dish",
+      range: [0, 10],
+    }).optional(),
+    pointing_error: quantity("angleDeg", {
+      about: "rms error of the aim in each axis",
+      range: [0, 20],
+    }).optional(),
+    pointing_offset: quantity("angleDeg", {
+      about: "known standing offset of the aim",
+      range: [0, 20],
+    }).optional(),
+  },
+  "a dish: diameter and focal_ratio, or diameter and efficiency, or gain",
+).transform((dish, context): Dish => {
+  const { diameter, focal_ratio, efficiency, gain } = dish;
+  const ways = [focal_ratio, efficiency, gain].filter((way) => way !== undefined).length;
+  const message =
+    gain === undefined && diameter === undefined
+      ? "missing diameter (or gain) of the dish"
+      : ways === 0
+        ? "missing focal_ratio, efficiency or gain of the dish"
+        : ways > 1
+          ? "more than one of focal_ratio, efficiency and gain; write one"
+          : (dish.blockage ?? 0) >= (diameter ?? Number.POSITIVE_INFINITY)
+            ? "blockage as wide as the dish"
+            : undefined;
+  if (message !== undefined) {
+    context.addIssue({ code: "custom", message, input: dish });
+    return z.NEVER;
+  }
+  return {
+    diameterM: diameter,
+    focalRatio: focal_ratio,
+    efficiency: efficiency && efficiency / 100,
+    gainDbi: gain,
+    surfaceRmsMm: dish.surface_rms ?? 0,
+    blockageM: dish.blockage ?? 0,
+    pointingErrorDeg: dish.pointing_error ?? 0,
+    pointingOffsetDeg: dish.pointing_offset ?? 0,
+  };
+});

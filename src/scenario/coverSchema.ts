@@ -1,0 +1,99 @@
+import { z } from "zod";
+import { type Bounded, exactly } from "../cover/bounded.ts";
+import { findMaterial, materials } from "../cover/materials.ts";
+import { wetModels } from "../cover/wetModels.ts";
+import { group, oneOf, text } from "./fields.ts";
+import { nearest } from "./nearest.ts";
+import { quantity, uncertain } from "./quantityField.ts";
+import type { Cover, CoverLayer, Uncertain } from "./types.ts";
+
+/** A figure typed by the user: its spread, where one was typed, bounds it. */
+function spreadOf({ value, sigma = 0 }: Uncertain, lowest: number): Bounded {
+  return { nominal: value, low: Math.max(lowest, value - sigma), high: value + sigma };
+}
+
+const layer = group(
+  {
+    material: text("a material of `oilskin materials`, air, or a name of your own with its permittivity"),
+    thickness: quantity("thicknessMm", { about: "thickness of the layer", range: [0, 1000] }),
+    permittivity: uncertain("ratio", { about: "relative permittivity", range: [1, 200] }).optional(),
+    loss_tangent: uncertain("ratio", { about: "loss tangent", range: [0, 10] }).optional(),
+  },
+  "a layer: material and thickness",
+).transform(({ material, thickness: thicknessMm, permittivity, loss_tangent }, context): CoverLayer => {
+  const known = material === "air" ? undefined : findMaterial(material);
+  const eps = permittivity && spreadOf(permittivity, 1);
+  const loss = loss_tangent && spreadOf(loss_tangent, 0);
+  if (material === "air") {
+    return { material, thicknessMm, permittivity: eps ?? exactly(1), lossTangent: loss ?? exactly(0) };
+  }
+  if (known === undefined && eps === undefined) {
+    const names = materials.flatMap(({ name, aliases }) => [name, ...aliases]);
+    const meant = nearest(material, names);
+    const hint = meant === undefined ? "`oilskin materials` lists them" : `did you mean ${meant}?`;
+    const message = `read "${material}", expected a known material or a permittivity beside it (${hint})`;
+    context.addIssue({ code: "custom", message, path: ["material"], input: material });
+    return z.NEVER;
+  }
+  return {
+    material: known?.name ?? material,
+    thicknessMm,
+    permittivity: eps ?? known!.permittivity,
+    lossTangent: loss ?? known?.lossTangent ?? exactly(0),
+  };
+});
+
+const measured = group(
+  {
+    insertion_loss: uncertain("levelDb", { about: "measured insertion loss", range: [-10, 60] }),
+    return_loss_change: uncertain("levelDb", {
+      about: "bare return loss less covered return loss, positive where the cover spoils the match",
+      range: [-60, 60],
+    }).optional(),
+  },
+  "a measured cover: insertion_loss, return_loss_change",
+);
+
+/** A cover of a feed's mouth; with neither layers nor readings it is bare. */
+export const coverSchema = group(
+  {
+    layers: z.array(layer, { error: "expected a list of layers, feed side first" }).optional(),
+    measured: measured.optional(),
+    surface: oneOf(["wetting", "beading", "mixed"], "how water lies on the outside").optional(),
+    state: oneOf(["new", "weathered", "treated"], "state of the surface").optional(),
+    wet_model: oneOf(wetModels, "model of the water on it").optional(),
+    gap: quantity("thicknessMm", {
+      about: "distance from the mouth to the cover",
+      range: [0, 1000],
+    }).optional(),
+    slope_length: quantity("thicknessMm", {
+      about: "length down which water runs",
+      range: [1, 10000],
+    }).optional(),
+  },
+  "a cover: layers or measured, and its surface; {} is a bare mouth",
+).transform(
+  ({
+    layers = [],
+    measured,
+    surface,
+    state = "new",
+    wet_model: wetModel,
+    gap: gapMm = 0,
+    slope_length: slopeMm,
+  }): Cover => {
+    const outermost = layers.at(-1);
+    return {
+      layers,
+      measured: measured && {
+        insertionLossDb: measured.insertion_loss,
+        returnLossChangeDb: measured.return_loss_change,
+      },
+      surface: surface ?? (outermost && findMaterial(outermost.material)?.wetting) ?? "mixed",
+      state,
+      wetModel,
+      gapMm,
+      slopeMm,
+    };
+  },
+);

@@ -1,0 +1,171 @@
+import type { Bounded } from "../cover/bounded.ts";
+import type { Wetting } from "../cover/materials.ts";
+import type { SurfaceCare } from "../cover/surfaceState.ts";
+import type { WetModel } from "../cover/wetModels.ts";
+import type { Mode } from "../receiver/modes.ts";
+
+/**
+ * A scenario after reading: every quantity in one canonical unit, named in the field.
+ *
+ * `loadScenario` makes it from YAML; a program may as well build one by hand.
+ */
+
+/** A value that may carry the 1-sigma uncertainty that its user typed, in the unit of the value (dB for powers). */
+export interface Uncertain {
+  readonly value: number;
+  readonly sigma?: number | undefined;
+}
+
+export type Polarization = "horizontal" | "vertical" | "circular";
+export type EndName = "transmitter" | "receiver";
+
+export interface Site {
+  readonly name?: string | undefined;
+  readonly latitude: number;
+  readonly longitude: number;
+  /** As typed, where the position came from a locator. */
+  readonly locator?: string | undefined;
+  /** Largest distance of the true position from the one used, half the diagonal of the locator's cell [km]. */
+  readonly positionErrorKm: number;
+  /** Ground above mean sea level [m]. */
+  readonly groundM: number;
+  /** Antenna above ground [m]. */
+  readonly heightM: number;
+}
+
+/** One end's way into the air; an end without a dish radiates from its feed. */
+export interface End {
+  readonly feed: string;
+  /** The cover on the feed's mouth. */
+  readonly cover: string;
+  readonly dish?: string | undefined;
+  readonly lineLossDb: Uncertain;
+}
+
+export interface Transmitter extends End {
+  readonly powerDbm: Uncertain;
+}
+
+export interface Receiver extends End {
+  readonly noiseFigureDb: Uncertain;
+  /** Noise temperature of what the antenna sees in dry weather [K]; undefined takes the level-beam default. */
+  readonly antennaTemperatureK?: Uncertain | undefined;
+  readonly modes: readonly string[];
+}
+
+export interface Feed {
+  readonly returnLossDb: number;
+  /** Phase of the feed's own reflection seen from outside, at the plane of its mouth [deg]; seldom known. */
+  readonly phaseDeg?: number | undefined;
+  /** How far the feed's pattern is down at the rim of its dish [dB]. */
+  readonly edgeTaperDb?: number | undefined;
+  /** Full width of the feed's pattern at -10 dB [deg]. */
+  readonly tenDbWidthDeg?: number | undefined;
+  /** Gain of the feed used as an antenna by itself [dBi]. */
+  readonly gainDbi?: Uncertain | undefined;
+  readonly pyramidalHorn?: PyramidalHornSize | undefined;
+  readonly conicalHorn?: { readonly diameterM: number; readonly slantM: number } | undefined;
+  /** Width of the mouth [mm]. */
+  readonly apertureMm?: number | undefined;
+  /** Elevation to which the mouth looks [deg]: 0 for a prime-focus feed of a level dish, up for an offset feed. */
+  readonly facingDeg: number;
+}
+
+export interface PyramidalHornSize {
+  readonly guideAM: number;
+  readonly guideBM: number;
+  readonly apertureAM: number;
+  readonly apertureBM: number;
+  readonly slantEM: number;
+  readonly slantHM: number;
+}
+
+export interface Dish {
+  readonly diameterM?: number | undefined;
+  readonly focalRatio?: number | undefined;
+  /** Aperture efficiency 0 to 1, where the user states it instead of focal ratio and edge taper. */
+  readonly efficiency?: number | undefined;
+  readonly gainDbi?: Uncertain | undefined;
+  readonly surfaceRmsMm: number;
+  readonly blockageM: number;
+  /** Known standing offset of the aim [deg]. */
+  readonly pointingOffsetDeg: number;
+  /** Standard deviation of the aim in each axis [deg]. */
+  readonly pointingErrorDeg: number;
+}
+
+export interface CoverLayer {
+  /** Name in the list of materials, or "air", or what the user calls a material of their own. */
+  readonly material: string;
+  readonly thicknessMm: number;
+  /** With the spread in which the material is published. */
+  readonly permittivity: Bounded;
+  readonly lossTangent: Bounded;
+}
+
+export interface MeasuredCover {
+  readonly insertionLossDb: Uncertain;
+  readonly returnLossChangeDb?: Uncertain | undefined;
+}
+
+export interface Cover {
+  /** Feed side first; empty for a bare mouth. */
+  readonly layers: readonly CoverLayer[];
+  readonly measured?: MeasuredCover | undefined;
+  readonly surface: Wetting;
+  readonly state: SurfaceCare;
+  /** Model of the water on it, where the user chose one; otherwise the surface decides. */
+  readonly wetModel?: WetModel | undefined;
+  /** Distance from the feed's mouth to the cover [mm]. */
+  readonly gapMm: number;
+  /** Length down which water runs [mm]; the feed's mouth where not given. */
+  readonly slopeMm?: number | undefined;
+}
+
+export interface Weather {
+  readonly rainMmPerH: Uncertain;
+  /** Length of path in the rain [km]; undefined takes the effective length of P.530. */
+  readonly extentKm?: number | undefined;
+  /** Liquid water of fog on the path [g/m3]. */
+  readonly fogGPerM3: number;
+  readonly fogExtentKm?: number | undefined;
+  readonly temperatureC?: number | undefined;
+  readonly pressureHPa?: number | undefined;
+  readonly humidityPercent?: number | undefined;
+  readonly dewPointC?: number | undefined;
+  readonly vapourDensityGPerM3?: number | undefined;
+  /** Wind towards the mouths of the feeds [m/s]. */
+  readonly windMPerS: number;
+  readonly wets: readonly EndName[];
+  /** Rain rate at which the covers got their water, where it is not the rain now on the path [mm/h]. */
+  readonly coversWetAsAtMmPerH?: number | undefined;
+}
+
+export interface Decision {
+  readonly reserveDb: number;
+  /** 0 to 1. */
+  readonly confidence: number;
+}
+
+export interface Scenario {
+  readonly title: string;
+  readonly frequencyGHz: number;
+  readonly polarization: Polarization;
+  readonly transmitter: Transmitter;
+  readonly receiver: Receiver;
+  readonly feeds: Readonly<Record<string, Feed>>;
+  readonly covers: Readonly<Record<string, Cover>>;
+  readonly dish: Readonly<Record<string, Dish>>;
+  readonly modes: Readonly<Record<string, Mode>>;
+  readonly path: { readonly from: Site; readonly to: Site; readonly terrain?: string | undefined };
+  readonly weather: Readonly<Record<string, Weather>>;
+  readonly decision: Decision;
+}
+
+/** A fault or a doubt in a scenario file. Lines and columns count from 1. */
+export interface Diagnostic {
+  readonly code: string;
+  readonly message: string;
+  readonly line: number;
+  readonly column: number;
+}

@@ -1,0 +1,58 @@
+import { z } from "zod";
+import { group, oneOf } from "./fields.ts";
+import { quantity, uncertain } from "./quantityField.ts";
+import type { Weather } from "./types.ts";
+
+/** Wind that drives rain against an upright cover where the scenario names none [m/s]: common practice, no source. */
+const RAINY_WIND_M_PER_S = 4;
+
+const rate = (about: string) => quantity("rainRateMmPerH", { about, range: [0, 400] });
+const stretch = (about: string) => quantity("distanceKm", { about, range: [0.01, 1000] });
+
+/** One weather to judge the path in; `{}` is dry, of the reference atmosphere. */
+export const weatherSchema = group(
+  {
+    rain: uncertain("rainRateMmPerH", { about: "rain rate on the path", range: [0, 400] }).optional(),
+    extent: stretch("length of path in the rain").optional(),
+    fog: quantity("densityGm3", { about: "liquid water of the fog", range: [0, 5] }).optional(),
+    fog_extent: stretch("length of path in the fog").optional(),
+    temperature: quantity("temperatureC", { about: "air temperature", range: [-60, 60] }).optional(),
+    pressure: quantity("pressureHPa", {
+      about: "barometric pressure at the path, not reduced to sea level",
+      range: [400, 1090],
+    }).optional(),
+    humidity: quantity("percent", { about: "relative humidity", range: [0, 100] }).optional(),
+    dew_point: quantity("temperatureC", { about: "dew point", range: [-60, 40] }).optional(),
+    vapour_density: quantity("densityGm3", { about: "water vapour density", range: [0, 60] }).optional(),
+    wind: quantity("speedMPerS", { about: "wind towards the covers", range: [0, 60] }).optional(),
+    wets: z
+      .array(oneOf(["transmitter", "receiver"], "an end of the path"), {
+        error: "expected a list of the ends whose covers get wet: [transmitter, receiver] or []",
+      })
+      .meta({ description: "ends whose covers the rain wets; both where not given" })
+      .optional(),
+    covers_wet_as_at: rate("rain rate that wetted the covers").optional(),
+  },
+  "a weather: rain, fog, temperature, what it wets; {} is dry",
+).transform((weather, context): Weather => {
+  const { humidity, dew_point, vapour_density } = weather;
+  if ([humidity, dew_point, vapour_density].filter((value) => value !== undefined).length > 1) {
+    const message = "more than one of humidity, dew_point and vapour_density; write one";
+    context.addIssue({ code: "custom", message, input: weather });
+    return z.NEVER;
+  }
+  return {
+    rainMmPerH: weather.rain ?? { value: 0 },
+    extentKm: weather.extent,
+    fogGPerM3: weather.fog ?? 0,
+    fogExtentKm: weather.fog_extent,
+    temperatureC: weather.temperature,
+    pressureHPa: weather.pressure,
+    humidityPercent: humidity,
+    dewPointC: dew_point,
+    vapourDensityGPerM3: vapour_density,
+    windMPerS: weather.wind ?? RAINY_WIND_M_PER_S,
+    wets: weather.wets ?? ["transmitter", "receiver"],
+    coversWetAsAtMmPerH: weather.covers_wet_as_at,
+  };
+});
