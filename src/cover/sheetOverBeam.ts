@@ -1,0 +1,140 @@
+import { requireNotNegative, requirePositive, requireWithin } from "../numeric/check.ts";
+import { abs, abs2, add, type Complex, multiply, polar, scale } from "../numeric/complex.ts";
+import { RADIANS_PER_DEGREE, wavelengthM } from "../numeric/constants.ts";
+import { amplitudeToDb } from "../numeric/decibels.ts";
+import { integrate } from "../numeric/quadrature.ts";
+import { type Layer, layeredSheet, type Sheet } from "./layeredSheet.ts";
+
+export interface SheetOverBeamInput {
+  readonly frequencyGHz: number;
+  readonly layers: readonly Layer[];
+  readonly exponent: number;
+  readonly halfAngleDeg: number;
+  readonly dome?: { readonly radiusMm: number; readonly centreBehindMm: number } | undefined;
+}
+
+export interface SheetOverBeam extends Sheet {
+  /** Mean of |T|^2 over the beam, whatever the phases. */
+  readonly meanPowerTransmission: number;
+  /** Transmission loss over the beam less that straight on [dB]. */
+  readonly spreadDb: number;
+}
+
+/**
+ * A sheet seen by the whole beam of a feed instead of straight on.
+ *
+ * Averages over the feed's power pattern cos^n(theta) up to a half angle, TE and TM in equal shares, since a
+ * linear wave meets both as the azimuth goes round. Reflection and transmission are complex averages: what the
+ * sheet returns into, or passes on in, the feed's own pattern, which is what the match and the dish see. Both
+ * being projections on one pattern, |R|^2 + |T|^2 never exceeds 1 and `coveredFeed` may use them as any sheet;
+ * the reflection straight on beside an averaged T would break that. T of a ray counts against the air that the
+ * sheet replaces, for only a difference of phase across the beam does harm. `absorbedFraction` is the mean
+ * over the beam; what |R|^2, |T|^2 and it leave of 1 goes into other directions.
+ *
+ * Flat sheet: incidence = theta. Dome: spherical cap of radius r, its centre d behind the phase centre; by the
+ * sine rule in the triangle of both centres and the point hit, sin(incidence) = (d/r) sin(theta). A cap around
+ * the phase centre (d = 0) is met straight on everywhere.
+ *
+ * Source: own derivation; plane-wave sheet at each angle by `layeredSheet`
+ * Valid:  locally flat sheet, plane wave along each ray; `nearMouth` says how far that may be trusted
+ *
+ * @param frequencyGHz  [GHz], above 0
+ * @param layers        feed side first
+ * @param exponent      n of the feed's power pattern, at least 0
+ * @param halfAngleDeg  edge of the beam from its axis [deg], above 0 to 89
+ * @param dome          radiusMm above 0; centreBehindMm 0 to radiusMm; absent: flat
+ * @returns the fields of a sheet, meanPowerTransmission, spreadDb
+ * @throws RangeError on an argument outside these ranges
+ */
+export function sheetOverBeam({
+  frequencyGHz,
+  layers,
+  exponent,
+  halfAngleDeg,
+  dome,
+}: SheetOverBeamInput): SheetOverBeam {
+  requireNotNegative("exponent", exponent);
+  requirePositive("halfAngleDeg", halfAngleDeg);
+  requireWithin("halfAngleDeg", halfAngleDeg, 0, 89);
+  const bend = dome === undefined ? 1 : bendOf(dome);
+  const thicknessMm = layers.reduce((sum, layer) => sum + layer.thicknessMm, 0);
+  const airPhase = (2e-3 * Math.PI * thicknessMm) / wavelengthM(frequencyGHz);
+
+  const rays = new Map<number, Ray>();
+  const rayAt = (theta: number): Ray => {
+    const known = rays.get(theta);
+    if (known !== undefined) return known;
+    const incidence = Math.asin(bend * Math.sin(theta));
+    const ray = rayThrough({ frequencyGHz, layers, incidence, airPhase });
+    rays.set(theta, ray);
+    return ray;
+  };
+  const weighted = (figure: (ray: Ray) => number) =>
+    integrate(
+      (theta) => Math.cos(theta) ** exponent * Math.sin(theta) * figure(rayAt(theta)),
+      0,
+      halfAngleDeg * RADIANS_PER_DEGREE,
+    );
+  const whole = weighted(() => 1);
+  const mean = (figure: (ray: Ray) => number) => weighted(figure) / whole;
+  const meanOf = (wave: (ray: Ray) => Complex) => ({
+    re: mean((ray) => wave(ray).re),
+    im: mean((ray) => wave(ray).im),
+  });
+
+  const reflection = meanOf((ray) => ray.reflection);
+  const transmission = multiply(
+    meanOf((ray) => ray.transmission),
+    polar(1, -airPhase),
+  );
+  const transmissionLossDb = 0 - amplitudeToDb(abs(transmission));
+  const straightOn = layeredSheet({ frequencyGHz, incidenceDeg: 0, polarization: "te", layers });
+  return {
+    reflection,
+    transmission,
+    transmissionLossDb,
+    returnLossDb: 0 - amplitudeToDb(abs(reflection)),
+    absorbedFraction: mean((ray) => ray.absorbed),
+    meanPowerTransmission: mean((ray) => ray.power),
+    spreadDb: transmissionLossDb - straightOn.transmissionLossDb,
+  };
+}
+
+/** sin(incidence)/sin(theta) of a dome. */
+function bendOf({ radiusMm, centreBehindMm }: { radiusMm: number; centreBehindMm: number }): number {
+  requirePositive("dome.radiusMm", radiusMm);
+  requireWithin("dome.centreBehindMm", centreBehindMm, 0, radiusMm);
+  return centreBehindMm / radiusMm;
+}
+
+/** What one ray meets, both polarisations in equal shares. */
+interface Ray {
+  readonly reflection: Complex;
+  /** Against the air that the sheet replaces. */
+  readonly transmission: Complex;
+  readonly power: number;
+  readonly absorbed: number;
+}
+
+function rayThrough({
+  frequencyGHz,
+  layers,
+  incidence,
+  airPhase,
+}: {
+  readonly frequencyGHz: number;
+  readonly layers: readonly Layer[];
+  readonly incidence: number;
+  readonly airPhase: number;
+}): Ray {
+  const wave = { frequencyGHz, layers, incidenceDeg: incidence / RADIANS_PER_DEGREE };
+  const te = layeredSheet({ ...wave, polarization: "te" });
+  const tm = layeredSheet({ ...wave, polarization: "tm" });
+  const air = polar(0.5, airPhase * Math.cos(incidence));
+  return {
+    reflection: scale(add(te.reflection, tm.reflection), 0.5),
+    transmission: multiply(add(te.transmission, tm.transmission), air),
+    power: (abs2(te.transmission) + abs2(tm.transmission)) / 2,
+    absorbed: (te.absorbedFraction + tm.absorbedFraction) / 2,
+  };
+}
