@@ -40,11 +40,10 @@ export function layerOf(permittivity: { real: number; imaginary: number }, thick
 /**
  * Reflection and transmission of a plane wave at a stack of flat dielectric layers in air.
  *
- * Characteristic matrices, multiplied from the far side towards the feed. Each matrix is taken times
- * P = exp(-j d), d = k0 t q the complex phase thickness: P cos d = (1 + P^2)/2 and j P sin d = (1 - P^2)/2, so
- * that one exponential serves both and a thick lossy layer never overflows. The product of all P returns in T.
- * Reflection refers to the front face of the first layer; the reflection from behind is that of the reversed
- * stack.
+ * Characteristic matrices, multiplied from the far side towards the feed. With d = k0 t q the complex phase
+ * thickness, each matrix is taken times P = exp(-j d): P cos d = (1 + P^2)/2 and j P sin d = (1 - P^2)/2. So one
+ * exponential serves both, a thick lossy layer never overflows, and the product of all P returns in T.
+ * Reflection refers to the front face of the first layer; that from behind is the reversed stack's.
  *
  * Source: Born & Wolf, Principles of Optics, section 1.6 (from memory).
  * Valid:  passive layers of permittivity 1 or more, mu = 1, infinite extent; no layer or zero thickness is
@@ -78,8 +77,8 @@ export function layeredSheet({ frequencyGHz, incidenceDeg, polarization, layers 
   for (let i = layers.length - 1; i >= 0; i--) {
     const layer = layers[i]!;
     const { permittivity, lossTangent, thicknessMm } = layer;
-    if (!(permittivity >= 1 && lossTangent >= 0 && thicknessMm >= 0 && thicknessMm < Infinity))
-      refuse(i, layer);
+    if (!isPassive(layer)) refuse(i, layer);
+    if (thicknessMm === 0) continue; // nothing, and without a trace of rounding
     const epsIm = -permittivity * lossTangent;
 
     // q = sqrt(eps - sin^2), written so that air gives exactly the cosine's square under the root.
@@ -106,23 +105,18 @@ export function layeredSheet({ frequencyGHz, incidenceDeg, polarization, layers 
     const stepIm = -decay * Math.sin(phase);
     const squaredRe = stepRe * stepRe - stepIm * stepIm;
     const squaredIm = 2 * stepRe * stepIm;
-    const cRe = (1 + squaredRe) / 2;
-    const cIm = squaredIm / 2;
-    const sRe = (1 - squaredRe) / 2;
-    const sIm = -cIm;
 
-    // (E, H) <- (c E + s Z H, s Y E + c H)
-    const hzRe = hRe * zRe - hIm * zIm;
-    const hzIm = hRe * zIm + hIm * zRe;
-    const eyRe = eRe * yRe - eIm * yIm;
-    const eyIm = eRe * yIm + eIm * yRe;
-    const nextERe = cRe * eRe - cIm * eIm + sRe * hzRe - sIm * hzIm;
-    const nextEIm = cRe * eIm + cIm * eRe + sRe * hzIm + sIm * hzRe;
-    const nextHRe = cRe * hRe - cIm * hIm + sRe * eyRe - sIm * eyIm;
-    hIm = cRe * hIm + cIm * hRe + sRe * eyIm + sIm * eyRe;
-    hRe = nextHRe;
-    eRe = nextERe;
-    eIm = nextEIm;
+    // E <- ((E + Z H) + P^2 (E - Z H))/2,  H <- Y ((E + Z H) - P^2 (E - Z H))/2
+    const zhRe = hRe * zRe - hIm * zIm;
+    const zhIm = hRe * zIm + hIm * zRe;
+    const onRe = eRe + zhRe;
+    const onIm = eIm + zhIm;
+    const backRe = squaredRe * (eRe - zhRe) - squaredIm * (eIm - zhIm);
+    const backIm = squaredRe * (eIm - zhIm) + squaredIm * (eRe - zhRe);
+    eRe = (onRe + backRe) / 2;
+    eIm = (onIm + backIm) / 2;
+    hRe = (yRe * (onRe - backRe) - yIm * (onIm - backIm)) / 2;
+    hIm = (yRe * (onIm - backIm) + yIm * (onRe - backRe)) / 2;
 
     const productRe = pRe * stepRe - pIm * stepIm;
     pIm = pRe * stepIm + pIm * stepRe;
@@ -152,10 +146,15 @@ export function layeredSheet({ frequencyGHz, incidenceDeg, polarization, layers 
     reflection,
     transmission,
     // Not from |T|, which underflows in a very lossy stack; a passive sheet's rounding below 0 dB is cut.
-    transmissionLossDb: Math.max(0, DB_PER_NEPER * attenuationNeper - 10 * Math.log10(enteredPower)),
-    returnLossDb: Math.max(0, -10 * Math.log10(reflectedPower)),
+    transmissionLossDb: Math.max(0, DB_PER_NEPER * (attenuationNeper - Math.log(enteredPower) / 2)),
+    returnLossDb: Math.max(0, (-DB_PER_NEPER / 2) * Math.log(reflectedPower)),
     absorbedFraction: Math.max(0, 1 - reflectedPower - passedPower),
   };
+}
+
+function isPassive({ permittivity, lossTangent, thicknessMm }: Layer): boolean {
+  const finite = permittivity < Infinity && lossTangent < Infinity && thicknessMm < Infinity;
+  return finite && permittivity >= 1 && lossTangent >= 0 && thicknessMm >= 0;
 }
 
 function refuse(index: number, layer: Layer): never {

@@ -83,7 +83,7 @@ describe("published examples", () => {
     expect(100 * abs2(sheet.reflection)).toBeCloseTo(14.79, 2);
   });
 
-  // Born & Wolf, Principles of Optics, section 1.6: a half-wave layer has no effect on the reflected power.
+  // Born & Wolf, Principles of Optics, section 1.6 (from memory): a half-wave layer has no effect on the reflected power.
   it("a half-wave slab reflects nothing", () => {
     const layers = [{ permittivity: 4, lossTangent: 0, thicknessMm: (wavelengthM(10) * 1e3) / 4 }];
     const sheet = layeredSheet({ frequencyGHz: 10, incidenceDeg: 0, polarization: "te", layers });
@@ -91,7 +91,7 @@ describe("published examples", () => {
     expect(sheet.transmissionLossDb).toBeCloseTo(0, 12);
   });
 
-  // Born & Wolf, section 1.5: at Brewster's angle, tan theta = n, the wave in the plane of incidence passes whole.
+  // Born & Wolf, section 1.5 (from memory): at Brewster's angle, tan theta = n, a TM wave passes whole.
   it("at Brewster's angle a TM wave passes at any thickness", () => {
     const incidenceDeg = (Math.atan(Math.sqrt(2.08)) * 180) / Math.PI;
     const layers = [{ permittivity: 2.08, lossTangent: 0, thicknessMm: 3.3 }];
@@ -99,7 +99,7 @@ describe("published examples", () => {
     expect(sheet.returnLossDb).toBeGreaterThan(280);
   });
 
-  // Standing-wave spacing of two equal thin sheets: slab matrix solved for its null, 10 GHz, 2.08 x 0.5 mm twice.
+  // Own closed form of two equal sheets, 2 k0 s = arg(G^2 - T^2), evaluated apart from this program.
   it("two 0.5 mm sheets cancel at a gap of 6.7256 mm, short of a quarter wave", () => {
     const skin = { permittivity: 2.08, lossTangent: 0, thicknessMm: 0.5 };
     const reflected = (gapMm: number) =>
@@ -267,7 +267,7 @@ describe("far corners", () => {
     expect(one.transmission).toEqual({ re: 0, im: 0 });
     expect(one.transmissionLossDb).toBeGreaterThan(10_000);
     expect(two.transmissionLossDb / one.transmissionLossDb).toBeCloseTo(2, 3);
-    expect(one.reflection).toEqual(two.reflection);
+    expectSameComplex(one.reflection, two.reflection, 1e-14);
   });
 
   it("takes a permittivity eps' - j eps'' as a layer", () => {

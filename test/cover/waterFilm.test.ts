@@ -122,9 +122,24 @@ describeReference("covers/check-filmloss.csv", (row) => {
   expect(Math.abs(abs(wet.reflection) - num(row, "on_cover_gamma"))).toBeLessThan(2e-4);
 });
 
+describe("a film alone", () => {
+  // Loss of a free film at 10 degC, evaluated apart from this program with a 4x4 matrix.
+  it.each([
+    [0.02, 10.368, 0.74],
+    [0.1, 10.368, 3.63],
+    [0.5, 10.368, 11.56],
+    [0.1, 5.76, 1.94],
+    [0.1, 24.048, 5.49],
+    [0.2, 47.088, 9.42],
+  ])("of %d mm at %d GHz loses %d dB", (thicknessMm, frequencyGHz, lossDb) => {
+    const layer = waterLayer({ thicknessMm, frequencyGHz, temperatureC: 10 });
+    expect(Math.abs(straightOn(frequencyGHz, [layer]).transmissionLossDb - lossDb)).toBeLessThan(0.0055);
+  });
+});
+
 describe("water", () => {
-  // Liebe, Hufford, Manabe 1991 (Int. J. Infrared Millim. Waves 12, 659): 40.028 - j 36.241 at 21 GHz and 300 K, where the
-  // two fits of the high-frequency limit coincide.
+  // Liebe, Hufford, Manabe 1991 (Int. J. Infrared Millim. Waves 12, 659): 40.028 - j 36.241 at 21 GHz and
+  // 300 K, where the two fits of the high-frequency limit coincide.
   it("is a layer of 40.028 - j 36.241 at 21 GHz, 26.85 degC", () => {
     const layer = waterLayer({ thicknessMm: 0.1, frequencyGHz: 21, temperatureC: 26.85 });
     expect(layer.permittivity).toBeCloseTo(40.028, 3);
