@@ -25,14 +25,15 @@ import {
 } from "mathjs";
 import {
   LONGEST_TEXT,
-  nearestUnit,
   type QuantityKind,
   type Reading,
   type RefusalCode,
   readQuantity,
   refuse,
   tidy,
+  unitOf,
 } from "./quantity.ts";
+import { nearestUnit } from "./units.ts";
 
 const parts = {
   addDependencies,
@@ -201,7 +202,7 @@ function unitNamed(name: string, kind: QuantityKind): Unit {
   if (/^dB./i.test(name))
     throw new Refused("forbidden", `${name} is a level: work it out and write one number`);
   if (!math.Unit.isValuelessUnit(name)) {
-    const close = nearestUnit(name, kind);
+    const close = nearestUnit(name, unitOf(kind).dimension);
     const hint = close === undefined ? "" : `; did you mean ${close}?`;
     throw new Refused("unknown_unit", `${name} is no unit${hint}`);
   }

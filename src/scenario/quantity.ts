@@ -1,5 +1,12 @@
-import { wattToDbm } from "../numeric/decibels.ts";
-import { nearest } from "./nearest.ts";
+import {
+  convert,
+  dimensionNouns,
+  findUnit,
+  isDecibel,
+  nearestUnit,
+  type Unit,
+  withOtherCase,
+} from "./units.ts";
 
 /** What a field of a scenario holds; the name ends in the canonical unit of the value read. */
 export type QuantityKind =
@@ -67,93 +74,6 @@ export function describeRefusal({ read, expected, hint }: Refusal): string {
   return `read ${JSON.stringify(shown)}, expected ${expected}${hint === undefined ? "" : ` (${hint})`}`;
 }
 
-type Dimension = keyof typeof dimensionNouns;
-
-const dimensionNouns = {
-  length: "a length",
-  frequency: "a frequency",
-  power: "a power",
-  level: "a ratio in dB",
-  gain: "an antenna gain",
-  angle: "an angle",
-  rainRate: "a rain rate",
-  speed: "a speed",
-  temperature: "a temperature",
-  pressure: "a pressure",
-  percent: "a percentage",
-  density: "a density",
-  duration: "a duration",
-  number: "a bare number",
-};
-
-interface Unit {
-  readonly dimension: Dimension;
-  readonly names: readonly string[];
-  /** Base units of the dimension in this unit: integers where the definition allows, so that 5 mil is 0.127 mm. */
-  readonly factor: number;
-  /** Added before scaling: degrees that do not start at the base's zero, decibels of another reference. */
-  readonly shift: number;
-}
-
-/** The half-wave dipole over the isotropic radiator, 10 lg 1.641 rounded as the trade rounds it (from memory). */
-const DIPOLE_GAIN_DBI = 2.15;
-
-// Foot and inch: international yard and pound agreement, 1959 (1 yd = 0.9144 m exactly). Nautical mile 1852 m:
-// Monaco 1929. Inch of mercury: conventional, 3386.389 Pa (NIST SP 811, appendix B.8, from memory).
-const units: readonly Unit[] = [
-  ...family("length", { "um µm micron microns": 10, "mm millimetre millimeter": 1e4 }), // base 0.1 um
-  ...family("length", { "cm centimetre centimeter": 1e5, "m metre meter metres meters": 1e7 }),
-  ...family("length", { "km kilometre kilometer": 1e10, "mil mils thou": 254, 'in inch inches "': 254_000 }),
-  ...family("length", { "ft foot feet '": 3_048_000, "yd yard yards": 9_144_000 }),
-  ...family("length", { "mi mile miles": 16_093_440_000 }),
-  ...family("frequency", { Hz: 1, kHz: 1e3, MHz: 1e6, GHz: 1e9 }),
-  ...family("power", { "W watt watts": 1, mW: 1e-3, "uW µW": 1e-6, kW: 1e3 }), // to dBm by logarithm
-  ...family("power", { dBm: 1 }),
-  ...family("power", { dBW: 1 }, 30),
-  ...family("level", { dB: 1 }),
-  ...family("gain", { dBi: 1 }),
-  ...family("gain", { dBd: 1 }, DIPOLE_GAIN_DBI),
-  ...family("angle", { "deg ° degree degrees": 3600, arcmin: 60, arcsec: 1 }),
-  ...family("angle", { mrad: 648 / Math.PI, "rad radian radians": 648_000 / Math.PI }),
-  ...family("rainRate", { "mm/h mm/hr mm/hour": 10, "cm/h cm/hr": 100, "in/h in/hr inch/h inch/hr": 254 }),
-  ...family("speed", { "m/s": 3_600_000, "km/h km/hr kph": 1_000_000, mph: 1_609_344 }), // base mm/h
-  ...family("speed", { "kn kt knot knots": 1_852_000, "ft/s": 1_097_280 }),
-  ...family("temperature", { "degC °C C celsius": 1 }),
-  ...family("temperature", { "K kelvin": 1 }, -273.15),
-  ...family("temperature", { "degF °F F fahrenheit": 5 / 9 }, -32),
-  ...family("pressure", { Pa: 1, "hPa mbar mb": 100, kPa: 1000, bar: 1e5, inHg: 3386.389 }),
-  ...family("percent", { "% percent": 1 }),
-  ...family("density", { "g/m3 g/m^3 g/m³": 1, "kg/m3 kg/m^3 kg/m³": 1e3, "g/cm3 g/cm^3 g/cm³": 1e6 }),
-  ...family("duration", { "s sec second seconds": 1, "min minute minutes": 60 }),
-  ...family("duration", { "h hr hour hours": 3600, "d day days": 86_400 }),
-  { dimension: "number", names: [""], factor: 1, shift: 0 },
-];
-
-function family(dimension: Dimension, factors: Readonly<Record<string, number>>, shift = 0): Unit[] {
-  return Object.entries(factors).map(([names, factor]) => {
-    return { dimension, names: names.split(" "), factor, shift };
-  });
-}
-
-/** Units whose first letter is read as written, because m and M are a thousand million apart. */
-const strictCase = new Set(["MHz", "mW", "mm", "m", "mbar", "mb", "mrad"]);
-const strictUnits = new Map<string, Unit>();
-const looseUnits = new Map<string, Unit>();
-for (const unit of units) {
-  for (const name of unit.names) {
-    if (strictCase.has(name)) strictUnits.set(firstAsWritten(name), unit);
-    else looseUnits.set(name.toLowerCase(), unit);
-  }
-}
-
-function firstAsWritten(name: string): string {
-  return name.slice(0, 1) + name.slice(1).toLowerCase();
-}
-
-function findUnit(name: string): Unit | undefined {
-  return strictUnits.get(firstAsWritten(name)) ?? looseUnits.get(name.toLowerCase());
-}
-
 interface Kind {
   readonly expected: string;
   /** The units people use for it, the canonical one first. */
@@ -183,6 +103,11 @@ export const kinds: Readonly<Record<QuantityKind, Kind>> = {
 
 function kind(noun: string, examples: string, ...usual: string[]): Kind {
   return { expected: `${noun} with a unit, such as ${examples}`, usual };
+}
+
+/** The canonical unit of a kind. */
+export function unitOf(kind: QuantityKind): Unit {
+  return findUnit(kinds[kind].usual[0]!)!;
 }
 
 /** Longest text that is read at all; the longest sensible sum of lengths is far shorter. */
@@ -272,7 +197,7 @@ function readPlain(text: string, kind: QuantityKind): Reading {
   if (!Number.isFinite(number)) return refuse("not_finite", text, kind, "too large, or divided by zero");
   const unit = findUnit(written);
   if (!unit) return refuseUnit(text, written, kind);
-  const target = findUnit(kinds[kind].usual[0]!)!;
+  const target = unitOf(kind);
   if (unit.dimension !== target.dimension) return refuseDimension(text, number, unit, kind);
   if (kind === "temperatureK" && unit !== target) {
     const kelvin = round(convert(number, unit, target));
@@ -300,44 +225,20 @@ function split(text: string): { number: number; unit: string } | undefined {
   return { number: sign === "-" ? -magnitude : magnitude, unit };
 }
 
-/** From unit to unit of one dimension; NaN for a power that has no level. */
-function convert(number: number, from: Unit, to: Unit): number {
-  if (from === to) return number;
-  if (isWatts(from)) return number > 0 ? wattToDbm(number * from.factor) : Number.NaN;
-  return ((number + from.shift) * from.factor) / to.factor - to.shift;
-}
-
-function isWatts({ dimension, names }: Unit): boolean {
-  return dimension === "power" && !names[0]!.startsWith("dB");
-}
-
 function refuseUnit(text: string, written: string, kind: QuantityKind): Refusal {
   if (!/^[\p{L}°%"'µ][\p{L}\d°/^³-]*$/u.test(written)) {
     return refuse("unreadable", text, kind, undefined, true);
   }
-  const strict = [...strictCase].find((name) => name.toLowerCase() === written.toLowerCase());
+  const strict = withOtherCase(written);
   if (strict) return refuse("unknown_unit", text, kind, `case matters: did you mean ${strict}?`);
-  const close = nearestUnit(written, kind);
+  const close = nearestUnit(written, unitOf(kind).dimension);
   return refuse("unknown_unit", text, kind, close && `unknown unit; did you mean ${close}?`, true);
-}
-
-/** The unit closest to a mistyped one; one that fits the kind is preferred. */
-export function nearestUnit(written: string, kind: QuantityKind): string | undefined {
-  const { dimension } = findUnit(kinds[kind].usual[0]!)!;
-  const fitting = units.filter((unit) => unit.dimension === dimension).flatMap(({ names }) => names);
-  return (
-    nearest(written, fitting) ??
-    nearest(
-      written,
-      units.flatMap(({ names }) => names),
-    )
-  );
 }
 
 function refuseDimension(text: string, number: number, unit: Unit, kind: QuantityKind): Refusal {
   const { usual } = kinds[kind];
   const withUnit = `write ${either(usual.map((name) => `${number} ${name}`))}`;
-  const target = findUnit(usual[0]!)!;
+  const target = unitOf(kind);
   if (unit.dimension === "number") {
     const meant =
       kind === "percent" && number > 0 && number <= 1 ? `write ${round(number * 100)} %` : withUnit;
@@ -351,10 +252,6 @@ function refuseDimension(text: string, number: number, unit: Unit, kind: Quantit
   return refuse("wrong_dimension", text, kind, bothDecibels ? `${fact}; ${withUnit}` : fact);
 }
 
-function isDecibel({ names }: Unit): boolean {
-  return names[0]!.startsWith("dB");
-}
-
 /** `3 W +/- 0.5 dB`, `0.22 +/- 0.05 dB`, `(0.22 ± 0.05) dB`; powers and gains have their spread in dB. */
 function readSpread(text: string, kind: QuantityKind): Reading {
   const open = text.replace(/^\(([^()]*)\)(.+)$/, "$1 $2");
@@ -366,7 +263,7 @@ function readSpread(text: string, kind: QuantityKind): Reading {
   const shared = /[^\d.eE/+\s-]/.test(left) ? left : `${left} ${deviation.unit}`;
   const centre = readPlain(shared, kind);
   if (!centre.ok) return { ...centre, read: text, libraryMayRead: false };
-  const target = findUnit(kinds[kind].usual[0]!)!;
+  const target = unitOf(kind);
   const unit = findUnit(deviation.unit);
   const fits = unit && (isDecibel(target) ? isDecibel(unit) : unit.dimension === target.dimension);
   if (!fits) {
