@@ -1,6 +1,12 @@
 import { specificGasAttenuation } from "../atmosphere/gasAttenuation.ts";
 import { vapourPressureFromDensity } from "../atmosphere/humidity.ts";
-import { requireFinite, requirePositive, requireWithin, type Validity } from "../numeric/check.ts";
+import {
+  requireFinite,
+  requireNotNegative,
+  requirePositive,
+  requireWithin,
+  type Validity,
+} from "../numeric/check.ts";
 import { RADIANS_PER_DEGREE, ZERO_CELSIUS_K } from "../numeric/constants.ts";
 import { combineMechanisms } from "./clearAirCombination.ts";
 import { deltaBullingtonLoss } from "./deltaBullington.ts";
@@ -210,8 +216,8 @@ function requireInput(input: ClearAirInput): void {
   requirePositive("frequencyGHz", input.frequencyGHz);
   requirePositive("txHeightM", input.txHeightM);
   requirePositive("rxHeightM", input.rxHeightM);
-  requireWithin("txCoastKm", input.txCoastKm, 0, Number.MAX_VALUE);
-  requireWithin("rxCoastKm", input.rxCoastKm, 0, Number.MAX_VALUE);
+  requireNotNegative("txCoastKm", input.txCoastKm);
+  requireNotNegative("rxCoastKm", input.rxCoastKm);
   for (const name of ["txGainDbi", "rxGainDbi", "dN", "N0"] as const) requireFinite(name, input[name]);
   if (!(input.dN < 157)) throw new RangeError(`dN must be below 157, got ${input.dN}: rays are trapped`);
   if (!(input.percent > 0 && input.percent <= 50)) {

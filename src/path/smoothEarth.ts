@@ -4,7 +4,7 @@ import { diffractionWavelengthM } from "./knifeEdge.ts";
 /** Linear polarization of a wave that travels along the ground. */
 export type LinearPolarization = "horizontal" | "vertical";
 
-/** Where the residue series may be cut after its first term. */
+/** Where the residue series may be cut after its first term; the lower limit from memory. */
 export const smoothEarthValidity = { frequencyGHz: [0.01, 50] } as const satisfies Validity;
 
 export interface SmoothEarthInput {
@@ -82,13 +82,13 @@ function clampToUnit(value: number): number {
   return Math.max(-1, Math.min(1, value));
 }
 
-interface Ground {
+interface GroundConstants {
   readonly permittivity: number;
   readonly conductivitySPerM: number;
 }
 
-const land: Ground = { permittivity: 22, conductivitySPerM: 0.003 };
-const sea: Ground = { permittivity: 80, conductivitySPerM: 5 };
+const land: GroundConstants = { permittivity: 22, conductivitySPerM: 0.003 };
+const sea: GroundConstants = { permittivity: 80, conductivitySPerM: 5 };
 
 /** First term of the residue series, mixed by the part of the path over sea; equation 30. */
 function firstTermLoss(input: SmoothEarthInput): number {
@@ -100,7 +100,7 @@ function firstTermLoss(input: SmoothEarthInput): number {
 }
 
 /** Equations 31 to 37. */
-function firstTermLossOver(ground: Ground, input: SmoothEarthInput): number {
+function firstTermLossOver(ground: GroundConstants, input: SmoothEarthInput): number {
   const { frequencyGHz: f, distanceKm, h1M, h2M, effectiveRadiusKm: a, polarization } = input;
   const conduction = (18 * ground.conductivitySPerM) / f;
   const horizontal =
