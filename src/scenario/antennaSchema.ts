@@ -1,20 +1,25 @@
-import { z } from "zod";
+import * as z from "zod";
 import { reflectionFigures } from "../cover/reflectionFigures.ts";
 import { group } from "./fields.ts";
 import { describeRefusal, readQuantity } from "./quantity.ts";
-import { quantity, shown, uncertain } from "./quantityField.ts";
+import { quantity, uncertain } from "./quantityField.ts";
 import type { Dish, Feed } from "./types.ts";
+import { instead } from "./wording.ts";
 
 /** A mouth that looks up to an offset reflector, or down to one (common practice, no source). */
-const FACING_WORDS: Readonly<Record<string, number>> = { level: 0, up: 45, down: -45 };
+const facingWords = new Map([
+  ["level", 0],
+  ["up", 45],
+  ["down", -45],
+]);
 
 const facing = z
   .union([z.string(), z.number()], {
-    error: ({ input }) => `read ${shown(input)}; expected level, up, down or an elevation in degrees`,
+    error: ({ input }) => instead(input, "level, up, down or an elevation in degrees"),
   })
   .meta({ description: "where the mouth looks: level, up, down, or an elevation such as 30 deg" })
   .transform((input, context) => {
-    const word = FACING_WORDS[String(input)];
+    const word = facingWords.get(String(input));
     if (word !== undefined) return word;
     const reading = readQuantity(input, "angleDeg");
     if (reading.ok && Math.abs(reading.value) <= 90) return reading.value;
@@ -61,7 +66,7 @@ export const feedSchema = group(
     return_loss: quantity("levelDb", { about: "return loss of the bare feed", range: [0.1, 80] }).optional(),
     vswr: quantity("ratio", {
       about: "voltage standing wave ratio of the bare feed",
-      range: [1, 100],
+      range: [1.001, 100],
     }).optional(),
     phase: quantity("angleDeg", {
       about: "phase of the feed's reflection seen from outside at its mouth",
@@ -82,23 +87,15 @@ export const feedSchema = group(
     facing: facing.optional(),
   },
   "a feed: return_loss, and edge_taper for a dish or gain for use by itself",
-).transform((feed, context): Feed => {
+  (has) => {
+    if (!has("return_loss") && !has("vswr")) return "missing return_loss (or vswr) of the bare feed";
+    if (has("return_loss") && has("vswr")) return "both return_loss and vswr; write one";
+    if (has("edge_taper") && has("beamwidth_10db")) return "both edge_taper and beamwidth_10db; write one";
+    const gains = (["gain", "pyramidal_horn", "conical_horn"] as const).filter(has);
+    return gains.length > 1 ? "more than one of gain, pyramidal_horn and conical_horn; write one" : undefined;
+  },
+).transform((feed): Feed => {
   const { return_loss, vswr } = feed;
-  if ((return_loss === undefined) === (vswr === undefined)) {
-    const message =
-      vswr === undefined
-        ? "missing return_loss (or vswr) of the bare feed"
-        : "both return_loss and vswr; write one";
-    context.addIssue({ code: "custom", message, input: feed });
-    return z.NEVER;
-  }
-  const ways = [feed.gain, feed.pyramidal_horn, feed.conical_horn].filter((way) => way !== undefined);
-  if (ways.length > 1 || (feed.edge_taper !== undefined && feed.beamwidth_10db !== undefined)) {
-    const message =
-      "more than one statement of the same thing; write one of gain, pyramidal_horn, conical_horn and one of edge_taper, beamwidth_10db";
-    context.addIssue({ code: "custom", message, input: feed });
-    return z.NEVER;
-  }
   return {
     returnLossDb: return_loss ?? reflectionFigures({ vswr: vswr! }).returnLossDb,
     phaseDeg: feed.phase,
@@ -116,7 +113,7 @@ export const feedSchema = group(
 export const dishSchema = group(
   {
     diameter: quantity("lengthM", { about: "diameter of the dish", range: [0.05, 40] }).optional(),
-    focal_ratio: quantity("ratio", { about: "focal length over diameter", range: [0.15, 3] }).optional(),
+    focal_ratio: quantity("ratio", { about: "focal length over diameter", range: [0.251, 3] }).optional(),
     efficiency: quantity("percent", { about: "aperture efficiency", range: [1, 100] }).optional(),
     gain: uncertain("gainDbi", { about: "gain of dish and feed together", range: [5, 75] }).optional(),
     surface_rms: quantity("thicknessMm", { about: "rms error of the surface", range: [0, 50] }).optional(),
@@ -134,21 +131,17 @@ export const dishSchema = group(
     }).optional(),
   },
   "a dish: diameter and focal_ratio, or diameter and efficiency, or gain",
+  (has) => {
+    if (!has("gain") && !has("diameter")) return "missing diameter (or gain) of the dish";
+    const ways = (["focal_ratio", "efficiency", "gain"] as const).filter(has);
+    if (ways.length === 0) return "missing focal_ratio, efficiency or gain of the dish";
+    return ways.length > 1 ? "more than one of focal_ratio, efficiency and gain; write one" : undefined;
+  },
 ).transform((dish, context): Dish => {
   const { diameter, focal_ratio, efficiency, gain } = dish;
-  const ways = [focal_ratio, efficiency, gain].filter((way) => way !== undefined).length;
-  const message =
-    gain === undefined && diameter === undefined
-      ? "missing diameter (or gain) of the dish"
-      : ways === 0
-        ? "missing focal_ratio, efficiency or gain of the dish"
-        : ways > 1
-          ? "more than one of focal_ratio, efficiency and gain; write one"
-          : (dish.blockage ?? 0) >= (diameter ?? Number.POSITIVE_INFINITY)
-            ? "blockage as wide as the dish"
-            : undefined;
-  if (message !== undefined) {
-    context.addIssue({ code: "custom", message, input: dish });
+  if (diameter !== undefined && (dish.blockage ?? 0) >= diameter) {
+    const message = "read a blockage as wide as the dish, expected a smaller one";
+    context.addIssue({ code: "custom", message, path: ["blockage"], input: dish.blockage });
     return z.NEVER;
   }
   return {

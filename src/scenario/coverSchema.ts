@@ -1,11 +1,11 @@
-import { z } from "zod";
+import * as z from "zod";
 import { type Bounded, exactly } from "../cover/bounded.ts";
 import { findMaterial, materials } from "../cover/materials.ts";
 import { wetModels } from "../cover/wetModels.ts";
 import { group, oneOf, text } from "./fields.ts";
-import { nearest } from "./nearest.ts";
 import { quantity, uncertain } from "./quantityField.ts";
 import type { Cover, CoverLayer, Uncertain } from "./types.ts";
+import { didYouMean, instead, shown } from "./wording.ts";
 
 /** A figure typed by the user: its spread, where one was typed, bounds it. */
 function spreadOf({ value, sigma = 0 }: Uncertain, lowest: number): Bounded {
@@ -29,9 +29,8 @@ const layer = group(
   }
   if (known === undefined && eps === undefined) {
     const names = materials.flatMap(({ name, aliases }) => [name, ...aliases]);
-    const meant = nearest(material, names);
-    const hint = meant === undefined ? "`oilskin materials` lists them" : `did you mean ${meant}?`;
-    const message = `read "${material}", expected a known material or a permittivity beside it (${hint})`;
+    const hint = didYouMean(material, names) || " (`oilskin materials` lists them)";
+    const message = `read ${shown(material)}, expected a known material or a permittivity beside it${hint}`;
     context.addIssue({ code: "custom", message, path: ["material"], input: material });
     return z.NEVER;
   }
@@ -57,7 +56,11 @@ const measured = group(
 /** A cover of a feed's mouth; with neither layers nor readings it is bare. */
 export const coverSchema = group(
   {
-    layers: z.array(layer, { error: "expected a list of layers, feed side first" }).optional(),
+    layers: z
+      .array(layer, { error: ({ input }) => instead(input, "a list of layers, feed side first") })
+      .min(1, "an empty list, expected one layer or more; {} is a bare mouth")
+      .meta({ description: "layers of the cover, feed side first" })
+      .optional(),
     measured: measured.optional(),
     surface: oneOf(["wetting", "beading", "mixed"], "how water lies on the outside").optional(),
     state: oneOf(["new", "weathered", "treated"], "state of the surface").optional(),

@@ -1,50 +1,67 @@
-import { z } from "zod";
-import { nearest } from "./nearest.ts";
-import { shown } from "./quantityField.ts";
+import * as z from "zod";
+import { didYouMean, instead, shown } from "./wording.ts";
+
+/** Longest text of the user's own: a name, a title, the path of a file [characters]. */
+const LONGEST_TEXT = 500;
 
 /** A field that takes one of a few words. */
 export function oneOf<const Words extends readonly [string, ...string[]]>(words: Words, about: string) {
   return z
     .enum(words, {
-      error: ({ input }) => {
-        const meant = typeof input === "string" ? nearest(input, words) : undefined;
-        const hint = meant === undefined ? "" : ` (did you mean ${meant}?)`;
-        const read = input === undefined ? "missing" : `read ${shown(input)}`;
-        return `${read}; expected ${about}: ${words.join(", ")}${hint}`;
-      },
+      error: ({ input }) => instead(input, `${about}: ${words.join(", ")}`) + didYouMean(input, words),
     })
     .meta({ description: about });
 }
 
-/** A field that takes words of the user's own. YAML makes a number of a name such as `24`; it is a name all the same. */
+/** A field that takes words of the user's own. A name such as `24` is a number to YAML; it is a name all the same. */
 export function text(about: string) {
   return z
-    .union([z.string(), z.number()], {
-      error: ({ input }) => `${input === undefined ? "missing" : `read ${shown(input)}`}; expected ${about}`,
-    })
+    .union([z.string(), z.number()], { error: ({ input }) => instead(input, about) })
     .transform(String)
-    .refine((value) => value.trim() !== "", { error: `expected ${about}, not an empty text` })
+    .superRefine((value, context) => {
+      const message = faultOfText(value);
+      if (message)
+        context.addIssue({ code: "custom", message: `${message}, expected ${about}`, input: value });
+    })
     .meta({ description: about });
+}
+
+/** What is wrong with a name or other text of the user's own. */
+export function faultOfText(value: string): string | undefined {
+  if (value.trim() === "") return "read an empty text";
+  if (/\p{Cc}/u.test(value)) return `read ${shown(value)}, which holds a line break or control character`;
+  if (value.length > LONGEST_TEXT) return `read a text longer than ${LONGEST_TEXT} characters`;
+  return undefined;
 }
 
 /** A group of named things, each of one shape. */
 export function named<T extends z.ZodType>(shape: T, about: string) {
   return z
-    .record(z.string(), shape, {
-      error: ({ input }) =>
-        `${input === undefined ? "missing" : `read ${shown(input)}`}; expected ${about}, each under its name`,
-    })
+    .record(z.string(), shape, { error: ({ input }) => instead(input, `${about}, each under its name`) })
     .meta({ description: about });
 }
 
-/** A group of known keys; any other key is a fault. */
-export function group<T extends z.core.$ZodLooseShape>(shape: T, about: string) {
+/**
+ * A group of known keys; any other key is a fault.
+ *
+ * @param judge  what is wrong with the keys taken together, told at once with the faults of the values; `has` says
+ *               whether a key was typed
+ */
+export function group<T extends z.core.$ZodLooseShape>(
+  shape: T,
+  about: string,
+  judge?: (has: (key: keyof T & string) => boolean) => string | undefined,
+) {
   return z
     .strictObject(shape, {
-      error: (issue) =>
-        issue.code === "invalid_type"
-          ? `${issue.input === undefined ? "missing" : `read ${shown(issue.input)}`}; expected ${about}`
-          : undefined,
+      error: ({ code, input }) => (code === "invalid_type" ? instead(input, about) : undefined),
     })
+    .superRefine(
+      (value, context) => {
+        const message = judge?.((key) => Object.hasOwn(value, key));
+        if (message) context.addIssue({ code: "custom", message, input: value });
+      },
+      { when: ({ value }) => typeof value === "object" && value !== null && !Array.isArray(value) },
+    )
     .meta({ description: about });
 }

@@ -1,4 +1,15 @@
-import { type Document, isMap, isNode, isPair, isScalar, type LineCounter, type Node } from "yaml";
+import {
+  type Document,
+  isAlias,
+  isMap,
+  isNode,
+  isScalar,
+  isSeq,
+  type LineCounter,
+  type Node,
+  type Scalar,
+  type YAMLMap,
+} from "yaml";
 
 /** Where something stands in a file, lines and columns from 1. */
 export interface Position {
@@ -6,39 +17,62 @@ export interface Position {
   readonly column: number;
 }
 
-/**
- * Place of what a path names: its value; failing that (a missing key, an alias) the nearest parent that has a
- * place, by the key under which it stands.
- */
-export function positionOf(document: Document, lines: LineCounter, path: readonly PropertyKey[]): Position {
-  for (let length = path.length; length > 0; length--) {
-    const node = document.getIn(path.slice(0, length), true);
-    const whole = length === path.length;
-    const place =
-      whole && isNode(node) && isScalar(node) ? node : (keyNode(document, path.slice(0, length)) ?? node);
-    if (isNode(place) && place.range) return at(lines, place.range[0]);
-  }
-  const { contents } = document;
-  return at(lines, isNode(contents) && contents.range ? contents.range[0] : 0);
+export type FaultPath = readonly PropertyKey[];
+
+export interface Places {
+  /**
+   * Place of what a path names: a plain value by itself, a group or list by the key under which it stands; of
+   * what is missing, the nearest parent that is there.
+   */
+  readonly ofValue: (path: FaultPath) => Position;
+  /** Place of a key itself, for a key that should not be there. */
+  readonly ofKey: (path: FaultPath) => Position;
 }
 
-/** Place of a key itself, for a key that should not be there. */
-export function positionOfKey(
-  document: Document,
-  lines: LineCounter,
-  path: readonly PropertyKey[],
-): Position {
-  const key = keyNode(document, path);
-  return key?.range ? at(lines, key.range[0]) : positionOf(document, lines, path.slice(0, -1));
+interface Step {
+  readonly key?: Scalar;
+  readonly value: unknown;
 }
 
-function keyNode(document: Document, path: readonly PropertyKey[]): Node | undefined {
-  const parent = path.length === 1 ? document.contents : document.getIn(path.slice(0, -1), true);
-  if (!isMap(parent)) return undefined;
-  const pair = parent.items.find(
-    (item) => isPair(item) && isScalar(item.key) && String(item.key.value) === String(path.at(-1)),
-  );
-  return isScalar(pair?.key) ? pair.key : undefined;
+/** Places in a document whose keys are plain words all. */
+export function placesIn(document: Document, lines: LineCounter): Places {
+  const indexes = new WeakMap<YAMLMap, Map<string, Step>>();
+  const indexOf = (map: YAMLMap) => {
+    const known = indexes.get(map);
+    if (known) return known;
+    const index = new Map(
+      map.items.map(({ key, value }) => [String((key as Scalar).value), { key: key as Scalar, value }]),
+    );
+    indexes.set(map, index);
+    return index;
+  };
+  const step = (from: unknown, name: PropertyKey): Step | undefined => {
+    const node = isAlias(from) ? from.resolve(document) : from;
+    if (isMap(node)) return indexOf(node).get(String(name));
+    return isSeq(node) && Number(name) in node.items ? { value: node.items[Number(name)] } : undefined;
+  };
+  const walk = (path: FaultPath): { steps: Step[]; last: Node | undefined } => {
+    const steps: Step[] = [];
+    let node: unknown = document.contents;
+    let last = isNode(node) ? node : undefined;
+    for (const name of path) {
+      const next = step(node, name);
+      if (!next) break;
+      steps.push(next);
+      node = next.value;
+      const plain = isScalar(node) || isAlias(node);
+      last = plain ? (node as Node) : (next.key ?? (isNode(node) ? node : last));
+    }
+    return { steps, last };
+  };
+  const place = (node: Node | undefined) => at(lines, node?.range?.[0] ?? 0);
+  return {
+    ofValue: (path) => place(walk(path).last),
+    ofKey: (path) => {
+      const { steps, last } = walk(path);
+      return place(steps.at(path.length - 1)?.key ?? last);
+    },
+  };
 }
 
 export function at(lines: LineCounter, offset: number): Position {

@@ -7,6 +7,7 @@ import {
   type Unit,
   withOtherCase,
 } from "./units.ts";
+import { shown } from "./wording.ts";
 
 /** What a field of a scenario holds; the name ends in the canonical unit of the value read. */
 export type QuantityKind =
@@ -70,8 +71,7 @@ export type Reading = Quantity | Refusal;
 
 /** `read "5", expected a length with a unit, such as ... (bare number; write 5 mm or 5 mil)` */
 export function describeRefusal({ read, expected, hint }: Refusal): string {
-  const shown = read.length > 60 ? `${read.slice(0, 57)}...` : read;
-  return `read ${JSON.stringify(shown)}, expected ${expected}${hint === undefined ? "" : ` (${hint})`}`;
+  return `read ${shown(read)}, expected ${expected}${hint === undefined ? "" : ` (${hint})`}`;
 }
 
 interface Kind {

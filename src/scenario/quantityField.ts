@@ -1,4 +1,4 @@
-import { z } from "zod";
+import * as z from "zod";
 import {
   describeRefusal,
   kinds,
@@ -9,6 +9,7 @@ import {
 } from "./quantity.ts";
 import { rangeHint } from "./rangeHints.ts";
 import type { Uncertain } from "./types.ts";
+import { instead } from "./wording.ts";
 
 export interface FieldOptions {
   /** What the field means; an editor shows it. */
@@ -30,10 +31,7 @@ export function uncertain(kind: QuantityKind, options: FieldOptions) {
 function field<T>(kind: QuantityKind, options: FieldOptions, spread: boolean, take: (read: Quantity) => T) {
   const { expected } = kinds[kind];
   return z
-    .union([z.string(), z.number()], {
-      error: ({ input }) =>
-        `${input === undefined ? "missing" : `read ${shown(input)}`}; expected ${expected}`,
-    })
+    .union([z.string(), z.number()], { error: ({ input }) => instead(input, expected) })
     .meta({ description: `${options.about}: ${expected}` })
     .transform((input, context) => {
       const judge = (reading: Reading): T => {
@@ -45,28 +43,21 @@ function field<T>(kind: QuantityKind, options: FieldOptions, spread: boolean, ta
       const reading = readQuantity(input, kind, { spread });
       if (reading.ok || !reading.libraryMayRead) return judge(reading);
       // mathjs is slow to start: it is loaded for arithmetic and rare units alone.
-      return import("./mathUnits.ts").then(({ readArithmetic }) =>
-        judge(readArithmetic(String(input), kind)),
-      );
+      return import("#math-units").then(({ readArithmetic }) => judge(readArithmetic(String(input), kind)));
     });
 }
 
 function outOfRange(read: Quantity, kind: QuantityKind, { about, range }: FieldOptions): string | undefined {
   const [low, high] = range;
-  if (read.value >= low && read.value <= high) return undefined;
+  const { value, sigma = 0 } = read;
   const unit = kinds[kind].usual[0]!;
+  if (value >= low && value <= high) {
+    if (sigma <= high - low) return undefined;
+    return `read a spread of ${sigma}, expected less than the range from ${low} to ${high} ${unit}`;
+  }
   const hint = rangeHint(read, kind, range);
   return (
     `read "${`${read.number} ${read.unit}`.trim()}", expected ${about} from ${low} to ${high} ${unit}`.trim() +
     (hint === undefined ? "" : ` (${hint})`)
   );
-}
-
-/** A value of the file as a message shows it. */
-export function shown(input: unknown): string {
-  if (input === null) return "nothing";
-  const text =
-    typeof input === "string" ? JSON.stringify(input) : Array.isArray(input) ? "a list" : undefined;
-  const full = text ?? (typeof input === "object" ? "a group of keys" : String(input));
-  return full.length > 60 ? `${full.slice(0, 57)}...` : full;
 }

@@ -1,19 +1,24 @@
 import { modes as builtInModes } from "../receiver/modes.ts";
-import { nearest } from "./nearest.ts";
+import { faultOfText } from "./fields.ts";
+import type { Fault } from "./issues.ts";
+import type { FaultPath } from "./positions.ts";
 import { BARE } from "./schema.ts";
-
-/** A fault at a place in the file, before line and column are known. */
-export interface Fault {
-  readonly code: string;
-  readonly message: string;
-  readonly path: readonly PropertyKey[];
-}
+import { didYouMean, listed, shown } from "./wording.ts";
 
 type Raw = Readonly<Record<string, unknown>>;
 
+/** The group under a key of a group; an empty one where there is none. */
 function groupAt(raw: unknown, key: string): Raw {
-  const value = typeof raw === "object" && raw !== null ? (raw as Raw)[key] : undefined;
-  return typeof value === "object" && value !== null ? (value as Raw) : {};
+  const value = isGroup(raw) && Object.hasOwn(raw, key) ? raw[key] : undefined;
+  return isGroup(value) ? value : {};
+}
+
+function isGroup(value: unknown): value is Raw {
+  return typeof value === "object" && value !== null && !Array.isArray(value);
+}
+
+function hasAny(group: Raw, ...keys: string[]): boolean {
+  return keys.some((key) => Object.hasOwn(group, key));
 }
 
 /**
@@ -25,46 +30,52 @@ function groupAt(raw: unknown, key: string): Raw {
 export function danglingNames(raw: unknown): Fault[] {
   const feeds = groupAt(raw, "feeds");
   const dishes = groupAt(raw, "dish");
+  const covers = groupAt(raw, "covers");
   const known = {
-    feed: { noun: "feed", names: Object.keys(feeds) },
-    dish: { noun: "dish", names: Object.keys(dishes) },
-    cover: { noun: "cover", names: [BARE, ...Object.keys(groupAt(raw, "covers"))] },
-    mode: { noun: "mode", names: [...Object.keys(builtInModes), ...Object.keys(groupAt(raw, "modes"))] },
+    feed: Object.keys(feeds),
+    dish: Object.keys(dishes),
+    cover: [...new Set([BARE, ...Object.keys(covers)])],
+    mode: [...new Set([...Object.keys(builtInModes), ...Object.keys(groupAt(raw, "modes"))])],
   };
   const faults: Fault[] = [];
-  const lookUp = (kind: keyof typeof known, name: unknown, path: readonly PropertyKey[]) => {
-    if (typeof name !== "string" && typeof name !== "number") return;
-    const { noun, names } = known[kind];
-    if (names.includes(String(name))) return;
-    const meant = nearest(String(name), names);
-    const choice =
-      names.length > 0 ? `one of ${names.join(", ")}` : `a ${noun} that the file defines (it has none)`;
-    const hint = meant === undefined ? "" : ` (did you mean ${meant}?)`;
-    faults.push({ code: "unknown_name", message: `no ${noun} "${name}"; expected ${choice}${hint}`, path });
+  const lookUp = (noun: keyof typeof known, name: unknown, path: FaultPath) => {
+    const names = known[noun];
+    if (typeof name !== "string" || faultOfText(name) || names.includes(name)) return;
+    const choice = names.length > 0 ? listed(names) : `a ${noun} that the file defines (it has none)`;
+    const message = `no ${noun} ${shown(name)}, expected ${choice}${didYouMean(name, names)}`;
+    faults.push({ code: "unknown_name", message, path });
   };
 
   for (const side of ["transmitter", "receiver"]) {
     const end = groupAt(raw, side);
-    for (const kind of ["feed", "dish", "cover"] as const) lookUp(kind, end[kind], [side, kind]);
-    const feed = groupAt(feeds, String(end["feed"]));
-    if (!(String(end["feed"]) in feeds)) continue;
-    const dish = groupAt(dishes, String(end["dish"]));
-    const tapered = "edge_taper" in feed || "beamwidth_10db" in feed;
-    const radiates = "gain" in feed || "pyramidal_horn" in feed || "conical_horn" in feed;
-    const path = ["feeds", String(end["feed"])];
-    if (end["dish"] === undefined && !radiates) {
-      const message = `missing gain (or pyramidal_horn, conical_horn): the ${side} uses this feed without a dish`;
-      faults.push({ code: "missing_gain", message, path });
-    }
-    if ("focal_ratio" in dish && !tapered) {
-      const message = `missing edge_taper (or beamwidth_10db): the ${side}'s dish is given by its focal_ratio`;
-      faults.push({ code: "missing_taper", message, path });
-    }
+    for (const noun of ["feed", "dish", "cover"] as const) lookUp(noun, end[noun], [side, noun]);
+    faults.push(...unsuitedFeed(side, end, feeds, dishes));
   }
-  const receiver = groupAt(raw, "receiver");
-  const mode = receiver["mode"];
-  if (Array.isArray(mode))
+  const { mode } = groupAt(raw, "receiver");
+  if (Array.isArray(mode)) {
     for (const [i, name] of mode.entries()) lookUp("mode", name, ["receiver", "mode", i]);
-  else lookUp("mode", mode, ["receiver", "mode"]);
+  } else lookUp("mode", mode, ["receiver", "mode"]);
+  if (hasAny(groupAt(covers, BARE), "layers", "measured")) {
+    const message = `${BARE} is the mouth without a cover; give this cover another name`;
+    faults.push({ code: "bare_covered", message, path: ["covers", BARE] });
+  }
   return faults;
+}
+
+/** What the feed of an end lacks for a dish given by its focal ratio, or for use without a dish. */
+function unsuitedFeed(side: string, end: Raw, feeds: Raw, dishes: Raw): Fault[] {
+  const name = String(end["feed"]);
+  const feed = groupAt(feeds, name);
+  if (!hasAny(feeds, name)) return [];
+  const path = ["feeds", name];
+  if (!hasAny(end, "dish") && !hasAny(feed, "gain", "pyramidal_horn", "conical_horn")) {
+    const message = `missing gain (or pyramidal_horn, conical_horn): the ${side} uses this feed without a dish`;
+    return [{ code: "missing_gain", message, path }];
+  }
+  const dish = groupAt(dishes, String(end["dish"]));
+  if (hasAny(dish, "focal_ratio") && !hasAny(feed, "edge_taper", "beamwidth_10db")) {
+    const message = `missing edge_taper (or beamwidth_10db): the ${side}'s dish is given by its focal_ratio`;
+    return [{ code: "missing_taper", message, path }];
+  }
+  return [];
 }

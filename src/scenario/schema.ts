@@ -1,20 +1,23 @@
-import { z } from "zod";
+import * as z from "zod";
 import { modes as builtInModes, type Mode } from "../receiver/modes.ts";
 import { dishSchema, feedSchema } from "./antennaSchema.ts";
 import { coverSchema } from "./coverSchema.ts";
 import { group, named, oneOf, text } from "./fields.ts";
 import { quantity, uncertain } from "./quantityField.ts";
-import { siteSchema } from "./siteSchema.ts";
+import { samePlace, siteSchema } from "./siteSchema.ts";
 import type { Scenario } from "./types.ts";
 import { weatherSchema } from "./weatherSchema.ts";
+import { instead } from "./wording.ts";
 
 /** The cover that every scenario has. */
 export const BARE = "bare";
 
+const someModes = `${Object.keys(builtInModes).join(", ")} or one of your own`;
+
 const endShape = {
-  feed: text("name of a feed"),
-  dish: text("name of a dish; without one the feed radiates by itself").optional(),
-  cover: text("name of the cover on the feed's mouth").optional(),
+  feed: text("the name of a feed"),
+  dish: text("the name of a dish; without one the feed radiates by itself").optional(),
+  cover: text("the name of the cover on the feed's mouth").optional(),
   line_loss: uncertain("levelDb", { about: "loss of line and joints", range: [0, 60] }).optional(),
 };
 
@@ -43,9 +46,16 @@ const receiver = group(
       range: [2.7, 10000],
     }).optional(),
     mode: z
-      .union([text("name of a mode").transform((mode) => [mode]), z.array(text("name of a mode")).min(1)], {
-        error: `expected a mode or a list of modes: ${Object.keys(builtInModes).join(", ")}, or one of your own`,
-      })
+      .union(
+        [
+          text("the name of a mode").transform((mode) => [mode]),
+          z
+            .array(text("the name of a mode"))
+            .min(1, `an empty list, expected one mode or more: ${someModes}`),
+        ],
+        { error: ({ input }) => instead(input, `a mode or a list of modes: ${someModes}`) },
+      )
+      .meta({ description: `mode of the receiver, or a list of modes: ${someModes}` })
       .optional(),
     ...endShape,
   },
@@ -93,10 +103,20 @@ const decision = group(
   "the decision: reserve and confidence",
 ).transform(({ reserve = 3, confidence = 90 }) => ({ reserveDb: reserve, confidence: confidence / 100 }));
 
+const path = group(
+  { from: siteSchema, to: siteSchema, terrain: text("the path of a terrain file").optional() },
+  "the path: from (the transmitter) and to (the receiver)",
+).transform(({ from, to, terrain }, context) => {
+  if (!samePlace(from, to)) return { from, to, terrain };
+  const message = "the same place as from, expected another one";
+  context.addIssue({ code: "custom", message, path: ["to"], input: to });
+  return z.NEVER;
+});
+
 /** The whole scenario file. Names that refer to each other are checked by `references.ts`. */
 export const scenarioSchema = group(
   {
-    title: text("title of the scenario"),
+    title: text("the title of the scenario"),
     frequency: quantity("frequencyGHz", { about: "frequency", range: [1, 350] }),
     polarization: oneOf(["horizontal", "vertical", "circular"], "polarization of both ends").optional(),
     transmitter,
@@ -105,10 +125,7 @@ export const scenarioSchema = group(
     covers: named(coverSchema, "the covers").optional(),
     dish: named(dishSchema, "the dishes").optional(),
     modes: named(mode, "modes of your own").optional(),
-    path: group(
-      { from: siteSchema, to: siteSchema, terrain: text("terrain file").optional() },
-      "the path: from (the transmitter) and to (the receiver)",
-    ),
+    path,
     weather: named(weatherSchema, "the weathers").optional(),
     decision: decision.optional(),
   },

@@ -1,14 +1,17 @@
-import { z } from "zod";
+import * as z from "zod";
+import { RADIANS_PER_DEGREE } from "../numeric/constants.ts";
+import { EARTH_RADIUS_KM } from "../path/horizon.ts";
 import { locatorToPoint } from "../path/locator.ts";
 import { type Axis, readCoordinate } from "./coordinates.ts";
 import { group, text } from "./fields.ts";
 import { describeRefusal } from "./quantity.ts";
-import { quantity, shown } from "./quantityField.ts";
+import { quantity } from "./quantityField.ts";
 import type { Site } from "./types.ts";
+import { instead, shown } from "./wording.ts";
 
 function coordinate(axis: Axis) {
   return z
-    .union([z.string(), z.number()], { error: ({ input }) => `read ${shown(input)}; expected a ${axis}` })
+    .union([z.string(), z.number()], { error: ({ input }) => instead(input, `a ${axis}`) })
     .meta({ description: `${axis} on WGS84: 53.43, 53.43 N or 53°25'48" N` })
     .transform((input, context) => {
       const reading = readCoordinate(input, axis);
@@ -18,9 +21,12 @@ function coordinate(axis: Axis) {
     });
 }
 
-const locator = text("a locator of 4 to 10 characters, such as IO84wb20").transform((written, context) => {
+const LOCATOR = "a locator of 4 to 10 characters, such as IO84wb20";
+
+const locator = text(LOCATOR).transform((written, context) => {
   try {
-    if (written.length < 4) throw new RangeError(`locator "${written}" must have 4 to 10 characters`);
+    if (written.length < 4)
+      throw new RangeError(`locator ${shown(written)} is too coarse, expected ${LOCATOR}`);
     return { written, cell: locatorToPoint(written) };
   } catch (error) {
     context.addIssue({ code: "custom", message: (error as RangeError).message, input: written });
@@ -31,7 +37,7 @@ const locator = text("a locator of 4 to 10 characters, such as IO84wb20").transf
 /** One end's place: by locator or by latitude and longitude. */
 export const siteSchema = group(
   {
-    name: text("name of the place").optional(),
+    name: text("the name of the place").optional(),
     locator: locator.optional(),
     latitude: coordinate("latitude").optional(),
     longitude: coordinate("longitude").optional(),
@@ -39,24 +45,42 @@ export const siteSchema = group(
     height: quantity("lengthM", { about: "antenna above ground", range: [0, 1000] }),
   },
   "a place: locator, or latitude and longitude; ground; height",
-).transform((site, context): Site => {
-  const { name, latitude, longitude, ground: groundM, height: heightM } = site;
+  (has) => {
+    if (has("locator")) {
+      const both = has("latitude") || has("longitude");
+      return both ? "both a locator and coordinates; write one of them" : undefined;
+    }
+    if (has("latitude") && has("longitude")) return undefined;
+    return has("latitude")
+      ? "missing longitude beside the latitude"
+      : has("longitude")
+        ? "missing latitude beside the longitude"
+        : "missing locator, or latitude and longitude";
+  },
+).transform(({ name, locator, latitude, longitude, ground: groundM, height: heightM }): Site => {
   const common = { name, groundM, heightM };
-  const hasPoint = latitude !== undefined && longitude !== undefined;
-  if (site.locator && (latitude ?? longitude) === undefined) {
-    const { written, cell } = site.locator;
-    return {
-      ...common,
-      latitude: cell.latitude,
-      longitude: cell.longitude,
-      locator: written,
-      positionErrorKm: cell.halfDiagonalKm,
-    };
-  }
-  if (!site.locator && hasPoint) return { ...common, latitude, longitude, positionErrorKm: 0 };
-  const message = site.locator
-    ? "both a locator and coordinates; write one of them"
-    : "expected a locator, or latitude and longitude";
-  context.addIssue({ code: "custom", message, input: site });
-  return z.NEVER;
+  if (!locator) return { ...common, latitude: latitude!, longitude: longitude!, positionErrorKm: 0 };
+  const { written, cell } = locator;
+  return {
+    ...common,
+    latitude: cell.latitude,
+    longitude: cell.longitude,
+    locator: written,
+    positionErrorKm: cell.halfDiagonalKm,
+  };
 });
+
+/** Below this two places are one, typed twice [km]. */
+const SHORTEST_PATH_KM = 0.001;
+
+/** Whether two sites are one place, be it by a pole or by the date line; such a path has no heading. */
+export function samePlace(a: Site, b: Site): boolean {
+  const [p, q] = [onSphere(a), onSphere(b)];
+  const chord = Math.hypot(...p.map((x, i) => x - q[i]!));
+  return chord * EARTH_RADIUS_KM < SHORTEST_PATH_KM;
+}
+
+function onSphere({ latitude, longitude }: Site): number[] {
+  const [phi, lambda] = [latitude * RADIANS_PER_DEGREE, longitude * RADIANS_PER_DEGREE];
+  return [Math.cos(phi) * Math.cos(lambda), Math.cos(phi) * Math.sin(lambda), Math.sin(phi)];
+}

@@ -1,7 +1,8 @@
-import { z } from "zod";
+import * as z from "zod";
 import { group, oneOf } from "./fields.ts";
 import { quantity, uncertain } from "./quantityField.ts";
 import type { Weather } from "./types.ts";
+import { instead } from "./wording.ts";
 
 /** Wind that drives rain against an upright cover where the scenario names none [m/s]: common practice, no source. */
 const RAINY_WIND_M_PER_S = 4;
@@ -27,20 +28,19 @@ export const weatherSchema = group(
     wind: quantity("speedMPerS", { about: "wind towards the covers", range: [0, 60] }).optional(),
     wets: z
       .array(oneOf(["transmitter", "receiver"], "an end of the path"), {
-        error: "expected a list of the ends whose covers get wet: [transmitter, receiver] or []",
+        error: ({ input }) =>
+          instead(input, "a list of the ends whose covers get wet: [transmitter, receiver] or []"),
       })
       .meta({ description: "ends whose covers the rain wets; both where not given" })
       .optional(),
     covers_wet_as_at: rate("rain rate that wetted the covers").optional(),
   },
   "a weather: rain, fog, temperature, what it wets; {} is dry",
-).transform((weather, context): Weather => {
-  const { humidity, dew_point, vapour_density } = weather;
-  if ([humidity, dew_point, vapour_density].filter((value) => value !== undefined).length > 1) {
-    const message = "more than one of humidity, dew_point and vapour_density; write one";
-    context.addIssue({ code: "custom", message, input: weather });
-    return z.NEVER;
-  }
+  (has) => {
+    const ways = (["humidity", "dew_point", "vapour_density"] as const).filter(has);
+    return ways.length > 1 ? "more than one of humidity, dew_point and vapour_density; write one" : undefined;
+  },
+).transform((weather): Weather => {
   return {
     rainMmPerH: weather.rain ?? { value: 0 },
     extentKm: weather.extent,
@@ -48,9 +48,9 @@ export const weatherSchema = group(
     fogExtentKm: weather.fog_extent,
     temperatureC: weather.temperature,
     pressureHPa: weather.pressure,
-    humidityPercent: humidity,
-    dewPointC: dew_point,
-    vapourDensityGPerM3: vapour_density,
+    humidityPercent: weather.humidity,
+    dewPointC: weather.dew_point,
+    vapourDensityGPerM3: weather.vapour_density,
     windMPerS: weather.wind ?? RAINY_WIND_M_PER_S,
     wets: weather.wets ?? ["transmitter", "receiver"],
     coversWetAsAtMmPerH: weather.covers_wet_as_at,
