@@ -1,8 +1,12 @@
 import { defineConfig } from "vitest/config";
 
+const root = new URL("..", import.meta.url).pathname;
+
 export default defineConfig({
+  // The built program finds its arithmetic in dist/; tests of the sources take the source.
+  resolve: { alias: { "#math-units": `${root}src/scenario/mathUnits.ts` } },
   test: {
-    root: new URL("..", import.meta.url).pathname,
+    root,
     include: ["test/**/*.test.ts"],
     testTimeout: 60_000,
   },

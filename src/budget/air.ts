@@ -44,9 +44,9 @@ export function prepareWeather(
 ): PreparedWeather {
   const warnings: Warning[] = [];
   const { frequencyGHz } = scenario;
-  const { distanceKm } = path;
   const heightsKm = [path.from, path.to].map(({ groundM, heightM }) => (groundM + heightM) / 1000);
   const meanKm = (heightsKm[0]! + heightsKm[1]!) / 2;
+  const slantKm = Math.hypot(path.distanceKm, heightsKm[0]! - heightsKm[1]!);
   const ambient = airAt(meanKm, weather);
   if (saturated(ambient, weather)) {
     warnings.push({
@@ -56,21 +56,21 @@ export function prepareWeather(
     });
   }
 
-  const gas = gasLossPerKm(frequencyGHz, weather, heightsKm) * distanceKm;
+  const gas = gasLossPerKm(frequencyGHz, weather, heightsKm) * slantKm;
   warnings.push(...outside(gasValidity, { frequencyGHz }).map(overreachWarning("gases by P.676", where)));
   const rain = rainLoss(scenario, path, weather, where, warnings);
-  const fog = fogLoss(frequencyGHz, distanceKm, weather, ambient.temperatureK, where, warnings);
+  const fog = fogLoss(frequencyGHz, path.distanceKm, weather, ambient.temperatureK, where, warnings);
 
   return {
     weather,
-    entries: [freeSpaceEntry(frequencyGHz, path), gasEntry(gas), ...rain, ...fog],
+    entries: [freeSpaceEntry(frequencyGHz, slantKm, path), gasEntry(gas), ...rain, ...fog],
     hydrometeorLossDb: [...rain, ...fog].reduce((sum, { db }) => sum - db, 0),
     ambientK: ambient.temperatureK,
     warnings,
   };
 }
 
-function freeSpaceEntry(frequencyGHz: number, { distanceKm, from, to }: PathGeometry): Entry {
+function freeSpaceEntry(frequencyGHz: number, distanceKm: number, { from, to }: PathGeometry): Entry {
   const { lossDb } = freeSpaceLoss({ frequencyGHz, distanceKm });
   // The formula is exact; what is uncertain is where a short locator leaves the stations (flat over the cell).
   const doubtKm = Math.min(from.positionErrorKm + to.positionErrorKm, 0.9 * distanceKm) / Math.sqrt(3);
@@ -131,7 +131,7 @@ function gasLossPerKm(frequencyGHz: number, weather: Weather, [from, to]: readon
 
 function rainLoss(
   { frequencyGHz, polarization }: Scenario,
-  { distanceKm, elevationDeg }: PathGeometry,
+  { distanceKm, elevationDeg, backElevationDeg }: PathGeometry,
   { rainMmPerH, extentKm }: Weather,
   where: string,
   warnings: Warning[],
@@ -142,7 +142,7 @@ function rainLoss(
     frequencyGHz,
     rainRateMmPerH,
     tiltDeg: tiltDeg[polarization],
-    elevationDeg,
+    elevationDeg: (elevationDeg - backElevationDeg) / 2, // of the chord: the same from either end
   });
   const effective = effectiveRainLength({ frequencyGHz, rainRateMmPerH, alpha, distanceKm });
   const lengthKm = Math.min(distanceKm, extentKm ?? effective.lengthKm);

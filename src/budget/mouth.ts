@@ -16,6 +16,8 @@ const RETURN_LOSS_DOUBT_DB = 2;
 const DISSIPATION_SIGMA_SHARE = 0.4;
 /** A with/without test in free air repeats to about this [dB]: common practice, no source. */
 export const BENCH_REPEATABILITY_DB = 0.05;
+/** Where a change of return loss stops that asks for more than the feed has: it was read on a better feed. */
+const LEAST_RETURN_LOSS_DB = 0.1;
 /** A film's loss is good to a factor of two each way: common practice, no source. */
 const WATER_SIGMA_SHARE = 0.5;
 
@@ -64,9 +66,11 @@ export function mouthOf(
     return { ...bareState, entries, mismatchLossDb: feedMismatchDb, dissipationDb: 0, warnings: [] };
   }
 
+  // The layer that stands in for readings has the right |G| but no phase to set against the feed's.
+  const exposed = cover.layers.length > 0 ? feed : { ...feed, phaseDeg: undefined };
   const dry = cover.measured
-    ? measuredDry(frequencyGHz, feed, cover, feedMismatchDb, where)
-    : layeredDry(frequencyGHz, feed, cover, feedMismatchDb);
+    ? measuredDry(frequencyGHz, exposed, cover, feedMismatchDb, where)
+    : layeredDry(frequencyGHz, exposed, cover, feedMismatchDb);
   entries.push(
     lossEntry(heading("cover_mismatch", "cover, mismatch", dry.source), dry.mismatchDb, dry.mismatchSigmaDb),
     lossEntry(heading("cover_loss", "cover, heat", dry.source), dry.dissipationDb, dry.dissipationSigmaDb),
@@ -86,7 +90,7 @@ export function mouthOf(
     };
   }
 
-  const water = waterOnCover(frequencyGHz, feed, cover, dry.layers, dry.covered, wetness, where);
+  const water = waterOnCover(frequencyGHz, exposed, cover, dry.layers, dry.covered, wetness, where);
   entries.push(...waterEntries(heading, water, dry.covered.phaseSpreadDb));
   return {
     ...dryState,
@@ -126,7 +130,7 @@ function layeredDry(frequencyGHz: number, feed: Feed, cover: Cover, feedMismatch
     mismatchDb: shifted(mismatch, -feedMismatchDb),
     mismatchSigmaDb: covered.phaseSpreadDb,
     dissipationDb,
-    dissipationSigmaDb: DISSIPATION_SIGMA_SHARE * dissipationDb.nominal,
+    dissipationSigmaDb: DISSIPATION_SIGMA_SHARE * Math.max(0, dissipationDb.nominal), // no loss may round below 0
     layers: stack("nominal"),
     covered,
     source: "plane wave through the layers, Born & Wolf 1.6",
@@ -146,12 +150,13 @@ function measuredDry(
   feedMismatchDb: number,
   where: string,
 ): DryCover {
-  const { insertionLossDb, returnLossChangeDb } = cover.measured!;
+  const { insertionLossDb } = cover.measured!;
   const insertionDb = insertionLossDb.value;
+  const coveredReturnLossDb = coveredReturnLoss(feed, cover);
   const split = measuredCover({
     feedReturnLossDb: feed.returnLossDb,
     insertionLossDb: insertionDb,
-    returnLossChangeDb: returnLossChangeDb?.value,
+    returnLossChangeDb: coveredReturnLossDb && feed.returnLossDb - coveredReturnLossDb,
   });
   const sigma = insertionLossDb.sigma ?? BENCH_REPEATABILITY_DB;
   const modelled =
@@ -173,13 +178,19 @@ function measuredDry(
   };
 }
 
+/** Return loss under the cover by the change that was read, if one was. */
+function coveredReturnLoss({ returnLossDb }: Feed, { measured }: Cover): number | undefined {
+  const change = measured?.returnLossChangeDb;
+  return change && Math.max(LEAST_RETURN_LOSS_DB, returnLossDb - change.value);
+}
+
 /** Readings that energy balance forbids. */
-function contradictions(feed: Feed, { measured }: Cover, where: string): Warning[] {
-  const { insertionLossDb, returnLossChangeDb } = measured!;
+function contradictions(feed: Feed, cover: Cover, where: string): Warning[] {
+  const { insertionLossDb } = cover.measured!;
   const repeatabilityDb = 2 * (insertionLossDb.sigma ?? BENCH_REPEATABILITY_DB);
   const { leastDb, contradiction } = energyCheck({
     bareReturnLossDb: feed.returnLossDb,
-    coveredReturnLossDb: returnLossChangeDb && Math.max(0.01, feed.returnLossDb - returnLossChangeDb.value),
+    coveredReturnLossDb: coveredReturnLoss(feed, cover),
     insertionLossDb: insertionLossDb.value,
     repeatabilityDb,
   });
@@ -210,7 +221,7 @@ function outsideModel(
 
 function waterEntries(heading: EndHeading, water: WaterCost, dryPhaseSpreadDb: number): Entry[] {
   const { mismatchDb, dissipationDb, source } = water;
-  const whole = Math.abs(mismatchDb.nominal) + dissipationDb.nominal;
+  const whole = Math.abs(mismatchDb.nominal) + Math.abs(dissipationDb.nominal);
   // One factor of two over both parts: shared out so that the parts' squares add up to the whole's.
   const share = (part: number) => (whole > 0 ? WATER_SIGMA_SHARE * Math.sqrt(whole * Math.abs(part)) : 0);
   const morePhase = Math.max(0, water.phaseSpreadDb ** 2 - dryPhaseSpreadDb ** 2);

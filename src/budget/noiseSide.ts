@@ -36,7 +36,8 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
   const linePass = dbToPower(-receiver.lineLossDb.value);
   const lineK = REFERENCE_TEMPERATURE_K * (1 - linePass);
 
-  const matched = dbToPower(-mouth.mismatchLossDb);
+  // Readings that contradict each other may claim less than no mismatch; noise takes no part in that.
+  const matched = Math.min(1, dbToPower(-mouth.mismatchLossDb));
   const passed = matched * dbToPower(-mouth.dissipationDb);
   const mouthK =
     passed * antennaK + (matched - passed) * weather.ambientK + (1 - matched) * REFERENCE_TEMPERATURE_K;
@@ -59,9 +60,10 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
   const figureSigma = figureDb.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB;
   // A dB more of noise figure raises the system by its receiver's part only.
   const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
-  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * passed * linePass;
+  const dimmed = dbToPower(-weather.hydrometeorLossDb);
+  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * dimmed * passed * linePass;
   const entries = [
-    gainEntry(heading("thermal", `290 K in ${bandwidthText(mode.noiseBandwidthHz)}`, "k T B"), -thermalDbm),
+    gainEntry(heading("thermal", "290 K in the bandwidth", "k T B"), -thermalDbm),
     gainEntry(
       heading("receiver", "receiver's noise", "scenario"),
       step(steps[0], steps[1]),
@@ -84,10 +86,4 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
 
 function heading(id: string, label: string, source: string): Heading {
   return { id: `noise.${id}`, stage: "noise", label, source };
-}
-
-export function bandwidthText(hertz: number): string {
-  return hertz >= 1000
-    ? `${Number((hertz / 1000).toPrecision(4))} kHz`
-    : `${Number(hertz.toPrecision(4))} Hz`;
 }

@@ -7,6 +7,8 @@ import { type SurfaceCare, surfaceState } from "../cover/surfaceState.ts";
 import { type WaterFilm, waterFilm, waterLayer } from "../cover/waterFilm.ts";
 import { wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
 import type { WetModel } from "../cover/wetModels.ts";
+import { abs } from "../numeric/complex.ts";
+import { amplitudeToDb } from "../numeric/decibels.ts";
 import type { Cover, Feed } from "../scenario/types.ts";
 import type { Warning } from "./types.ts";
 
@@ -43,7 +45,11 @@ function behaviour(surface: Wetting, care: SurfaceCare): Wetting {
 
 /**
  * Water on a cover: a film on a surface that wets, the published model for water-repellent radomes on one that
- * beads (never above the film), the mean of both between; or the model that the user names.
+ * beads (never above the film), the mean of both between; or the model that the user names. Drops are for
+ * surfaces that shed water: named for one that lets it spread, they are the film.
+ *
+ * The film may cost less than none: with the feed's phase known it can tune the feed, and on a sheet a little
+ * short of half a wave it makes up the rest. That is the cascade's answer and stands.
  */
 export function waterOnCover(
   frequencyGHz: number,
@@ -55,7 +61,8 @@ export function waterOnCover(
   where: string,
 ): WaterCost {
   const film = filmOn(feed, cover, wetness);
-  const wet = cascade(frequencyGHz, feed, cover, withWater(frequencyGHz, dryLayers, film.meanMm, wetness));
+  const wetSheet = withWater(frequencyGHz, dryLayers, film.meanMm, wetness);
+  const wet = cascade(frequencyGHz, feed, cover, wetSheet);
   const full = difference(dry, wet);
   const standing: Warning[] = film.standing
     ? [{ code: "standing_water", message: "the cover lies too level to drain: water stands on it", where }]
@@ -64,7 +71,8 @@ export function waterOnCover(
 
   const surface = behaviour(cover.surface, cover.state);
   const model: WetModel = cover.wetModel ?? (surface === "wetting" ? "film" : "merceret2000");
-  if (model === "film") {
+  const { form, coveredShare } = surfaceState({ wetting: cover.surface, care: cover.state });
+  if (model === "film" || (model === "beads" && form === "film")) {
     return {
       ...common,
       ...full,
@@ -75,17 +83,19 @@ export function waterOnCover(
   if (model === "beads") {
     return {
       ...common,
-      ...beads(frequencyGHz, feed, cover, dryLayers, dry, wetness),
+      ...beads(frequencyGHz, feed, cover, dryLayers, dry, wetness, coveredShare),
       source: "drops by covered share",
     };
   }
 
   const whole = full.mismatchDb.high + full.dissipationDb.high;
-  const filmNominal = full.mismatchDb.nominal + full.dissipationDb.nominal;
+  // A published figure knows no phase, so the film that caps it is taken over all phases.
+  const dryPass = abs(sheetOf(frequencyGHz, dryLayers).transmission);
+  const filmDb = Math.max(0, amplitudeToDb(dryPass / abs(wetSheet.transmission)));
   const published = publishedLoss(model, frequencyGHz, wetness);
   const chosen = cover.wetModel !== undefined;
-  const shed = Math.min(published.lossDb, filmNominal);
-  const nominal = chosen ? published.lossDb : surface === "mixed" ? (shed + filmNominal) / 2 : shed;
+  const shed = Math.min(published.lossDb, filmDb);
+  const nominal = chosen ? published.lossDb : surface === "mixed" ? (shed + filmDb) / 2 : shed;
   return {
     ...common,
     // A published figure does not say how much of it is reflection: all of it counts as heat, so as noise too.
@@ -129,8 +139,8 @@ function beads(
   dryLayers: readonly Layer[],
   dry: CoveredFeed,
   wetness: Wetness,
+  coveredShare: Bounded,
 ) {
-  const { coveredShare } = surfaceState({ wetting: cover.surface, care: cover.state });
   const sheet = beadedSheet({
     dry: sheetOf(frequencyGHz, dryLayers),
     wet: withWater(frequencyGHz, dryLayers, BEAD_HEIGHT_MM, wetness),

@@ -2,20 +2,27 @@
 function legendreRule(n: number): { nodes: Float64Array; weights: Float64Array } {
   const nodes = new Float64Array(n);
   const weights = new Float64Array(n);
-  for (let i = 0; i < n; i++) {
+  for (let i = 0; i < (n + 1) >> 1; i++) {
     let x = Math.cos((Math.PI * (i + 0.75)) / (n + 0.5));
     let slope = 0;
     for (let step = 0; step < 100; step++) {
-      let p0 = 1;
-      let p1 = x;
-      for (let k = 2; k <= n; k++) [p0, p1] = [p1, ((2 * k - 1) * x * p1 - (k - 1) * p0) / k];
-      slope = (n * (x * p1 - p0)) / (x * x - 1);
-      const change = p1 / slope;
+      let previous = 1;
+      let value = x;
+      for (let k = 2; k <= n; k++) {
+        const next = ((2 * k - 1) * x * value - (k - 1) * previous) / k;
+        previous = value;
+        value = next;
+      }
+      slope = (n * (x * value - previous)) / (x * x - 1);
+      const change = value / slope;
       x -= change;
       if (Math.abs(change) < 1e-15) break;
     }
+    // The rule is symmetric: the other half is the mirror image.
     nodes[i] = x;
+    nodes[n - 1 - i] = -x;
     weights[i] = 2 / ((1 - x * x) * slope * slope);
+    weights[n - 1 - i] = weights[i]!;
   }
   return { nodes, weights };
 }

@@ -1,0 +1,38 @@
+import { readFileSync } from "node:fs";
+import { createRequire } from "node:module";
+import { join } from "node:path";
+import { constants, Script } from "node:vm";
+
+/**
+ * Runs the bundled program from V8's code cache, which is written when the package is built: reading it takes
+ * half the time of compiling. V8 refuses the cache of another version, and then compiles.
+ *
+ * @param folder  where program.cjs and program.cache lie
+ * @returns the compiled script, from which the cache can be written
+ */
+export function runProgram(folder: string): Script {
+  const filename = join(folder, "program.cjs");
+  const cachedData = bytesOf(cacheFile(folder));
+  // The bundle is pure ASCII, and already wrapped as a function of a module's arguments.
+  const source = readFileSync(filename, "latin1");
+  const script = new Script(source, {
+    filename,
+    ...(cachedData && { cachedData }),
+    importModuleDynamically: constants.USE_MAIN_CONTEXT_DEFAULT_LOADER,
+  });
+  const module = { exports: {} };
+  script.runInThisContext()(createRequire(filename), module, module.exports);
+  return script;
+}
+
+export function cacheFile(folder: string): string {
+  return join(folder, "program.cache");
+}
+
+function bytesOf(file: string): Buffer | undefined {
+  try {
+    return readFileSync(file);
+  } catch {
+    return undefined;
+  }
+}

@@ -1,0 +1,35 @@
+import { Command } from "commander";
+import { budgetCommand } from "./budget.ts";
+import { checkCommand } from "./check.ts";
+import { materialsCommand } from "./materials.ts";
+import { newCommand } from "./new.ts";
+import { schemaCommand } from "./schema.ts";
+import { UserError } from "./terminal.ts";
+
+/** Exit status of bad input and of a command line that makes no sense. */
+const BAD_INPUT = 2;
+
+// A reader that goes away, as `head` does, is no fault.
+process.stdout.on("error", (error: NodeJS.ErrnoException) => {
+  if (error.code !== "EPIPE") throw error;
+  process.exit();
+});
+
+const program = new Command("oilskin")
+  .description("Will this microwave path close, dry and in rain, and what does the cover on the feed cost?")
+  .version("0.1.0")
+  .showHelpAfterError("(oilskin --help shows the commands)");
+for (const command of [budgetCommand, checkCommand, newCommand, materialsCommand, schemaCommand]) {
+  program.addCommand(command);
+}
+for (const command of [program, ...program.commands]) {
+  command.exitOverride((end) => {
+    process.exit(end.exitCode === 0 ? 0 : BAD_INPUT);
+  });
+}
+
+program.parseAsync().catch((error: unknown) => {
+  if (!(error instanceof UserError)) throw error;
+  process.stderr.write(`${error.message}\n`);
+  process.exitCode = BAD_INPUT;
+});

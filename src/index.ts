@@ -1,0 +1,94 @@
+/**
+ * The library's face: models, scenario reader, budget engine, studies and reports.
+ *
+ * Names and fields of the functions listed in the project's design are kept from version to version.
+ */
+
+// Antennas
+export { apertureTaper } from "./antenna/apertureTaper.ts";
+export { conicalHorn } from "./antenna/conicalHorn.ts";
+export { defocus } from "./antenna/defocus.ts";
+export { apertureEfficiency, dishGain, nearFieldLoss } from "./antenna/dishGain.ts";
+export { offAxisEnvelope } from "./antenna/envelope.ts";
+export {
+  feedEfficiency,
+  feedExponentFromBeamwidth,
+  feedExponentFromEdgeTaper,
+} from "./antenna/feedEfficiency.ts";
+export { pointingLoss } from "./antenna/pointing.ts";
+export { optimumHorn, pyramidalHorn } from "./antenna/pyramidalHorn.ts";
+// Atmosphere
+export { cloudLiquidCoefficient, cloudSlantAttenuation } from "./atmosphere/cloudLiquid.ts";
+export { specificGasAttenuation } from "./atmosphere/gasAttenuation.ts";
+export {
+  saturationPressure,
+  vapourDensity,
+  vapourPressureFromDensity,
+  vapourPressureFromDewPoint,
+  vapourPressureFromHumidity,
+} from "./atmosphere/humidity.ts";
+export { specificRainAttenuation } from "./atmosphere/rainAttenuation.ts";
+export { monthlyRainPercent, monthlyRainRate } from "./atmosphere/rainRate.ts";
+export { rainWords } from "./atmosphere/rainWords.ts";
+export { rainZoneNames, zoneRainRate } from "./atmosphere/rainZones.ts";
+export { referenceAtmosphere } from "./atmosphere/referenceAtmosphere.ts";
+export { effectiveEarthRadius, refractivity } from "./atmosphere/refractivity.ts";
+export { skyTemperature } from "./atmosphere/skyNoise.ts";
+export { clearSkyTemperature, slantGasAttenuation } from "./atmosphere/slantPath.ts";
+export { waterPermittivity } from "./atmosphere/waterPermittivity.ts";
+// Scenario and engine
+export type { Entry } from "./budget/entry.ts";
+export { evaluate } from "./budget/evaluate.ts";
+export { cases, prepare, withWeather } from "./budget/prepare.ts";
+export type { Budget, Case, Link, Warning } from "./budget/types.ts";
+// Covers and feeds
+export { beadedSheet } from "./cover/beads.ts";
+export { coveredFeed } from "./cover/coveredFeed.ts";
+export { coverNoise } from "./cover/coverNoise.ts";
+export { dewFilmMm, filmAfterRain } from "./cover/drying.ts";
+export { energyCheck, energyFloor } from "./cover/energyFloor.ts";
+export { icePermittivity } from "./cover/icePermittivity.ts";
+export { layeredSheet } from "./cover/layeredSheet.ts";
+export { findMaterial, materials, uvClasses } from "./cover/materials.ts";
+export { measuredCover } from "./cover/measuredCover.ts";
+export { mixture } from "./cover/mixture.ts";
+export { collectedShare, nearMouth } from "./cover/nearMouth.ts";
+export { reflectionFigures } from "./cover/reflectionFigures.ts";
+export { schleissWetLoss } from "./cover/schleissWetLoss.ts";
+export { sheetOverBeam } from "./cover/sheetOverBeam.ts";
+export { snowPermittivity } from "./cover/snowPermittivity.ts";
+export { surfaceState } from "./cover/surfaceState.ts";
+export { waterFilm, waterLayer } from "./cover/waterFilm.ts";
+export { wetAntennaLoss, wetAntennaModels } from "./cover/wetAntennaLoss.ts";
+// Path
+export { freeSpaceLoss } from "./path/freeSpaceLoss.ts";
+export { fresnelRadius } from "./path/fresnelRadius.ts";
+export { geodesicPath, pointAlong } from "./path/geodesic.ts";
+export { earthBulge, horizonDistance, lineOfSightLimit, rayClearance, takeOffAngle } from "./path/horizon.ts";
+export { locatorToPoint, pointToLocator } from "./path/locator.ts";
+export { effectiveRainLength, rainFade, rainFadePercent, scaleRainFade } from "./path/rainFade.ts";
+// Receiver and safety
+export { requiredEbN0Db } from "./receiver/digital.ts";
+export { modes, requiredSnrInBandwidth } from "./receiver/modes.ts";
+export {
+  noiseFigureDb,
+  noiseTemperatureK,
+  snrInBandwidth,
+  systemTemperatureK,
+  thermalNoiseDbm,
+} from "./receiver/noise.ts";
+// Studies and reports
+export { marginCsv, marginJson } from "./report/marginData.ts";
+export { marginReportText } from "./report/marginReportText.ts";
+export { materialsText } from "./report/materialsText.ts";
+export type { Meaning, Paint } from "./report/words.ts";
+export { averagePower } from "./safety/averagePower.ts";
+export { cautions } from "./safety/cautions.ts";
+export { exposure, exposureByGain } from "./safety/exposure.ts";
+export { exposureLimits } from "./safety/exposureLimits.ts";
+export { loadScenario } from "./scenario/load.ts";
+export { nearest } from "./scenario/nearest.ts";
+export { scenarioJsonSchema } from "./scenario/schema.ts";
+export type { Diagnostic, Scenario } from "./scenario/types.ts";
+export { exposureOfLink } from "./study/exposureOfLink.ts";
+export { marginReport } from "./study/marginReport.ts";

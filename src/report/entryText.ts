@@ -1,0 +1,125 @@
+import type { Entry, Stage } from "../budget/entry.ts";
+import { type Cell, cell, columns, RULE } from "./columns.ts";
+import { grid } from "./grid.ts";
+import { type ReportBudget, WEATHERS_ABREAST } from "./marginText.ts";
+import { chunks, LINE_WIDTH, percent, tenth } from "./words.ts";
+
+/** Entries that are levels themselves: they fill the level's column and leave the change's empty. */
+const levels = new Set(["tx.power", "noise.thermal"]);
+
+interface Column {
+  readonly budget: ReportBudget;
+  readonly byId: ReadonlyMap<string, Entry>;
+  /** Level that each entry leaves, by id: of the signal, then of the noise [dBm]. */
+  readonly levelAfter: ReadonlyMap<string, number>;
+}
+
+function columnOf(budget: ReportBudget): Column {
+  const levelAfter = new Map<string, number>();
+  let signal = 0;
+  for (const { id, db } of budget.entries) {
+    signal += db;
+    levelAfter.set(id, signal);
+  }
+  let noise = 0;
+  for (const { id, db } of budget.noiseEntries) {
+    noise -= db;
+    levelAfter.set(id, noise);
+  }
+  const byId = new Map([...budget.entries, ...budget.noiseEntries].map((entry) => [entry.id, entry]));
+  return { budget, byId, levelAfter };
+}
+
+/** The entries of the budgets side by side, each with the level that it leaves. */
+export function entryTable(budgets: readonly ReportBudget[]): string {
+  return chunks(budgets, WEATHERS_ABREAST)
+    .map((some) => entriesAbreast(some.map(columnOf)))
+    .join("\n\n");
+}
+
+function entriesAbreast(abreast: readonly Column[]): string {
+  const across = (figure: (budget: ReportBudget) => string): Cell[] =>
+    abreast.flatMap(({ budget }) => [{ text: figure(budget), across: 2 }, cell("")]);
+  const result = (label: string, figure: (budget: ReportBudget) => number) => [
+    cell(label),
+    ...abreast.flatMap(({ budget }) => [cell(tenth(figure(budget))), cell("")]),
+  ];
+  return columns([
+    [cell(""), ...across(({ case: { weather } }) => weather)],
+    [cell(""), ...abreast.flatMap(() => [cell("dB"), cell("dBm")])],
+    RULE,
+    ...stageRows(abreast, "transmitter"),
+    ...stageRows(abreast, "path"),
+    ...stageRows(abreast, "receiver"),
+    ...stageRows(abreast, "noise"),
+    [cell("RESULT")],
+    result("  signal to noise", ({ snrDb }) => snrDb),
+    result("  needed", ({ requiredSnrDb }) => requiredSnrDb),
+    result("  margin", ({ marginDb }) => marginDb),
+    result("  one standard deviation", ({ marginSigmaDb }) => marginSigmaDb),
+    [
+      cell("  as phase and plastic fall"),
+      ...across(({ marginLowDb, marginHighDb }) => `${tenth(marginLowDb)} to ${tenth(marginHighDb)}`),
+    ],
+    [cell("  holds with"), ...across(({ holdProbability }) => percent(holdProbability))],
+    [cell("  verdict"), ...across(({ verdict }) => verdict)],
+  ]);
+}
+
+function stageRows(abreast: readonly Column[], stage: Stage): Cell[][] {
+  const labelOf = (id: string) => abreast.map(({ byId }) => byId.get(id)?.label).find(Boolean) ?? id;
+  const title =
+    stage === "transmitter" || stage === "receiver"
+      ? `${stage.toUpperCase()}, cover ${abreast[0]!.budget.case[stage].cover}`
+      : stage.toUpperCase();
+  return [
+    [cell(title)],
+    ...idsOf(abreast, stage).map((id) => [
+      cell(`  ${labelOf(id)}`),
+      ...abreast.flatMap(({ byId, levelAfter }) => {
+        const entry = byId.get(id);
+        if (entry === undefined) return [cell("-"), cell("")];
+        return [cell(levels.has(id) ? "" : tenth(entry.db)), cell(tenth(levelAfter.get(id)!))];
+      }),
+    ]),
+  ];
+}
+
+/** Ids of a stage in the order of the budgets; an entry that only one weather has keeps its place. */
+function idsOf(abreast: readonly Column[], stage: Stage): string[] {
+  const ids: string[] = [];
+  for (const { budget } of abreast) {
+    let place = 0;
+    for (const entry of [...budget.entries, ...budget.noiseEntries]) {
+      if (entry.stage !== stage) continue;
+      const known = ids.indexOf(entry.id);
+      if (known >= 0) place = known + 1;
+      else ids.splice(place++, 0, entry.id);
+    }
+  }
+  return ids;
+}
+
+/** Every entry of one budget with its bounds, deviation and source. */
+export async function entryDetail(budget: ReportBudget): Promise<string> {
+  const rows = [...budget.entries, ...budget.noiseEntries, budget.requirement].map((entry) => {
+    const bounded = entry.low !== entry.high;
+    return [
+      entry.id,
+      entry.db.toFixed(2),
+      bounded ? entry.low.toFixed(2) : "",
+      bounded ? entry.high.toFixed(2) : "",
+      entry.sigma === 0 ? "" : entry.sigma.toFixed(2),
+      entry.source,
+    ];
+  });
+  const widths = [17, 7, 6, 6, 5];
+  const sourceWidth = LINE_WIDTH - widths.reduce((sum, width) => sum + width + 2, 0);
+  return grid(
+    [["entry", "dB", "low", "high", "sigma", "source"], ...rows],
+    [
+      ...widths.map((width, i) => ({ align: i === 0 ? ("left" as const) : ("right" as const), width })),
+      { align: "left", width: sourceWidth },
+    ],
+  );
+}

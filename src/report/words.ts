@@ -1,0 +1,73 @@
+/** What a piece of text means, so that a terminal may colour it; the words alone always say the same. */
+export type Meaning = "strong" | "quiet" | "good" | "doubtful" | "bad";
+
+/** Puts colour on a text, or leaves it as it is. */
+export type Paint = (meaning: Meaning, text: string) => string;
+
+export const plain: Paint = (_, text) => text;
+
+/** Widest line of a report. */
+export const LINE_WIDTH = 80;
+
+/** A level or loss to a tenth of a dB; a trace of nothing is 0.0 and never -0.0. */
+export function tenth(db: number): string {
+  const text = db.toFixed(1);
+  return text === "-0.0" ? "0.0" : text;
+}
+
+/** The same with a sign: what a change adds or takes. */
+export function signed(db: number): string {
+  const text = tenth(db);
+  return text.startsWith("-") || text === "0.0" ? text : `+${text}`;
+}
+
+/** A probability in whole per cent; nothing here is known better than that. */
+export function percent(share: number): string {
+  if (share > 0.99) return "over 99 %";
+  if (share < 0.01) return "under 1 %";
+  return `${Math.round(100 * share)} %`;
+}
+
+/** A bandwidth in hertz or kilohertz. */
+export function hertz(bandwidthHz: number): string {
+  if (bandwidthHz >= 1e6) return `${Number((bandwidthHz / 1e6).toPrecision(4))} MHz`;
+  if (bandwidthHz >= 1e3) return `${Number((bandwidthHz / 1e3).toPrecision(4))} kHz`;
+  return `${Number(bandwidthHz.toPrecision(4))} Hz`;
+}
+
+/** Metres, near or far, to a figure that can be paced. */
+export function metres(distanceM: number): string {
+  if (distanceM >= 1000) return `${(distanceM / 1000).toFixed(1)} km`;
+  return distanceM >= 10 ? `${Math.ceil(distanceM)} m` : `${(Math.ceil(distanceM * 10) / 10).toFixed(1)} m`;
+}
+
+/** `a`, `a and b`, `a, b and c` */
+export function listed(words: readonly string[]): string {
+  return words.join(", ").replace(/, ([^,]*)$/, " and $1");
+}
+
+/** A paragraph broken into lines; every line but the first hangs under the text after `lead`. */
+export function paragraph(text: string, lead = "", width = LINE_WIDTH): string {
+  const indent = " ".repeat(lead.length);
+  const lines: string[] = [];
+  let line = lead;
+  let empty = true;
+  for (const word of text.split(/\s+/).filter(Boolean)) {
+    if (!empty && line.length + 1 + word.length > width) {
+      lines.push(line);
+      line = indent;
+      empty = true;
+    }
+    line += empty ? word : ` ${word}`;
+    empty = false;
+  }
+  lines.push(line);
+  return lines.join("\n");
+}
+
+/** Groups of at most `size`, in order: columns that do not fit side by side go below each other. */
+export function chunks<T>(items: readonly T[], size: number): T[][] {
+  const groups: T[][] = [];
+  for (let i = 0; i < items.length; i += size) groups.push(items.slice(i, i + size));
+  return groups;
+}

@@ -1,0 +1,8 @@
+/**
+ * Speed as ratios of two things measured in one run, so that the machine and its load cancel.
+ *
+ *     npm run build && npm run speed
+ */
+import { coldStart } from "./coldStart.mjs";
+
+for (const measure of [coldStart]) process.stdout.write(`${measure()}\n`);
