@@ -29,22 +29,24 @@ export function uncertain(kind: QuantityKind, options: FieldOptions) {
 }
 
 function field<T>(kind: QuantityKind, options: FieldOptions, spread: boolean, take: (read: Quantity) => T) {
-  const { expected } = kinds[kind];
-  return z
-    .union([z.string(), z.number()], { error: ({ input }) => instead(input, expected) })
-    .meta({ description: `${options.about}: ${expected}` })
-    .transform((input, context) => {
-      const judge = (reading: Reading): T => {
-        const fault = reading.ok ? outOfRange(reading, kind, options) : describeRefusal(reading);
-        if (reading.ok && fault === undefined) return take(reading);
-        context.addIssue({ code: "custom", message: fault ?? "", input });
-        return z.NEVER;
-      };
-      const reading = readQuantity(input, kind, { spread });
-      if (reading.ok || !reading.libraryMayRead) return judge(reading);
-      // mathjs is slow to start: it is loaded for arithmetic and rare units alone.
-      return import("#math-units").then(({ readArithmetic }) => judge(readArithmetic(String(input), kind)));
-    });
+  const { expected, usual } = kinds[kind];
+  const error = ({ input }: { input?: unknown }) => instead(input, expected);
+  const needsUnit = usual[0] !== "";
+  const typed: z.ZodType<string | number> = needsUnit
+    ? z.string({ error })
+    : z.union([z.string(), z.number()], { error });
+  return typed.meta({ description: `${options.about}: ${expected}` }).transform((input, context) => {
+    const judge = (reading: Reading): T => {
+      const fault = reading.ok ? outOfRange(reading, kind, options) : describeRefusal(reading);
+      if (reading.ok && fault === undefined) return take(reading);
+      context.addIssue({ code: "custom", message: fault ?? "", input });
+      return z.NEVER;
+    };
+    const reading = readQuantity(input, kind, { spread });
+    if (reading.ok || !reading.libraryMayRead) return judge(reading);
+    // mathjs is slow to start: it is loaded for arithmetic and rare units alone.
+    return import("#math-units").then(({ readArithmetic }) => judge(readArithmetic(String(input), kind)));
+  });
 }
 
 function outOfRange(read: Quantity, kind: QuantityKind, { about, range }: FieldOptions): string | undefined {

@@ -157,5 +157,6 @@ export const scenarioSchema = group(
 
 /** JSON Schema of the file as it is typed, for editors. */
 export function scenarioJsonSchema(): object {
-  return z.toJSONSchema(scenarioSchema, { io: "input", target: "draft-7", reused: "inline" });
+  const schema = z.toJSONSchema(scenarioSchema, { io: "input", target: "draft-7", reused: "inline" });
+  return { title: "Oilskin scenario", ...schema };
 }
