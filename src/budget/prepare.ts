@@ -118,7 +118,7 @@ function prepareEnd(scenario: Scenario, end: EndName, feedName: string, path: Pa
 
 function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
   const { value, sigma = POWER_SIGMA_DB } = powerDbm;
-  return gainEntry(heading("power", "transmitter power, dBm", "scenario"), value, sigma);
+  return gainEntry(heading("power", "transmitter power", "scenario"), value, sigma);
 }
 
 function mouthIn(

@@ -106,7 +106,14 @@ export function waterOnCover(
     filmMm: 0,
     source: !chosen && surface === "mixed" ? `mean of water film and ${published.source}` : published.source,
     warnings: published.extrapolated
-      ? [{ code: "wet_model_range", message: `${model}: ${published.range}`, where }, ...standing]
+      ? [
+          {
+            code: "wet_model_range",
+            message: `the ${model} model of water on it was ${published.range}`,
+            where,
+          },
+          ...standing,
+        ]
       : standing,
   };
 }

@@ -1,8 +1,8 @@
 import type { Entry, Stage } from "../budget/entry.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { grid } from "./grid.ts";
-import { type ReportBudget, WEATHERS_ABREAST } from "./marginText.ts";
-import { chunks, LINE_WIDTH, percent, tenth } from "./words.ts";
+import type { ReportBudget } from "./marginText.ts";
+import { abreast, hundredth, LINE_WIDTH, percent, tenth } from "./words.ts";
 
 /** Entries that are levels themselves: they fill the level's column and leave the change's empty. */
 const levels = new Set(["tx.power", "noise.thermal"]);
@@ -32,33 +32,31 @@ function columnOf(budget: ReportBudget): Column {
 
 /** The entries of the budgets side by side, each with the level that it leaves. */
 export function entryTable(budgets: readonly ReportBudget[]): string {
-  return chunks(budgets, WEATHERS_ABREAST)
-    .map((some) => entriesAbreast(some.map(columnOf)))
-    .join("\n\n");
+  return abreast(budgets, (some) => entriesAbreast(some.map(columnOf)));
 }
 
-function entriesAbreast(abreast: readonly Column[]): string {
+function entriesAbreast(shown: readonly Column[]): string {
   const across = (figure: (budget: ReportBudget) => string): Cell[] =>
-    abreast.flatMap(({ budget }) => [{ text: figure(budget), across: 2 }, cell("")]);
+    shown.flatMap(({ budget }) => [{ text: figure(budget), across: 2 }, cell("")]);
   const result = (label: string, figure: (budget: ReportBudget) => number) => [
     cell(label),
-    ...abreast.flatMap(({ budget }) => [cell(tenth(figure(budget))), cell("")]),
+    ...shown.flatMap(({ budget }) => [cell(tenth(figure(budget))), cell("")]),
   ];
   return columns([
     [cell(""), ...across(({ case: { weather } }) => weather)],
-    [cell(""), ...abreast.flatMap(() => [cell("dB"), cell("dBm")])],
+    [cell(""), ...shown.flatMap(() => [cell("dB"), cell("dBm")])],
     RULE,
-    ...stageRows(abreast, "transmitter"),
-    ...stageRows(abreast, "path"),
-    ...stageRows(abreast, "receiver"),
-    ...stageRows(abreast, "noise"),
+    ...stageRows(shown, "transmitter"),
+    ...stageRows(shown, "path"),
+    ...stageRows(shown, "receiver"),
+    ...stageRows(shown, "noise"),
     [cell("RESULT")],
     result("  signal to noise", ({ snrDb }) => snrDb),
     result("  needed", ({ requiredSnrDb }) => requiredSnrDb),
     result("  margin", ({ marginDb }) => marginDb),
     result("  one standard deviation", ({ marginSigmaDb }) => marginSigmaDb),
     [
-      cell("  as phase and plastic fall"),
+      cell("  range by phase, plastic"),
       ...across(({ marginLowDb, marginHighDb }) => `${tenth(marginLowDb)} to ${tenth(marginHighDb)}`),
     ],
     [cell("  holds with"), ...across(({ holdProbability }) => percent(holdProbability))],
@@ -66,17 +64,17 @@ function entriesAbreast(abreast: readonly Column[]): string {
   ]);
 }
 
-function stageRows(abreast: readonly Column[], stage: Stage): Cell[][] {
-  const labelOf = (id: string) => abreast.map(({ byId }) => byId.get(id)?.label).find(Boolean) ?? id;
+function stageRows(shown: readonly Column[], stage: Stage): Cell[][] {
+  const labelOf = (id: string) => shown.map(({ byId }) => byId.get(id)?.label).find(Boolean) ?? id;
   const title =
     stage === "transmitter" || stage === "receiver"
-      ? `${stage.toUpperCase()}, cover ${abreast[0]!.budget.case[stage].cover}`
+      ? `${stage.toUpperCase()}, cover ${shown[0]!.budget.case[stage].cover}`
       : stage.toUpperCase();
   return [
     [cell(title)],
-    ...idsOf(abreast, stage).map((id) => [
+    ...idsOf(shown, stage).map((id) => [
       cell(`  ${labelOf(id)}`),
-      ...abreast.flatMap(({ byId, levelAfter }) => {
+      ...shown.flatMap(({ byId, levelAfter }) => {
         const entry = byId.get(id);
         if (entry === undefined) return [cell("-"), cell("")];
         return [cell(levels.has(id) ? "" : tenth(entry.db)), cell(tenth(levelAfter.get(id)!))];
@@ -86,9 +84,9 @@ function stageRows(abreast: readonly Column[], stage: Stage): Cell[][] {
 }
 
 /** Ids of a stage in the order of the budgets; an entry that only one weather has keeps its place. */
-function idsOf(abreast: readonly Column[], stage: Stage): string[] {
+function idsOf(shown: readonly Column[], stage: Stage): string[] {
   const ids: string[] = [];
-  for (const { budget } of abreast) {
+  for (const { budget } of shown) {
     let place = 0;
     for (const entry of [...budget.entries, ...budget.noiseEntries]) {
       if (entry.stage !== stage) continue;
@@ -106,9 +104,9 @@ export async function entryDetail(budget: ReportBudget): Promise<string> {
     const bounded = entry.low !== entry.high;
     return [
       entry.id,
-      entry.db.toFixed(2),
-      bounded ? entry.low.toFixed(2) : "",
-      bounded ? entry.high.toFixed(2) : "",
+      hundredth(entry.db),
+      bounded ? hundredth(entry.low) : "",
+      bounded ? hundredth(entry.high) : "",
       entry.sigma === 0 ? "" : entry.sigma.toFixed(2),
       entry.source,
     ];

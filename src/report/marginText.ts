@@ -1,12 +1,9 @@
 import type { Link, Verdict } from "../budget/types.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { cell, columns, RULE } from "./columns.ts";
-import { chunks, listed, type Meaning, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { abreast, capital, listed, type Meaning, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 export type ReportBudget = MarginReport["budgets"][number];
-
-/** Weathers that stand side by side in 80 columns. */
-export const WEATHERS_ABREAST = 3;
 
 export const meanings = { closes: "good", thin: "doubtful", fails: "bad" } as const satisfies Record<
   Verdict,
@@ -23,8 +20,8 @@ export function headline({ title, frequencyGHz, path }: MarginReport, link: Link
     paint("strong", title),
     `${names.length > 0 ? `${names.join(" to ")}: ` : ""}${path.distanceKm.toFixed(1)} km at ` +
       `${Number(frequencyGHz.toPrecision(6))} GHz, ${link.scenario.polarization}`,
-    `heading ${degrees(path.headingDeg)} deg TRUE out, ${degrees(path.backHeadingDeg)} deg back${doubt}; ` +
-      `elevation ${degrees(path.elevationDeg)} and ${degrees(path.backElevationDeg)} deg`,
+    `heading ${degrees(path.headingDeg)} deg TRUE out, ${degrees(path.backHeadingDeg)} deg TRUE back${doubt}`,
+    `elevation ${degrees(path.elevationDeg)} deg out, ${degrees(path.backElevationDeg)} deg back`,
   ].join("\n");
 }
 
@@ -41,7 +38,7 @@ export function answer(report: MarginReport, link: Link): string {
     if (weathers.length === 0) return [];
     return `${verdict === "thin" ? "is thin" : verdict} in ${listed(weathers)}`;
   });
-  return paragraph(`${link.modes[mode]!.label} ${said.join(", ")}. ${coverCosts(report, inMode)}`);
+  return paragraph(`${capital(link.modes[mode]!.label)} ${listed(said)}. ${coverCosts(report, inMode)}`);
 }
 
 /** What the scenario's own covers take against bare mouths, weather by weather. */
@@ -85,7 +82,7 @@ export function marginMatrix(report: MarginReport, link: Link, mode: string, pai
   const budgets = report.budgets.filter((budget) => budget.case.mode === mode);
   const covers = [...new Set(budgets.map(coverName))];
   const own = new Set(ownBudgets(report, link).map(coverName));
-  const margin = (cover: string, weather: string) => {
+  const margin = (cover: string, weather: string, paint: Paint) => {
     const budget = budgets.find((one) => coverName(one) === cover && one.case.weather === weather);
     if (budget === undefined) return cell("-");
     const figures = `${tenth(budget.marginDb)} ±${tenth(budget.marginSigmaDb)} `;
@@ -93,16 +90,14 @@ export function marginMatrix(report: MarginReport, link: Link, mode: string, pai
     return cell(figures + verdict, figures + paint(meanings[budget.verdict], verdict));
   };
   const weathers = [...new Set(budgets.map(({ case: { weather } }) => weather))];
-  return chunks(weathers, WEATHERS_ABREAST)
-    .map((some) =>
-      columns([
-        [cell("cover"), ...some.map((weather) => cell(weather))],
-        RULE,
-        ...covers.map((cover) => [
-          cell(own.has(cover) ? `${cover} *` : cover),
-          ...some.map((weather) => margin(cover, weather)),
-        ]),
+  return abreast(weathers, (some, measured) =>
+    columns([
+      [cell("cover"), ...some.map((weather) => cell(weather))],
+      RULE,
+      ...covers.map((cover) => [
+        cell(own.has(cover) ? `${cover} *` : cover),
+        ...some.map((weather) => margin(cover, weather, measured ? plain : paint)),
       ]),
-    )
-    .join("\n\n");
+    ]),
+  );
 }

@@ -15,7 +15,13 @@ export function tenth(db: number): string {
   return text === "-0.0" ? "0.0" : text;
 }
 
-/** The same with a sign: what a change adds or takes. */
+/** The same to a hundredth, where one entry is looked at closely. */
+export function hundredth(db: number): string {
+  const text = db.toFixed(2);
+  return text === "-0.00" ? "0.00" : text;
+}
+
+/** The same as `tenth` with a sign: what a change adds or takes. */
 export function signed(db: number): string {
   const text = tenth(db);
   return text.startsWith("-") || text === "0.0" ? text : `+${text}`;
@@ -65,9 +71,31 @@ export function paragraph(text: string, lead = "", width = LINE_WIDTH): string {
   return lines.join("\n");
 }
 
-/** Groups of at most `size`, in order: columns that do not fit side by side go below each other. */
-export function chunks<T>(items: readonly T[], size: number): T[][] {
-  const groups: T[][] = [];
-  for (let i = 0; i < items.length; i += size) groups.push(items.slice(i, i + size));
-  return groups;
+/**
+ * Tables of as many columns side by side as fit on a line, the rest below.
+ *
+ * @param items   what the columns show
+ * @param render  the table of some of them, without colour where `measured`
+ */
+export function abreast<T>(
+  items: readonly T[],
+  render: (some: readonly T[], measured: boolean) => string,
+): string {
+  for (let size = items.length; size > 0; size--) {
+    const groups = Array.from({ length: Math.ceil(items.length / size) }, (_, i) =>
+      items.slice(i * size, (i + 1) * size),
+    );
+    const fits = groups.every((some) =>
+      render(some, true)
+        .split("\n")
+        .every((line) => [...line].length <= LINE_WIDTH),
+    );
+    if (fits || size === 1) return groups.map((some) => render(some, false)).join("\n\n");
+  }
+  return "";
+}
+
+/** First letter large, as a sentence begins. */
+export function capital(text: string): string {
+  return text.slice(0, 1).toUpperCase() + text.slice(1);
 }
