@@ -1,5 +1,5 @@
-import { Composer, type Document, isScalar, LineCounter, type Pair, Parser, visit, type YAMLMap } from "yaml";
-import { at, type Places, placesIn } from "./positions.ts";
+import { Composer, type Document, isScalar, type Pair, Parser, visit, type YAMLMap } from "yaml";
+import { type Places, placesIn, positionsIn } from "./positions.ts";
 import type { Diagnostic } from "./types.ts";
 
 /** Groups within groups beyond this depth are no scenario; some thousands end the process inside the package. */
@@ -20,11 +20,11 @@ export interface Reading {
  * read by `quantity.ts` alone. Never throws.
  */
 export function readDocument(text: string): Reading {
-  const lines = new LineCounter();
+  const at = positionsIn(text);
   const fault = (code: string, message: string, offset: number): Diagnostic => {
-    return { code, message, ...at(lines, offset) };
+    return { code, message, ...at(offset) };
   };
-  const tokens = [...new Parser(lines.addNewLine).parse(text)];
+  const tokens = [...new Parser().parse(text)];
   const deep = tooDeep(tokens);
   if (deep !== undefined) {
     return { faults: [fault("too_deep", `groups nested deeper than ${DEEPEST}`, deep)] };
@@ -52,7 +52,7 @@ export function readDocument(text: string): Reading {
   if (keys.fatal) return { faults };
   try {
     const raw: unknown = document!.toJS({ maxAliasCount: MOST_ALIASES });
-    return { faults, content: { raw, places: placesIn(document!, lines) } };
+    return { faults, content: { raw, places: placesIn(document!, at) } };
   } catch {
     // An alias of what stood under a refused key leads nowhere: that key is the fault then.
     if (faults.length > 0) return { faults };

@@ -5,7 +5,6 @@ import {
   isNode,
   isScalar,
   isSeq,
-  type LineCounter,
   type Node,
   type Scalar,
   type YAMLMap,
@@ -35,7 +34,7 @@ interface Step {
 }
 
 /** Places in a document whose keys are plain words all. */
-export function placesIn(document: Document, lines: LineCounter): Places {
+export function placesIn(document: Document, at: (offset: number) => Position): Places {
   const indexes = new WeakMap<YAMLMap, Map<string, Step>>();
   const indexOf = (map: YAMLMap) => {
     const known = indexes.get(map);
@@ -65,7 +64,7 @@ export function placesIn(document: Document, lines: LineCounter): Places {
     }
     return { steps, last };
   };
-  const place = (node: Node | undefined) => at(lines, node?.range?.[0] ?? 0);
+  const place = (node: Node | undefined) => at(node?.range?.[0] ?? 0);
   return {
     ofValue: (path) => place(walk(path).last),
     ofKey: (path) => {
@@ -75,7 +74,13 @@ export function placesIn(document: Document, lines: LineCounter): Places {
   };
 }
 
-export function at(lines: LineCounter, offset: number): Position {
-  const { line, col } = lines.linePos(offset);
-  return { line: Math.max(1, line), column: Math.max(1, col) };
+/** Line and column of an offset; what a file lacks at its end is told behind its last word. */
+export function positionsIn(text: string): (offset: number) => Position {
+  const starts = [0, ...[...text.matchAll(/\n/g)].map(({ index }) => index + 1)];
+  const end = text.trimEnd().length;
+  return (offset) => {
+    const inside = Math.min(offset, end);
+    const line = starts.findLastIndex((start) => start <= inside);
+    return { line: line + 1, column: inside - starts[line]! + 1 };
+  };
 }
