@@ -1,3 +1,5 @@
+import { lengthOf } from "./words.ts";
+
 /** A cell: a text, and how it is to be shown where that is longer than it looks (colour). */
 export interface Cell {
   readonly text: string;
@@ -17,14 +19,16 @@ export const RULE = "rule";
  */
 export function columns(rows: readonly (readonly Cell[] | typeof RULE)[]): string {
   const widths: number[] = [];
-  for (const row of rows) {
-    if (row === RULE) continue;
-    for (const [i, { text, across = 1 }] of row.entries()) {
-      if (across === 1) widths[i] = Math.max(widths[i] ?? 0, lengthOf(text));
-    }
-  }
   const widthOf = (from: number, across: number) =>
     widths.slice(from, from + across).reduce((sum, width) => sum + width + 2, -2);
+  const cells = rows.filter((row) => row !== RULE).flatMap((row) => [...row.entries()]);
+  for (const [i, { text, across = 1 }] of cells) {
+    if (across === 1) widths[i] = Math.max(widths[i] ?? 0, lengthOf(text));
+  }
+  // What is wider than the columns that it covers widens the last of them.
+  for (const [i, { text, across = 1 }] of cells) {
+    widths[i + across - 1]! += Math.max(0, lengthOf(text) - widthOf(i, across));
+  }
   const whole = widthOf(0, widths.length);
   return rows
     .map((row) => {
@@ -39,9 +43,4 @@ export function columns(rows: readonly (readonly Cell[] | typeof RULE)[]): strin
       return parts.join("  ").trimEnd();
     })
     .join("\n");
-}
-
-/** Characters, not code units. */
-function lengthOf(text: string): number {
-  return [...text].length;
 }

@@ -2,9 +2,9 @@ import type { Link } from "../budget/types.ts";
 import type { LinkExposure } from "../study/exposureOfLink.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { entryDetail, entryTable } from "./entryText.ts";
-import { answer, coverName, headline, marginMatrix, ownBudgets } from "./marginText.ts";
+import { answer, coverName, marginMatrix, ownBudgets, pathLines } from "./marginText.ts";
 import { leftOutText, safetyText, warningText } from "./notes.ts";
-import { hertz, type Paint, percent, plain, tenth } from "./words.ts";
+import { hertz, type Paint, paragraph, percent, plain, tenth } from "./words.ts";
 
 export interface TextOptions {
   /** Adds bounds, deviation and source of every entry. */
@@ -24,19 +24,24 @@ export async function marginReportText(
   const own = ownBudgets(report, link).filter(({ case: { mode } }) => mode === modes[0]);
   const cover = own[0] === undefined ? "" : coverName(own[0]);
   const details = detail ? await Promise.all(own.map(entryDetail)) : [];
+  const heading = (text: string) => paint("strong", paragraph(text));
   const parts = [
-    headline(report, link, paint),
+    pathLines(report, link, paint),
     answer(report, link),
     ...modes.map(
-      (mode) =>
-        `${paint("strong", modeTitle(report, link, mode))}\n${marginMatrix(report, link, mode, paint)}`,
+      (mode) => `${heading(modeTitle(report, link, mode))}\n${marginMatrix(report, link, mode, paint)}`,
     ),
-    `closes: ${tenth(reserveDb)} dB or more left, and holds with ${percent(confidence)}; thin: less; fails: none left\n` +
+    [
+      paragraph(
+        `closes: ${tenth(reserveDb)} dB or more left, and holds with ${percent(confidence)}; ` +
+          "thin: less; fails: none left",
+      ),
       "±: one standard deviation; *: as the scenario has it",
-    `${paint("strong", `How it comes about: ${link.modes[modes[0]!]?.label}, cover ${cover}`)}\n${entryTable(own)}`,
+    ].join("\n"),
+    `${heading(`How it comes about: ${link.modes[modes[0]!]?.label}, cover ${cover}`)}\n${entryTable(own)}`,
     ...own.slice(0, details.length).map((budget, i) => {
       const title = `Every entry in ${budget.case.weather}: bounds, one standard deviation, source`;
-      return `${paint("strong", title)}\n${details[i]}`;
+      return `${heading(title)}\n${details[i]}`;
     }),
     warningText(report.warnings, paint),
     safetyText(exposed, paint),

@@ -10,16 +10,22 @@ export const meanings = { closes: "good", thin: "doubtful", fails: "bad" } as co
   Meaning
 >;
 
-/** Path, headings, frequency: what the report is about. */
-export function headline({ title, frequencyGHz, path }: MarginReport, link: Link, paint: Paint): string {
+/** Path, headings, frequency: what a report is about. */
+export function pathLines(
+  { title, frequencyGHz, path }: Pick<MarginReport, "title" | "frequencyGHz" | "path">,
+  link: Link,
+  paint: Paint,
+): string {
   const degrees = (value: number) => value.toFixed(1);
   const { from, to } = path;
   const names = [from.name, to.name].filter((name) => name !== undefined && !title.includes(name));
   const doubt = path.headingErrorDeg >= 0.05 ? `, good to ${degrees(path.headingErrorDeg)} deg` : "";
   return [
-    paint("strong", title),
-    `${names.length > 0 ? `${names.join(" to ")}: ` : ""}${path.distanceKm.toFixed(1)} km at ` +
-      `${Number(frequencyGHz.toPrecision(6))} GHz, ${link.scenario.polarization}`,
+    paint("strong", paragraph(title)),
+    paragraph(
+      `${names.length > 0 ? `${names.join(" to ")}: ` : ""}${path.distanceKm.toFixed(1)} km at ` +
+        `${Number(frequencyGHz.toPrecision(6))} GHz, ${link.scenario.polarization}`,
+    ),
     `heading ${degrees(path.headingDeg)} deg TRUE out, ${degrees(path.backHeadingDeg)} deg TRUE back${doubt}`,
     `elevation ${degrees(path.elevationDeg)} deg out, ${degrees(path.backElevationDeg)} deg back`,
   ].join("\n");

@@ -33,8 +33,13 @@ export async function materialsText(materials: readonly Material[], paint: Paint
   return `${[
     paint("strong", "Cover materials, value (low-high)"),
     table,
-    "sun: A years bare; B years if stabilised or pigmented; C one or two seasons; D needs a skin\n" +
-      "water: how it lies on a clean new surface; dirt and weather take it towards wetting",
+    [
+      paragraph(
+        "A years bare; B years if stabilised or pigmented; C one or two seasons; D needs a skin",
+        "sun:   ",
+      ),
+      paragraph("how it lies on a clean new surface; dirt and weather take it towards wetting", "water: "),
+    ].join("\n"),
     [paint("strong", "Sources"), ...sources].join("\n"),
   ].join("\n\n")}\n`;
 }

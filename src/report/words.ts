@@ -41,15 +41,20 @@ export function hertz(bandwidthHz: number): string {
   return `${Number(bandwidthHz.toPrecision(4))} Hz`;
 }
 
-/** Metres, near or far, to a figure that can be paced. */
+/** Metres, near or far, to a figure that can be paced; rounded away from the antenna. */
 export function metres(distanceM: number): string {
-  if (distanceM >= 1000) return `${(distanceM / 1000).toFixed(1)} km`;
+  if (distanceM >= 1000) return `${(Math.ceil(distanceM / 100) / 10).toFixed(1)} km`;
   return distanceM >= 10 ? `${Math.ceil(distanceM)} m` : `${(Math.ceil(distanceM * 10) / 10).toFixed(1)} m`;
 }
 
 /** `a`, `a and b`, `a, b and c` */
 export function listed(words: readonly string[]): string {
-  return words.join(", ").replace(/, ([^,]*)$/, " and $1");
+  return [words.slice(0, -1).join(", "), ...words.slice(-1)].filter(Boolean).join(" and ");
+}
+
+/** Characters, not code units. */
+export function lengthOf(text: string): number {
+  return [...text].length;
 }
 
 /** A paragraph broken into lines; every line but the first hangs under the text after `lead`. */
@@ -59,7 +64,7 @@ export function paragraph(text: string, lead = "", width = LINE_WIDTH): string {
   let line = lead;
   let empty = true;
   for (const word of text.split(/\s+/).filter(Boolean)) {
-    if (!empty && line.length + 1 + word.length > width) {
+    if (!empty && lengthOf(line) + 1 + lengthOf(word) > width) {
       lines.push(line);
       line = indent;
       empty = true;
@@ -88,7 +93,7 @@ export function abreast<T>(
     const fits = groups.every((some) =>
       render(some, true)
         .split("\n")
-        .every((line) => [...line].length <= LINE_WIDTH),
+        .every((line) => lengthOf(line) <= LINE_WIDTH),
     );
     if (fits || size === 1) return groups.map((some) => render(some, false)).join("\n\n");
   }
