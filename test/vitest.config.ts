@@ -8,6 +8,7 @@ export default defineConfig({
   test: {
     root,
     include: ["test/**/*.test.ts"],
+    globalSetup: "test/setup/build.ts",
     testTimeout: 60_000,
   },
 });
