@@ -7,7 +7,7 @@ const DEEPEST = 40;
 /** How often one anchor may be used, the uses within other anchors multiplied. */
 const MOST_ALIASES = 100;
 /** Longest key or name: reports print them [characters]. */
-export const LONGEST_NAME = 200;
+const LONGEST_NAME = 200;
 
 export interface Reading {
   readonly faults: readonly Diagnostic[];
