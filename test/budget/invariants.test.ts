@@ -13,6 +13,7 @@ import {
   budgetOf,
   caseOf,
   coverOf,
+  entryOf,
   layerOf,
   scenarioOf,
   siteOf,
@@ -216,12 +217,27 @@ describe("a link with another weather", () => {
 
 describe("a steep path", () => {
   // ITU-R P.452-18 counts free space over the slant: 3 km along and 4 km up are 5 km.
-  it("is as long as its slant", () => {
-    const at = (groundM: number, longitude: number) =>
-      budgetOf(scenarioOf({ path: { from: siteOf({ groundM: 0 }), to: siteOf({ groundM, longitude }) } }));
+  it("is as long as its slant, in free space and in even air", () => {
+    const evenAir = weatherOf({ temperatureC: 10, pressureHPa: 900, vapourDensityGPerM3: 5 });
+    const at = (groundM: number, longitude: number) => {
+      const path = { from: siteOf({ groundM: 0 }), to: siteOf({ groundM, longitude }) };
+      return atPath(budgetOf(scenarioOf({ path, weather: { dry: evenAir } }))).map(({ db }) => db);
+    };
     const degPerKm = 180 / Math.PI / 6378.137;
     const [steep, level] = [at(4000, 3 * degPerKm), at(0, 5 * degPerKm)];
-    expect(atPath(steep)[0]!.db).toBeCloseTo(atPath(level)[0]!.db, 9);
+    expect(steep).toHaveLength(2);
+    for (const [i, db] of steep.entries()) expect(db).toBeCloseTo(level[i]!, 9);
+  });
+});
+
+describe("cold air", () => {
+  it("holds no more of the reference atmosphere's vapour than saturates it", () => {
+    const gas = (humidityPercent?: number) =>
+      entryOf(
+        budgetOf(scenarioOf({ weather: { dry: weatherOf({ temperatureC: -20, humidityPercent }) } })),
+        "path.gas",
+      ).db;
+    expect(gas()).toBeCloseTo(gas(100), 12);
   });
 });
 

@@ -61,6 +61,9 @@ describe("a budget warns", () => {
     expect(known(sixCharacters, 20)).toEqual(["locator_too_short", "locator_too_short"]);
     expect(known(sixCharacters / 10, 60)).toEqual([]);
     expect(known(0, 20)).toEqual([]);
+    // A quarter of the beam, 0.843 deg, is 0.883 km at 60 km, both ends together.
+    expect(known(0.44, 60)).toEqual([]);
+    expect(known(0.443, 60)).toEqual(["locator_too_short", "locator_too_short"]);
   });
 
   it("of models beyond their range", () => {
