@@ -2,8 +2,8 @@ import { levenbergMarquardt } from "ml-levenberg-marquardt";
 
 export interface LeastSquaresFit {
   readonly parameters: readonly number[];
-  /** Covariance of the parameters for the uncertainties given. */
-  readonly covariance: readonly (readonly number[])[];
+  /** Covariance of the parameters for the uncertainties given; undefined where the data leave a parameter free. */
+  readonly covariance: readonly (readonly number[])[] | undefined;
   /** Sum of squared residuals, each in units of its standard uncertainty. */
   readonly chiSquared: number;
   readonly degreesOfFreedom: number;
@@ -27,7 +27,7 @@ export interface LeastSquaresFit {
  * @param start      first guess
  * @param step       step of the differences, one a parameter: small against the scale on which `predict` bends
  * @param low, high  limits of the parameters, optional
- * @throws RangeError on fewer data than parameters, or where the data leave a parameter free
+ * @throws RangeError on fewer data than parameters
  */
 export function leastSquares({
   measured,
@@ -85,22 +85,25 @@ export function leastSquares({
   };
 }
 
-/** Inverse of a small symmetric positive definite matrix by Gauss-Jordan elimination, its diagonal scaled to 1. */
-function inverse(matrix: readonly (readonly number[])[]): number[][] {
+/**
+ * Inverse of a small symmetric matrix by Gauss-Jordan elimination, its diagonal scaled to 1; undefined where it is
+ * not positive definite.
+ */
+function inverse(matrix: readonly (readonly number[])[]): number[][] | undefined {
   const size = matrix.map((row, i) => Math.sqrt(row[i]!));
   const rows = matrix.map((row, i) => [
     ...row.map((value, j) => value / (size[i]! * size[j]!)),
     ...row.map((_, j) => (i === j ? 1 : 0)),
   ]);
-  rows.forEach((pivotRow, i) => {
+  for (const [i, pivotRow] of rows.entries()) {
     const pivot = pivotRow[i]!;
-    if (!(pivot > 1e-12)) throw new RangeError("the data leave a parameter of the fit free");
+    if (!(pivot > 1e-12)) return undefined;
     for (let j = 0; j < pivotRow.length; j++) pivotRow[j] = pivotRow[j]! / pivot;
     for (const row of rows) {
       if (row === pivotRow) continue;
       const factor = row[i]!;
       for (let j = 0; j < row.length; j++) row[j] = row[j]! - factor * pivotRow[j]!;
     }
-  });
+  }
   return rows.map((row, i) => row.slice(matrix.length).map((value, j) => value / (size[i]! * size[j]!)));
 }

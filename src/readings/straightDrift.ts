@@ -46,6 +46,8 @@ export function straightDrift(readings: readonly TimedReading[]): StraightDrift 
     start: Array.from({ length: parameters }, () => 0),
     step: Array.from({ length: parameters }, () => 1),
   });
+  const { covariance } = fit;
+  if (covariance === undefined) throw new RangeError("the readings leave the drift or a loss free");
   const variance = fit.chiSquared / fit.degreesOfFreedom;
   return {
     driftDb: fit.parameters[1]! / span,
@@ -54,7 +56,7 @@ export function straightDrift(readings: readonly TimedReading[]): StraightDrift 
     losses: states.map((state, i) => ({
       state,
       lossDb: fit.parameters[2 + i]!,
-      standardDb: Math.sqrt(variance * fit.covariance[2 + i]![2 + i]!),
+      standardDb: Math.sqrt(variance * covariance[2 + i]![2 + i]!),
     })),
   };
 }
