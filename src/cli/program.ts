@@ -9,10 +9,11 @@ import { UserError } from "./terminal.ts";
 /** Exit status of bad input and of a command line that makes no sense. */
 const BAD_INPUT = 2;
 
-// A reader that goes away, as `head` does, is no fault.
-process.stdout.on("error", (error: NodeJS.ErrnoException) => {
-  if (error.code !== "EPIPE") throw error;
-  process.exit();
+// A reader that goes away, as `head` does, is no fault; a full disk is one, but none of the program.
+process.stdout.on("error", ({ code, message }: NodeJS.ErrnoException) => {
+  if (code === "EPIPE") process.exit();
+  process.stderr.write(`the output cannot be written (${code ?? message})\n`);
+  process.exit(BAD_INPUT);
 });
 
 const program = new Command("oilskin")
@@ -20,7 +21,7 @@ const program = new Command("oilskin")
   .version("0.1.0")
   .showHelpAfterError("(oilskin --help shows the commands)");
 for (const command of [budgetCommand, checkCommand, newCommand, materialsCommand, schemaCommand]) {
-  program.addCommand(command);
+  program.addCommand(command.showHelpAfterError(`(oilskin ${command.name()} --help shows what it takes)`));
 }
 for (const command of [program, ...program.commands]) {
   command.exitOverride((end) => {

@@ -11,13 +11,23 @@ export function writeWhole(file: string, text: string, force: boolean): void {
   try {
     writeFileSync(draft, text, { flag: "wx" });
     if (force) renameSync(draft, file);
-    // A link fails where the file has come into being since; a rename would replace it.
-    else linkSync(draft, file);
+    else giveNewName(draft, file);
   } catch (error) {
     const { code, message } = error as NodeJS.ErrnoException;
     if (code === "EEXIST") throw new UserError(`${file} exists already; --force replaces it`);
+    if (code === "ENOENT") throw new UserError(`${file} cannot be written: no such folder`);
     throw new UserError(`${file} cannot be written (${code ?? message})`);
   } finally {
     rmSync(draft, { force: true });
+  }
+}
+
+/** A link fails where the file has come into being since, which a rename would replace. */
+function giveNewName(draft: string, file: string): void {
+  try {
+    linkSync(draft, file);
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code === "EEXIST") throw error;
+    renameSync(draft, file); // memory sticks and telephones know no links
   }
 }

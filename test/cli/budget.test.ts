@@ -10,21 +10,18 @@ const expected = {
     facts: "10.368 GHz, horizontal",
     covers: ["film *", "bare", "sheet", "lid", "cloth"],
     weathers: ["dry", "shower", "thunderstorm", "after the shower"],
-    warning: "covers.film: ",
   },
   "coast-beacon": {
     title: "Cormorant Head beacon to Sallow Hill",
     facts: "10.3689 GHz, horizontal",
     covers: ["tube / cap *", "bare", "tube", "thin tube", "cap"],
     weathers: ["dry", "drizzle at the cliff", "rain", "sea fog"],
-    warning: "weather.rain: ",
   },
   "town-link": {
     title: "Millrace Court to Signal House",
     facts: "24.125 GHz, vertical",
     covers: ["laminate *", "bare", "glassed", "bottle"],
     weathers: ["dry", "steady rain", "cloudburst", "fog"],
-    warning: "covers.laminate: ",
   },
 } as const;
 
@@ -72,7 +69,7 @@ describe.each(scenarioNames)("the margin report of %s", (name) => {
   const file = scenarioFile(name);
   const { status, stdout, stderr } = oilskin(["budget", file]);
   const report = JSON.parse(oilskin(["budget", file, "--json"]).stdout) as MarginReport;
-  const { title, facts, covers, weathers, warning } = expected[name];
+  const { title, facts, covers, weathers } = expected[name];
   const matrices = between(stdout, "Margin in dB", "\ncloses: ");
   const table = between(stdout, "How it comes about", "\nWarnings");
 
@@ -153,7 +150,7 @@ describe.each(scenarioNames)("the margin report of %s", (name) => {
 
   it("prints the doubts of the data", () => {
     const warnings = unwrapped(between(stdout, "\nWarnings", "\nCaution"));
-    expect(warnings).toContain(warning);
+    expect(report.warnings.length).toBeGreaterThan(0);
     for (const { where, message } of report.warnings) expect(warnings).toContain(`${where}: ${message}`);
   });
 
@@ -197,7 +194,9 @@ describe("the table of a budget", () => {
   });
 
   it("leaves the system's noise after feed and cover", () => {
-    expect(figuresOf("noise of feed and cover").at(-1)).toBe(report.budgets[0]!.noiseDbm.toFixed(1));
+    const last = rows[rows.indexOf("RESULT") - 1]!;
+    expect(last).toMatch(/^ {2}noise of feed and cover/);
+    expect(last.split(/\s+/).at(-1)).toBe(report.budgets[0]!.noiseDbm.toFixed(1));
   });
 
   it("ends with the results of the data", () => {

@@ -38,13 +38,13 @@ export function oilskin(args: readonly string[], options: RunOptions = {}): Ende
   );
 }
 
-/** Runs a line of shell in which `$OILSKIN` is the program. */
+/** Runs a line of shell in which `"$NODE" "$OILSKIN"` is the program. */
 export function shell(line: string, environment: Readonly<Record<string, string>> = {}): Ended {
   return ended(
-    spawnSync("/bin/bash", ["-c", line], {
+    spawnSync("/bin/bash", ["--norc", "-c", line], {
       cwd: root,
       encoding: "utf8",
-      env: { PATH: process.env["PATH"], OILSKIN: `"${process.execPath}" "${programFile}"`, ...environment },
+      env: { PATH: process.env["PATH"], NODE: process.execPath, OILSKIN: programFile, ...environment },
     }),
   );
 }

@@ -1,0 +1,69 @@
+import { mkdirSync, readdirSync, readFileSync, writeFileSync } from "node:fs";
+import { join } from "node:path";
+import { beforeEach, describe, expect, it, vi } from "vitest";
+import { writeWhole } from "../../src/cli/wholeFile.ts";
+import { temporaryFolder } from "./run.ts";
+
+/** The codes with which the calls of the system are to fail, or what is to happen before them. */
+const broken = vi.hoisted(() => ({ link: "", rename: "", beforeLink: () => {} }));
+
+vi.mock("node:fs", async (original) => {
+  const real = await original<typeof import("node:fs")>();
+  const fail = (code: string) => {
+    if (code !== "") throw Object.assign(new Error(code), { code });
+  };
+  return {
+    ...real,
+    linkSync: (from: string, to: string) => {
+      broken.beforeLink();
+      fail(broken.link);
+      real.linkSync(from, to);
+    },
+    renameSync: (from: string, to: string) => {
+      fail(broken.rename);
+      real.renameSync(from, to);
+    },
+  };
+});
+
+describe("writing a file whole", () => {
+  const parent = temporaryFolder();
+  let count = 0;
+  let folder = "";
+  let file = "";
+  beforeEach(() => {
+    Object.assign(broken, { link: "", rename: "", beforeLink: () => {} });
+    folder = join(parent, String(count++));
+    mkdirSync(folder);
+    file = join(folder, "path.yaml");
+  });
+
+  it("leaves the text and nothing beside it", () => {
+    writeWhole(file, "new", false);
+    expect(readFileSync(file, "utf8")).toBe("new");
+    expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+
+  it("keeps a file that came into being while it wrote", () => {
+    broken.beforeLink = () => writeFileSync(file, "theirs");
+    expect(() => writeWhole(file, "new", false)).toThrow("exists already; --force replaces it");
+    expect(readFileSync(file, "utf8")).toBe("theirs");
+    expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+
+  // FAT answers EPERM to a link, Android EACCES (from memory).
+  it.each(["EPERM", "EACCES"])("writes where the file system refuses links with %s", (code) => {
+    broken.link = code;
+    writeWhole(file, "new", false);
+    expect(readFileSync(file, "utf8")).toBe("new");
+    expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+
+  it("leaves the old file and no draft where the last step fails", () => {
+    writeFileSync(file, "old");
+    broken.rename = "EIO";
+    expect(() => writeWhole(file, "new", true)).toThrow("cannot be written (EIO)");
+    expect(readFileSync(file, "utf8")).toBe("old");
+    expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+});
