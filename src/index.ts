@@ -37,9 +37,10 @@ export { skyTemperature } from "./atmosphere/skyNoise.ts";
 export { clearSkyTemperature, slantGasAttenuation } from "./atmosphere/slantPath.ts";
 export { waterPermittivity } from "./atmosphere/waterPermittivity.ts";
 // Scenario and engine
+export { cases } from "./budget/cases.ts";
 export type { Entry } from "./budget/entry.ts";
 export { evaluate } from "./budget/evaluate.ts";
-export { cases, prepare, withWeather } from "./budget/prepare.ts";
+export { prepare, withWeather } from "./budget/prepare.ts";
 export type { Budget, Case, Link, Warning } from "./budget/types.ts";
 // Covers and feeds
 export { beadedSheet } from "./cover/beads.ts";
@@ -47,14 +48,16 @@ export { coveredFeed } from "./cover/coveredFeed.ts";
 export { coverNoise } from "./cover/coverNoise.ts";
 export { dewFilmMm, filmAfterRain } from "./cover/drying.ts";
 export { energyCheck, energyFloor } from "./cover/energyFloor.ts";
+export { fixingOf } from "./cover/fixing.ts";
 export { icePermittivity } from "./cover/icePermittivity.ts";
 export { layeredSheet } from "./cover/layeredSheet.ts";
-export { findMaterial, materials, uvClasses } from "./cover/materials.ts";
+export { findMaterial, type Material, materials, uvClasses } from "./cover/materials.ts";
 export { measuredCover } from "./cover/measuredCover.ts";
 export { mixture } from "./cover/mixture.ts";
 export { collectedShare, nearMouth } from "./cover/nearMouth.ts";
 export { reflectionFigures } from "./cover/reflectionFigures.ts";
 export { schleissWetLoss } from "./cover/schleissWetLoss.ts";
+export { matchingGap, pairReturnLoss, sheetPair } from "./cover/sheetGap.ts";
 export { sheetOverBeam } from "./cover/sheetOverBeam.ts";
 export { snowPermittivity } from "./cover/snowPermittivity.ts";
 export { surfaceState } from "./cover/surfaceState.ts";
@@ -78,9 +81,14 @@ export {
   thermalNoiseDbm,
 } from "./receiver/noise.ts";
 // Studies and reports
+export { coversCsv, coversJson } from "./report/coversData.ts";
+export { coversText } from "./report/coversText.ts";
 export { marginCsv, marginJson } from "./report/marginData.ts";
 export { marginReportText } from "./report/marginReportText.ts";
 export { materialsText } from "./report/materialsText.ts";
+export { materialText } from "./report/materialText.ts";
+export { thicknessCsv, thicknessJson } from "./report/thicknessData.ts";
+export { thicknessText } from "./report/thicknessText.ts";
 export type { Meaning, Paint } from "./report/words.ts";
 export { averagePower } from "./safety/averagePower.ts";
 export { cautions } from "./safety/cautions.ts";
@@ -88,7 +96,12 @@ export { exposure, exposureByGain } from "./safety/exposure.ts";
 export { exposureLimits } from "./safety/exposureLimits.ts";
 export { loadScenario } from "./scenario/load.ts";
 export { nearest } from "./scenario/nearest.ts";
+export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/quantity.ts";
 export { scenarioJsonSchema } from "./scenario/schema.ts";
 export type { Diagnostic, Scenario } from "./scenario/types.ts";
+export { breakEven } from "./study/breakEven.ts";
+export { coverVerdict } from "./study/coverVerdict.ts";
 export { exposureOfLink } from "./study/exposureOfLink.ts";
 export { marginReport } from "./study/marginReport.ts";
+export { materialThickness } from "./study/materialThickness.ts";
+export { thickness } from "./study/thickness.ts";

@@ -4,17 +4,22 @@ import {
   feedEfficiency,
   feedExponentFromBeamwidth,
   feedExponentFromEdgeTaper,
+  rimAngleRad,
 } from "../antenna/feedEfficiency.ts";
 import { pointingLoss } from "../antenna/pointing.ts";
 import { pyramidalHorn } from "../antenna/pyramidalHorn.ts";
-import { wavelengthM } from "../numeric/constants.ts";
+import { RADIANS_PER_DEGREE, wavelengthM } from "../numeric/constants.ts";
 import { powerToDb } from "../numeric/decibels.ts";
 import type { Dish, Feed } from "../scenario/types.ts";
 import { type Entry, gainEntry, type Heading, lossEntry, type Stage } from "./entry.ts";
+import type { Beam } from "./mouthpiece.ts";
 
 /** 1-sigma of a gain that was measured on a range, or reckoned from size [dB]: common practice, no source. */
 const STATED_GAIN_SIGMA_DB = 0.4;
 const SIZE_GAIN_SIGMA_DB = 0.6;
+
+/** A dish so deep that its rim stands behind the feed is lit by rays that no flat cover passes [deg]. */
+const STEEPEST_RAY_DEG = 85;
 
 /** Makes the heading of an entry of one end: id prefix and stage set. */
 export type EndHeading = (id: string, label: string, source: string) => Heading;
@@ -27,6 +32,8 @@ export function endHeading(stage: Stage & ("transmitter" | "receiver")): EndHead
 export interface AntennaEntries {
   readonly entries: readonly Entry[];
   readonly beamwidthDeg: number | undefined;
+  /** The feed's pattern as it lights the dish; undefined where it is not known. */
+  readonly beam: Beam | undefined;
   /** Distance at which the far field begins [m]; undefined where the size is not known. */
   readonly farFieldM: number | undefined;
 }
@@ -47,11 +54,24 @@ export function antennaEntries(
   const entries = [...gain];
   if (offsetDeg > 0 || errorPerAxisDeg > 0) {
     const { meanDb, sigmaDb } = pointingLoss({ offsetDeg, errorPerAxisDeg, beamwidthDeg });
-    const source = "12 (angle/beamwidth)^2, mean of a normal aim";
+    const source = "Gaussian main lobe, mean of a normal aim";
     entries.push(lossEntry(heading("pointing", "pointing, mean of the aim", source), meanDb, sigmaDb));
   }
   const farFieldM = dish.diameterM && (2 * dish.diameterM ** 2) / wavelengthM(frequencyGHz);
-  return { entries, beamwidthDeg, farFieldM };
+  return { entries, beamwidthDeg, beam: beamOf(feed, dish), farFieldM };
+}
+
+/** Pattern of a feed in a dish of known shape, where the feed's taper is known too. */
+function beamOf({ edgeTaperDb, tenDbWidthDeg }: Feed, { focalRatio }: Dish): Beam | undefined {
+  if (focalRatio === undefined) return undefined;
+  const pattern =
+    edgeTaperDb !== undefined
+      ? feedExponentFromEdgeTaper({ edgeTaperDb, focalRatio })
+      : tenDbWidthDeg !== undefined
+        ? feedExponentFromBeamwidth({ tenDbFullWidthDeg: tenDbWidthDeg })
+        : undefined;
+  const rimDeg = rimAngleRad(focalRatio) / RADIANS_PER_DEGREE;
+  return pattern && { exponent: pattern.exponent, halfAngleDeg: Math.min(rimDeg, STEEPEST_RAY_DEG) };
 }
 
 function statedDish(heading: EndHeading, { gainDbi }: Dish): Entry[] {
@@ -70,11 +90,7 @@ function litDish(heading: EndHeading, frequencyGHz: number, feed: Feed, dish: Di
     const loss = -powerToDb(dish.efficiency!);
     entries.push(lossEntry(heading("efficiency", "aperture efficiency, stated", "scenario"), loss));
   } else {
-    const { exponent } =
-      feed.edgeTaperDb === undefined
-        ? feedExponentFromBeamwidth({ tenDbFullWidthDeg: feed.tenDbWidthDeg! })
-        : feedExponentFromEdgeTaper({ edgeTaperDb: feed.edgeTaperDb, focalRatio });
-    const { spillover, taper } = feedEfficiency({ exponent, focalRatio });
+    const { spillover, taper } = feedEfficiency({ exponent: beamOf(feed, dish)!.exponent, focalRatio });
     const balanis = "Balanis, Antenna Theory, 15.4.1";
     entries.push(
       lossEntry(heading("spillover", "feed past the rim", balanis), -powerToDb(spillover)),
@@ -88,6 +104,10 @@ function litDish(heading: EndHeading, frequencyGHz: number, feed: Feed, dish: Di
   if (surfaceRmsMm > 0) {
     entries.push(lossEntry(heading("surface", "surface error", "Ruze 1966"), surfaceLossDb));
   }
+  const { value: otherDb, sigma } = dish.otherLossesDb;
+  if (otherDb > 0) {
+    entries.push(lossEntry(heading("other", "other losses of the dish", "scenario"), otherDb, sigma));
+  }
   return entries;
 }
 
@@ -96,6 +116,7 @@ function feedAlone(heading: EndHeading, frequencyGHz: number, feed: Feed): Anten
   return {
     entries: [gainEntry(heading("gain", "feed or horn by itself", source), value, sigma)],
     beamwidthDeg: beamwidthOfGain(value),
+    beam: undefined,
     farFieldM: undefined,
   };
 }

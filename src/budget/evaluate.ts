@@ -19,17 +19,20 @@ export function evaluate(link: Link, chosen: Case): Budget {
   const sent = mouthAt(transmitter, chosen.transmitter.cover, chosen.weather);
   const heard = mouthAt(receiver, chosen.receiver.cover, chosen.weather);
 
+  const dishCover = have(receiver.dishCover, chosen.weather, "weather");
   const entries = [
     transmitter.power!,
     transmitter.line,
     ...sent.entries,
     ...transmitter.antenna,
+    ...have(transmitter.dishCover, chosen.weather, "weather").entries,
     ...weather.entries,
+    ...dishCover.entries.toReversed(),
     ...receiver.antenna,
     ...heard.entries.toReversed(),
     receiver.line,
   ];
-  const noise = noiseSide(scenario.receiver, mode, weather, heard);
+  const noise = noiseSide(scenario.receiver, mode, weather, heard, dishCover);
   const requiredSnrDb = requiredSnrInBandwidth(mode);
   const heading = {
     id: "mode.required",

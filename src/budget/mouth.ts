@@ -1,14 +1,18 @@
-import { type Bounded, bounded, exactly } from "../cover/bounded.ts";
+import { type Bounded, bounded, exactly, plus } from "../cover/bounded.ts";
 import type { CoveredFeed } from "../cover/coveredFeed.ts";
 import { energyCheck } from "../cover/energyFloor.ts";
 import type { Layer } from "../cover/layeredSheet.ts";
 import { equivalentLayer, measuredCover } from "../cover/measuredCover.ts";
+import { type NearMouth, nearMouth } from "../cover/nearMouth.ts";
 import { gammaOfReturnLoss, mismatchLossDb } from "../cover/reflectionFigures.ts";
+import { wavelengthM } from "../numeric/constants.ts";
 import type { Cover, CoverLayer, Feed } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
+import { isDry, type Wetness } from "./deposit.ts";
 import { type Entry, lossEntry } from "./entry.ts";
+import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
 import type { Mouth, Warning } from "./types.ts";
-import { cascade, sheetOf, type WaterCost, type Wetness, waterOnCover } from "./waterOnCover.ts";
+import { type WaterCost, waterOnCover } from "./waterOnCover.ts";
 
 /** A return loss read with a coupler is good to 2 dB or so: common practice, no source. */
 const RETURN_LOSS_DOUBT_DB = 2;
@@ -20,6 +24,13 @@ export const BENCH_REPEATABILITY_DB = 0.05;
 const LEAST_RETURN_LOSS_DB = 0.1;
 /** A film's loss is good to a factor of two each way: common practice, no source. */
 const WATER_SIGMA_SHARE = 0.5;
+
+const BARE_IN_RAIN: Warning = {
+  code: "bare_in_rain",
+  message:
+    "an open mouth takes in rain, for which nothing is charged: bare looks better than it is in the wet",
+  where: "covers.bare",
+};
 
 /** A dry cover: its share of the loss, and the stack that water comes to lie upon. */
 interface DryCover {
@@ -34,73 +45,81 @@ interface DryCover {
 }
 
 /**
- * A feed's mouth under a cover, dry or wet: entries of the bare feed's mismatch, of the cover's mismatch and
- * dissipation, and of what water adds to either. Nothing is charged twice: the five add up to the whole loss
- * between a matched line and the air.
+ * A feed's mouth under a cover: entries of the bare feed's mismatch, of the cover's mismatch and heat, and of
+ * what water, ice or snow adds to either. Nothing is charged twice: the five add up to the whole loss between a
+ * matched line and the air. What leaves sideways between mouth and cover counts with the heat: like that it is
+ * lost to the signal and replaced by the warmth around.
+ *
+ * @returns the mouth by what the weather has put on it; the dry cover is worked out once
  */
-export function mouthOf(
+export function mouthUnder(
   heading: EndHeading,
-  frequencyGHz: number,
-  feed: Feed,
-  cover: Cover,
+  mouth: Mouthpiece,
   coverName: string,
-  wetness: Wetness | undefined,
-): Mouth {
+): (wetness: Wetness | undefined) => Mouth {
+  const { feed, cover } = mouth;
   const where = `covers.${coverName}`;
   const feedMismatchDb = mismatchLossDb(gammaOfReturnLoss("returnLossDb", feed.returnLossDb));
-  const entries: Entry[] = [
-    lossEntry(
-      heading("feed_mismatch", "feed mismatch, bare", "return loss of the scenario"),
-      feedMismatchDb,
-      mismatchDoubt(feed.returnLossDb),
-    ),
-  ];
-  const bareState = {
+  const feedEntry = lossEntry(
+    heading("feed_mismatch", "feed mismatch, bare", "return loss of the scenario"),
+    feedMismatchDb,
+    mismatchDoubt(feed.returnLossDb),
+  );
+  const bare: Mouth = {
     bareReturnLossDb: feed.returnLossDb,
     dryCostDb: exactly(0),
     waterCostDb: exactly(0),
     returnLossDb: exactly(feed.returnLossDb),
     filmMm: 0,
+    entries: [feedEntry],
+    mismatchLossDb: feedMismatchDb,
+    dissipationDb: 0,
+    warnings: [],
   };
   if (cover.layers.length === 0 && cover.measured === undefined) {
-    return { ...bareState, entries, mismatchLossDb: feedMismatchDb, dissipationDb: 0, warnings: [] };
+    return (wetness) =>
+      wetness === undefined || isDry(wetness) ? bare : { ...bare, warnings: [BARE_IN_RAIN] };
   }
 
   // The layer that stands in for readings has the right |G| but no phase to set against the feed's.
-  const exposed = cover.layers.length > 0 ? feed : { ...feed, phaseDeg: undefined };
+  const exposed = cover.layers.length > 0 ? mouth : { ...mouth, feed: { ...feed, phaseDeg: undefined } };
   const dry = cover.measured
-    ? measuredDry(frequencyGHz, exposed, cover, feedMismatchDb, where)
-    : layeredDry(frequencyGHz, exposed, cover, feedMismatchDb);
-  entries.push(
-    lossEntry(heading("cover_mismatch", "cover, mismatch", dry.source), dry.mismatchDb, dry.mismatchSigmaDb),
-    lossEntry(heading("cover_loss", "cover, heat", dry.source), dry.dissipationDb, dry.dissipationSigmaDb),
-  );
-  const dryState = {
-    ...bareState,
+    ? measuredDry(exposed, feedMismatchDb, where)
+    : layeredDry(exposed, feedMismatchDb, where);
+  const dryMouth: Mouth = {
+    ...bare,
     dryCostDb: plus(dry.mismatchDb, dry.dissipationDb),
     returnLossDb: dry.covered.returnLossDb,
+    entries: [
+      feedEntry,
+      lossEntry(
+        heading("cover_mismatch", "cover, mismatch", dry.source),
+        dry.mismatchDb,
+        dry.mismatchSigmaDb,
+      ),
+      lossEntry(
+        heading("cover_loss", "cover, heat and stray", dry.source),
+        dry.dissipationDb,
+        dry.dissipationSigmaDb,
+      ),
+    ],
+    mismatchLossDb: feedMismatchDb + dry.mismatchDb.nominal,
+    dissipationDb: dry.dissipationDb.nominal,
+    warnings: dry.warnings,
   };
-  if (wetness === undefined || wetness.rainRateMmPerH === 0) {
+  return (wetness) => {
+    if (wetness === undefined || isDry(wetness)) return dryMouth;
+    const water = waterOnCover(exposed, dry.layers, dry.covered, wetness, where);
     return {
-      ...dryState,
-      entries,
-      mismatchLossDb: feedMismatchDb + dry.mismatchDb.nominal,
-      dissipationDb: dry.dissipationDb.nominal,
-      warnings: dry.warnings,
+      ...dryMouth,
+      waterCostDb: plus(water.mismatchDb, water.dissipationDb),
+      returnLossDb: water.returnLossDb,
+      filmMm: water.filmMm,
+      entries: [...dryMouth.entries, ...waterEntries(heading, water, dry.covered.phaseSpreadDb)],
+      mismatchLossDb: dryMouth.mismatchLossDb + water.mismatchDb.nominal,
+      dissipationDb: dryMouth.dissipationDb + water.dissipationDb.nominal,
+      warnings: [...dry.warnings, ...water.warnings],
     };
-  }
-
-  const water = waterOnCover(frequencyGHz, exposed, cover, dry.layers, dry.covered, wetness, where);
-  entries.push(...waterEntries(heading, water, dry.covered.phaseSpreadDb));
-  return {
-    ...dryState,
-    waterCostDb: plus(water.mismatchDb, water.dissipationDb),
-    returnLossDb: water.returnLossDb,
-    filmMm: water.filmMm,
-    entries,
-    mismatchLossDb: feedMismatchDb + dry.mismatchDb.nominal + water.mismatchDb.nominal,
-    dissipationDb: dry.dissipationDb.nominal + water.dissipationDb.nominal,
-    warnings: [...dry.warnings, ...water.warnings],
   };
 }
 
@@ -113,29 +132,64 @@ function mismatchDoubt(returnLossDb: number): number {
 }
 
 /** A cover by its layers; the spread of its materials widens the bounds that the phase leaves. */
-function layeredDry(frequencyGHz: number, feed: Feed, cover: Cover, feedMismatchDb: number): DryCover {
+function layeredDry(mouth: Mouthpiece, feedMismatchDb: number, where: string): DryCover {
+  const { frequencyGHz, feed, cover } = mouth;
   const stack = (figure: keyof Bounded): Layer[] => cover.layers.map((layer) => layerAt(layer, figure));
   const [covered, least, most] = (["nominal", "low", "high"] as const).map((figure) =>
-    cascade(frequencyGHz, feed, cover, sheetOf(frequencyGHz, stack(figure))),
+    cascade(mouth, sheetBefore(mouth, stack(figure))),
   ) as [CoveredFeed, CoveredFeed, CoveredFeed];
-  const range = (part: "mismatchLossDb" | "dissipationDb", nominal: number) =>
+  const range = (part: "mismatchLossDb" | "dissipationDb" | "sidewaysLossDb") =>
     bounded(
       Math.min(covered[part].low, least[part].low, most[part].low),
-      nominal,
+      covered[part].nominal,
       Math.max(covered[part].high, least[part].high, most[part].high),
     );
-  const mismatch = range("mismatchLossDb", covered.mismatchLossDb.nominal);
-  const dissipationDb = range("dissipationDb", covered.dissipationDb.nominal);
+  const dissipationDb = plus(range("dissipationDb"), range("sidewaysLossDb"));
+  const sheetLossDb = Math.max(0, covered.transducerLossDb.nominal - feedMismatchDb);
+  const near = nearMouth({ frequencyGHz, apertureMm: mouthWidthMm(feed), gapMm: cover.gapMm, sheetLossDb });
+  // A cover of no thickness is no cover, and has no doubt of its own.
+  const planeWaveSigmaDb = cover.layers.some(({ thicknessMm }) => thicknessMm > 0) ? near.sigmaLossDb : 0;
   return {
-    mismatchDb: shifted(mismatch, -feedMismatchDb),
+    mismatchDb: shifted(range("mismatchLossDb"), -feedMismatchDb),
     mismatchSigmaDb: covered.phaseSpreadDb,
     dissipationDb,
-    dissipationSigmaDb: DISSIPATION_SIGMA_SHARE * Math.max(0, dissipationDb.nominal), // no loss may round below 0
+    dissipationSigmaDb: Math.hypot(
+      DISSIPATION_SIGMA_SHARE * Math.max(0, dissipationDb.nominal), // no loss may round below 0
+      planeWaveSigmaDb,
+    ),
     layers: stack("nominal"),
     covered,
     source: "plane wave through the layers, Born & Wolf 1.6",
-    warnings: [],
+    warnings: layerWarnings(mouth, near, where),
   };
+}
+
+/** Where a stack leaves the range in which a plane wave through layers can be trusted. */
+function layerWarnings({ frequencyGHz, cover }: Mouthpiece, near: NearMouth, where: string): Warning[] {
+  const waveMm = 1000 * wavelengthM(frequencyGHz);
+  const warnings: Warning[] = [];
+  const warn = (code: string, message: string) => warnings.push({ code, message, where });
+  for (const { material, thicknessMm } of cover.layers) {
+    if (thicknessMm === 0)
+      warn("zero_thickness", `the layer of ${material} has no thickness and does nothing`);
+    if (thicknessMm > 10 * waveMm) {
+      warn(
+        "thick_layer",
+        `the layer of ${material} is more than ten wavelengths thick (${Math.round(10 * waveMm)} mm)`,
+      );
+    }
+  }
+  if (cover.gapMm > 10 * waveMm) {
+    warn(
+      "gap_beyond_model",
+      `a gap of ${cover.gapMm} mm is more than ten wavelengths: the feed's beam has spread by then`,
+    );
+  }
+  if (near.weak) {
+    const doubt = "take a cover's loss to 0.1 dB or a third of it, its return loss to 2 dB";
+    warnings.push({ code: "plane_wave_weak", message: `${near.reason}; ${doubt}`, where: "covers" });
+  }
+  return warnings;
 }
 
 function layerAt({ permittivity, lossTangent, thicknessMm }: CoverLayer, figure: keyof Bounded): Layer {
@@ -143,13 +197,8 @@ function layerAt({ permittivity, lossTangent, thicknessMm }: CoverLayer, figure:
 }
 
 /** A cover by its readings: the reading is charged as it stands, split into mismatch and heat. */
-function measuredDry(
-  frequencyGHz: number,
-  feed: Feed,
-  cover: Cover,
-  feedMismatchDb: number,
-  where: string,
-): DryCover {
+function measuredDry(mouth: Mouthpiece, feedMismatchDb: number, where: string): DryCover {
+  const { frequencyGHz, feed, cover } = mouth;
   const { insertionLossDb } = cover.measured!;
   const insertionDb = insertionLossDb.value;
   const coveredReturnLossDb = coveredReturnLoss(feed, cover);
@@ -159,12 +208,11 @@ function measuredDry(
     returnLossChangeDb: coveredReturnLossDb && feed.returnLossDb - coveredReturnLossDb,
   });
   const sigma = insertionLossDb.sigma ?? BENCH_REPEATABILITY_DB;
-  const modelled =
-    cover.layers.length > 0 ? layeredDry(frequencyGHz, feed, cover, feedMismatchDb) : undefined;
+  const modelled = cover.layers.length > 0 ? layeredDry(mouth, feedMismatchDb, where) : undefined;
   const layers = modelled?.layers ?? [
     equivalentLayer({ reflection: split.reflection.nominal, frequencyGHz }),
   ];
-  const covered = modelled?.covered ?? cascade(frequencyGHz, feed, cover, sheetOf(frequencyGHz, layers));
+  const covered = modelled?.covered ?? cascade(mouth, sheetBefore(mouth, layers));
   return {
     // What lies below the energy floor cannot be heat: the reading keeps its value, as mismatch alone.
     mismatchDb: exactly(insertionDb - split.dissipationDb),
@@ -220,19 +268,19 @@ function outsideModel(
 }
 
 function waterEntries(heading: EndHeading, water: WaterCost, dryPhaseSpreadDb: number): Entry[] {
-  const { mismatchDb, dissipationDb, source } = water;
+  const { noun, mismatchDb, dissipationDb, source } = water;
   const whole = Math.abs(mismatchDb.nominal) + Math.abs(dissipationDb.nominal);
   // One factor of two over both parts: shared out so that the parts' squares add up to the whole's.
   const share = (part: number) => (whole > 0 ? WATER_SIGMA_SHARE * Math.sqrt(whole * Math.abs(part)) : 0);
   const morePhase = Math.max(0, water.phaseSpreadDb ** 2 - dryPhaseSpreadDb ** 2);
   return [
     lossEntry(
-      heading("water_mismatch", "water on it, mismatch", source),
+      heading("water_mismatch", `${noun} on it, mismatch`, source),
       mismatchDb,
       Math.sqrt(share(mismatchDb.nominal) ** 2 + morePhase),
     ),
     lossEntry(
-      heading("water_loss", "water on it, heat", source),
+      heading("water_loss", `${noun} on it, heat`, source),
       dissipationDb,
       share(dissipationDb.nominal),
     ),
@@ -241,8 +289,4 @@ function waterEntries(heading: EndHeading, water: WaterCost, dryPhaseSpreadDb: n
 
 function shifted({ low, nominal, high }: Bounded, by: number): Bounded {
   return { low: low + by, nominal: nominal + by, high: high + by };
-}
-
-function plus(a: Bounded, b: Bounded): Bounded {
-  return { low: a.low + b.low, nominal: a.nominal + b.nominal, high: a.high + b.high };
 }

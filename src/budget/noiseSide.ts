@@ -4,6 +4,7 @@ import { antennaTemperatureInRain, levelBeam } from "../receiver/antennaTemperat
 import type { Mode } from "../receiver/modes.ts";
 import { noiseTemperatureK, thermalNoiseDbm } from "../receiver/noise.ts";
 import type { Receiver } from "../scenario/types.ts";
+import type { DishCoverState } from "./dishCover.ts";
 import { type Entry, gainEntry, type Heading } from "./entry.ts";
 import type { Mouth, PreparedWeather } from "./types.ts";
 
@@ -25,7 +26,13 @@ export interface NoiseSide {
  *
  * Source: noise waves after Bosma 1967 for the mouth; D. M. Pozar, Microwave Engineering, for the line
  */
-export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeather, mouth: Mouth): NoiseSide {
+export function noiseSide(
+  receiver: Receiver,
+  mode: Mode,
+  weather: PreparedWeather,
+  mouth: Mouth,
+  over: DishCoverState,
+): NoiseSide {
   const figureDb = receiver.noiseFigureDb;
   const clear = receiver.antennaTemperatureK ?? { value: levelBeam.temperatureK, sigma: levelBeam.sigmaK };
   const { temperatureK: antennaK } = antennaTemperatureInRain({
@@ -39,8 +46,13 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
   // Readings that contradict each other may claim less than no mismatch; noise takes no part in that.
   const matched = Math.min(1, dbToPower(-mouth.mismatchLossDb));
   const passed = matched * dbToPower(-mouth.dissipationDb);
+  // Over the dish what is reflected shows the feed its own warm side.
+  const apertureK =
+    over.passed * antennaK +
+    over.heated * weather.ambientK +
+    (1 - over.passed - over.heated) * REFERENCE_TEMPERATURE_K;
   const mouthK =
-    passed * antennaK + (matched - passed) * weather.ambientK + (1 - matched) * REFERENCE_TEMPERATURE_K;
+    passed * apertureK + (matched - passed) * weather.ambientK + (1 - matched) * REFERENCE_TEMPERATURE_K;
 
   const steps = [
     REFERENCE_TEMPERATURE_K,
@@ -61,7 +73,7 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
   // A dB more of noise figure raises the system by its receiver's part only.
   const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
   const dimmed = dbToPower(-weather.hydrometeorLossDb);
-  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * dimmed * passed * linePass;
+  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * dimmed * over.passed * passed * linePass;
   const entries = [
     gainEntry(heading("thermal", "290 K in the bandwidth", "k T B"), -thermalDbm),
     gainEntry(
@@ -75,7 +87,7 @@ export function noiseSide(receiver: Receiver, mode: Mode, weather: PreparedWeath
       (powerToDb(Math.E) * antennaSigmaK) / systemK,
     ),
     gainEntry(heading("line", "line's noise", "Pozar"), step(steps[2], steps[3])),
-    gainEntry(heading("cover", "noise of feed and cover", "Bosma 1967"), step(steps[3], steps[4])),
+    gainEntry(heading("cover", "noise of feed and covers", "Bosma 1967"), step(steps[3], steps[4])),
   ];
   return {
     entries,

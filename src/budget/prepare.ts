@@ -1,11 +1,13 @@
-import type { End, EndName, Scenario, Weather } from "../scenario/types.ts";
+import { gammaOfReturnLoss } from "../cover/reflectionFigures.ts";
+import type { EndName, Scenario, Weather } from "../scenario/types.ts";
 import { prepareWeather } from "./air.ts";
 import { antennaEntries, type EndHeading, endHeading } from "./antennaEntries.ts";
+import type { Wetness } from "./deposit.ts";
+import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
-import { mouthOf } from "./mouth.ts";
-import type { Case, Link, Mouth, PathGeometry, PreparedEnd, Warning } from "./types.ts";
-import type { Wetness } from "./waterOnCover.ts";
+import { mouthUnder } from "./mouth.ts";
+import type { Link, PathGeometry, PreparedEnd, Warning } from "./types.ts";
 
 /** 1-sigma of a power read with coupler and diode, and of a line's loss out of a table [dB]: common practice, no source. */
 const POWER_SIGMA_DB = 0.7;
@@ -13,6 +15,8 @@ const LINE_SIGMA_DB = 0.3;
 
 /** Water on a cover where the weather names no temperature [degC]: common practice, no source. */
 const USUAL_WATER_C = 10;
+/** Dish whose size the scenario does not state, for the water that runs down its cover [m]. */
+const USUAL_DISH_M = 0.6;
 
 /**
  * Everything of a scenario that does not depend on the case, computed once: geometry, antennas, air by weather,
@@ -37,46 +41,29 @@ export function prepare(scenario: Scenario): Link {
 /** The same link with one weather more, or another one under the same name: what a sweep of the rain rate needs. */
 export function withWeather(link: Link, name: string, weather: Weather): Link {
   const scenario = { ...link.scenario, weather: { ...link.scenario.weather, [name]: weather } };
-  const prepared = prepareWeather(scenario, link.path, weather, `weather.${name}`);
-  const onEnd = (end: EndName) =>
-    mapValues(link.ends[end], (ready, feed) => ({
-      ...ready,
-      mouth: mapValues(ready.mouth, (byWeather, cover) => ({
-        ...byWeather,
-        [name]: mouthIn(scenario, end, feed, cover, weather),
-      })),
-    }));
+  const onEnd = (end: EndName) => mapValues(link.ends[end], (ready) => inWeather(ready, end, name, weather));
   return {
     ...link,
     scenario,
     ends: { transmitter: onEnd("transmitter"), receiver: onEnd("receiver") },
-    weathers: { ...link.weathers, [name]: prepared },
+    weathers: {
+      ...link.weathers,
+      [name]: prepareWeather(scenario, link.path, weather, `weather.${name}`),
+    },
   };
 }
 
-/** The cases of a report: the ends as the scenario has them, then every cover on both ends; by weather, by mode. */
-export function cases({ scenario }: Link): Case[] {
-  const { transmitter, receiver } = scenario;
-  const choices = [
-    { transmitter: choiceOf(transmitter), receiver: choiceOf(receiver) },
-    ...Object.keys(scenario.covers).map((cover) => ({
-      transmitter: { feed: transmitter.feed, cover },
-      receiver: { feed: receiver.feed, cover },
+/** An end made ready for one weather more. */
+function inWeather(ready: PreparedEnd, end: EndName, name: string, weather: Weather): PreparedEnd {
+  const wetness = wetnessAt(end, weather);
+  return {
+    ...ready,
+    mouth: mapValues(ready.mouth, (byWeather, cover) => ({
+      ...byWeather,
+      [name]: ready.mouthUnder[cover]!(wetness),
     })),
-  ];
-  const asWritten = ({ transmitter: tx, receiver: rx }: (typeof choices)[number]) =>
-    tx.cover === transmitter.cover && rx.cover === receiver.cover;
-  return choices
-    .filter((choice, i) => i === 0 || !asWritten(choice))
-    .flatMap((choice) =>
-      receiver.modes.flatMap((mode) =>
-        Object.keys(scenario.weather).map((weather) => ({ weather, ...choice, mode })),
-      ),
-    );
-}
-
-function choiceOf({ feed, cover }: End) {
-  return { feed, cover };
+    dishCover: { ...ready.dishCover, [name]: ready.dishCoverOver(wetness) },
+  };
 }
 
 /** Both ends may try any feed that suits their dish. */
@@ -93,44 +80,37 @@ function prepareEnds(scenario: Scenario, end: EndName, path: PathGeometry): Reco
 }
 
 function prepareEnd(scenario: Scenario, end: EndName, feedName: string, path: PathGeometry): PreparedEnd {
-  const { frequencyGHz } = scenario;
+  const { frequencyGHz, covers, weather } = scenario;
   const feed = scenario.feeds[feedName]!;
-  const { dish, lineLossDb } = scenario[end];
+  const { lineLossDb, dish: dishName, dishCover } = scenario[end];
+  const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
   const heading = endHeading(end);
-  const antenna = antennaEntries(
-    heading,
-    frequencyGHz,
-    feed,
-    dish === undefined ? undefined : scenario.dish[dish],
-  );
+  const antenna = antennaEntries(heading, frequencyGHz, feed, dish);
   const lineSigma = lineLossDb.sigma ?? Math.min(LINE_SIGMA_DB, lineLossDb.value / 2);
-  return {
+  const mouths = mapValues(covers, (cover, name) =>
+    mouthUnder(heading, { frequencyGHz, feed, cover, beam: antenna.beam }, name),
+  );
+  const gamma = gammaOfReturnLoss("returnLossDb", feed.returnLossDb);
+  const ready: PreparedEnd = {
     ...(end === "transmitter" && { power: powerEntry(heading, scenario) }),
     line: lossEntry(heading("line", "line and joints", "scenario"), lineLossDb.value, lineSigma),
     antenna: antenna.entries,
     beamwidthDeg: antenna.beamwidthDeg,
-    mouth: mapValues(scenario.covers, (_, cover) =>
-      mapValues(scenario.weather, (weather) => mouthIn(scenario, end, feedName, cover, weather)),
-    ),
+    mouthUnder: mouths,
+    dishCoverOver:
+      dishCover === undefined
+        ? () => NO_DISH_COVER
+        : dishCoverOver(heading, frequencyGHz, covers[dishCover]!, dish?.diameterM ?? USUAL_DISH_M, gamma),
+    mouth: mapValues(mouths, () => ({})),
+    dishCover: {},
     warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),
   };
+  return Object.entries(weather).reduce((done, [name, one]) => inWeather(done, end, name, one), ready);
 }
 
 function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
   const { value, sigma = POWER_SIGMA_DB } = powerDbm;
   return gainEntry(heading("power", "transmitter power", "scenario"), value, sigma);
-}
-
-function mouthIn(
-  scenario: Scenario,
-  end: EndName,
-  feedName: string,
-  coverName: string,
-  weather: Weather,
-): Mouth {
-  const { frequencyGHz, feeds, covers } = scenario;
-  const wetness = wetnessAt(end, weather);
-  return mouthOf(endHeading(end), frequencyGHz, feeds[feedName]!, covers[coverName]!, coverName, wetness);
 }
 
 /** Rain on the covers of one end; a cover may be wet without rain on the path, and dry while it rains. */
@@ -139,8 +119,15 @@ function wetnessAt(end: EndName, weather: Weather): Wetness | undefined {
   return {
     rainRateMmPerH: weather.coversWetAsAtMmPerH ?? weather.rainMmPerH.value,
     windMPerS: weather.windMPerS,
-    // Rain that falls is not below freezing for long; ice and snow are other matters.
-    temperatureC: Math.max(0, weather.temperatureC ?? USUAL_WATER_C),
+    driedForMin: weather.driedForMin,
+    dewMm: {
+      low: Math.max(0, weather.dewMm.value - (weather.dewMm.sigma ?? 0)),
+      nominal: weather.dewMm.value,
+      high: weather.dewMm.value + (weather.dewMm.sigma ?? 0),
+    },
+    iceMm: weather.iceMm,
+    snow: weather.snow,
+    temperatureC: weather.temperatureC ?? (weather.iceMm > 0 || weather.snow ? 0 : USUAL_WATER_C),
   };
 }
 

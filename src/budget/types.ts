@@ -1,6 +1,8 @@
 import type { Bounded } from "../cover/bounded.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { EndName, Scenario, Site, Weather } from "../scenario/types.ts";
+import type { Wetness } from "./deposit.ts";
+import type { DishCoverState } from "./dishCover.ts";
 import type { Entry } from "./entry.ts";
 
 /** A doubt that the user should know of; `where` names the part of the scenario. */
@@ -88,6 +90,11 @@ export interface PreparedEnd {
   readonly line: Entry;
   readonly antenna: readonly Entry[];
   readonly beamwidthDeg: number | undefined;
+  /** Each cover by what a weather puts on it, for weathers that come later. */
+  readonly mouthUnder: Readonly<Record<string, (wetness: Wetness | undefined) => Mouth>>;
+  readonly dishCoverOver: (wetness: Wetness | undefined) => DishCoverState;
+  /** By weather name. */
+  readonly dishCover: Readonly<Record<string, DishCoverState>>;
   /** By cover name, then weather name. */
   readonly mouth: Readonly<Record<string, Readonly<Record<string, Mouth>>>>;
   readonly warnings: readonly Warning[];

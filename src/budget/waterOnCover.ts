@@ -1,26 +1,21 @@
 import { BEAD_HEIGHT_MM, beadedSheet } from "../cover/beads.ts";
-import { type Bounded, bounded } from "../cover/bounded.ts";
-import { type CoveredFeed, coveredFeed } from "../cover/coveredFeed.ts";
-import { type Layer, layeredSheet, type SheetScattering } from "../cover/layeredSheet.ts";
+import { type Bounded, bounded, plus } from "../cover/bounded.ts";
+import type { CoveredFeed } from "../cover/coveredFeed.ts";
+import type { Layer } from "../cover/layeredSheet.ts";
 import type { Wetting } from "../cover/materials.ts";
 import { type SurfaceCare, surfaceState } from "../cover/surfaceState.ts";
-import { type WaterFilm, waterFilm, waterLayer } from "../cover/waterFilm.ts";
+import { waterLayer } from "../cover/waterFilm.ts";
 import { wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
 import type { WetModel } from "../cover/wetModels.ts";
 import { abs } from "../numeric/complex.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
-import type { Cover, Feed } from "../scenario/types.ts";
+import { type Deposit, depositOn, type Wetness } from "./deposit.ts";
+import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
 import type { Warning } from "./types.ts";
 
-/** Rain that keeps a cover wet. */
-export interface Wetness {
-  readonly rainRateMmPerH: number;
-  readonly windMPerS: number;
-  readonly temperatureC: number;
-}
-
-/** What water adds to a dry cover. */
+/** What water, ice or snow adds to a dry cover. */
 export interface WaterCost {
+  readonly noun: Deposit["noun"];
   readonly mismatchDb: Bounded;
   readonly dissipationDb: Bounded;
   /** Standard deviation over an unknown phase of the wet feed's loss [dB]. */
@@ -31,10 +26,8 @@ export interface WaterCost {
   readonly warnings: readonly Warning[];
 }
 
-/** Fall speed of rain drops [m/s]: common practice, no source. */
-const DROP_FALL_M_PER_S = 6.5;
-/** Length down which water runs where neither cover nor feed says: a small horn's mouth [mm]. */
-const USUAL_MOUTH_MM = 50;
+/** Loss of a film over that of the same rain on a fresh repellent surface: Merceret & Ward 2000. */
+const REPELLENT_GAIN = 2.9;
 
 /** How a kept surface behaves: weather takes it one step towards wetting, a repellent coat makes it bead. */
 function behaviour(surface: Wetting, care: SurfaceCare): Wetting {
@@ -46,53 +39,52 @@ function behaviour(surface: Wetting, care: SurfaceCare): Wetting {
 /**
  * Water on a cover: a film on a surface that wets, the published model for water-repellent radomes on one that
  * beads (never above the film), the mean of both between; or the model that the user names. Drops are for
- * surfaces that shed water: named for one that lets it spread, they are the film.
+ * surfaces that shed water: named for one that lets it spread, they are the film. Ice and snow lie as layers.
  *
  * The film may cost less than none: with the feed's phase known it can tune the feed, and on a sheet a little
  * short of half a wave it makes up the rest. That is the cascade's answer and stands.
  */
 export function waterOnCover(
-  frequencyGHz: number,
-  feed: Feed,
-  cover: Cover,
+  mouth: Mouthpiece,
   dryLayers: readonly Layer[],
   dry: CoveredFeed,
   wetness: Wetness,
   where: string,
 ): WaterCost {
-  const film = filmOn(feed, cover, wetness);
-  const wetSheet = withWater(frequencyGHz, dryLayers, film.meanMm, wetness);
-  const wet = cascade(frequencyGHz, feed, cover, wetSheet);
-  const full = difference(dry, wet);
-  const standing: Warning[] = film.standing
+  const { frequencyGHz, feed, cover } = mouth;
+  const deposit = depositOn(frequencyGHz, surfaceOf(mouth), wetness);
+  const { filmMm, noun } = deposit;
+  const coveredAt = (thicknessMm: number) => {
+    const sheet = sheetBefore(mouth, [...dryLayers, ...deposit.layersAt(thicknessMm)]);
+    return { sheet, covered: cascade(mouth, sheet) };
+  };
+  const { sheet, covered: wet } = coveredAt(filmMm.nominal);
+  const ends = filmMm.low === filmMm.high ? [] : [filmMm.low, filmMm.high].map((mm) => coveredAt(mm).covered);
+  const full = difference(dry, wet, ends);
+  const standing: Warning[] = deposit.standing
     ? [{ code: "standing_water", message: "the cover lies too level to drain: water stands on it", where }]
     : [];
-  const common = { phaseSpreadDb: wet.phaseSpreadDb, filmMm: film.meanMm, warnings: standing };
+  const common = { noun, phaseSpreadDb: wet.phaseSpreadDb, filmMm: filmMm.nominal, warnings: standing };
 
   const surface = behaviour(cover.surface, cover.state);
   const model: WetModel = cover.wetModel ?? (surface === "wetting" ? "film" : "merceret2000");
   const { form, coveredShare } = surfaceState({ wetting: cover.surface, care: cover.state });
-  if (model === "film" || (model === "beads" && form === "film")) {
-    return {
-      ...common,
-      ...full,
-      returnLossDb: wet.returnLossDb,
-      source: "water film, Nusselt flow; P.840-9",
-    };
+  if (noun !== "water" || model === "film" || (model === "beads" && form === "film")) {
+    return { ...common, ...full, returnLossDb: wet.returnLossDb, source: deposit.source };
   }
+
+  // A published figure knows no phase, so the film that caps it is taken over all phases.
+  const dryPass = abs(sheetBefore(mouth, dryLayers).transmission);
+  const filmDb = Math.max(0, amplitudeToDb(dryPass / abs(sheet.transmission)));
   if (model === "beads") {
     return {
       ...common,
-      ...beads(frequencyGHz, feed, cover, dryLayers, dry, wetness, coveredShare),
+      ...beads(mouth, dryLayers, dry, wetness, coveredShare, filmDb),
       source: "drops by covered share",
     };
   }
-
   const whole = full.mismatchDb.high + full.dissipationDb.high;
-  // A published figure knows no phase, so the film that caps it is taken over all phases.
-  const dryPass = abs(sheetOf(frequencyGHz, dryLayers).transmission);
-  const filmDb = Math.max(0, amplitudeToDb(dryPass / abs(wetSheet.transmission)));
-  const published = publishedLoss(model, frequencyGHz, wetness);
+  const published = publishedLoss(model, frequencyGHz, wetness, filmDb);
   const chosen = cover.wetModel !== undefined;
   const shed = Math.min(published.lossDb, filmDb);
   const nominal = chosen ? published.lossDb : surface === "mixed" ? (shed + filmDb) / 2 : shed;
@@ -109,60 +101,62 @@ export function waterOnCover(
       ? [
           {
             code: "wet_model_range",
-            message: `the ${model} model of water on it was ${published.range}`,
-            where,
+            message: `the ${model} model of water on them was ${published.range}`,
+            where: "covers",
           },
           ...standing,
         ]
       : standing,
   };
-}
 
-function filmOn(feed: Feed, cover: Cover, { rainRateMmPerH, windMPerS, temperatureC }: Wetness): WaterFilm {
-  return waterFilm({
-    shape: "plate",
-    sizeM: (cover.slopeMm ?? feed.apertureMm ?? USUAL_MOUTH_MM) / 1000,
-    tiltDeg: 90 - feed.facingDeg,
-    windRatio: windMPerS / DROP_FALL_M_PER_S,
-    rainRateMmPerH,
-    temperatureC,
-  });
-}
-
-function withWater(
-  frequencyGHz: number,
-  layers: readonly Layer[],
-  thicknessMm: number,
-  { temperatureC }: Wetness,
-) {
-  const water = waterLayer({ thicknessMm, frequencyGHz, temperatureC });
-  return sheetOf(frequencyGHz, [...layers, water]);
+  function surfaceOf({ cover: { domeRadiusMm, slopeMm } }: Mouthpiece) {
+    return domeRadiusMm === undefined
+      ? {
+          shape: "plate" as const,
+          sizeM: (slopeMm ?? mouthWidthMm(feed)) / 1000,
+          tiltDeg: 90 - feed.facingDeg,
+        }
+      : { shape: "dome" as const, sizeM: domeRadiusMm / 1000 };
+  }
 }
 
 function beads(
-  frequencyGHz: number,
-  feed: Feed,
-  cover: Cover,
+  mouth: Mouthpiece,
   dryLayers: readonly Layer[],
   dry: CoveredFeed,
-  wetness: Wetness,
+  { temperatureC }: Wetness,
   coveredShare: Bounded,
+  filmDb: number,
 ) {
+  const { frequencyGHz } = mouth;
+  const drops = waterLayer({
+    thicknessMm: BEAD_HEIGHT_MM,
+    frequencyGHz,
+    temperatureC: Math.max(0, temperatureC),
+  });
   const sheet = beadedSheet({
-    dry: sheetOf(frequencyGHz, dryLayers),
-    wet: withWater(frequencyGHz, dryLayers, BEAD_HEIGHT_MM, wetness),
+    dry: sheetBefore(mouth, dryLayers),
+    wet: sheetBefore(mouth, [...dryLayers, drops]),
     coveredShare,
   });
-  const wet = cascade(frequencyGHz, feed, cover, sheet);
-  const { mismatchDb, dissipationDb } = difference(dry, wet);
+  const wet = cascade(mouth, sheet);
+  // Drops hold no more water than the rain brings: light rain on a repellent surface never costs more than its film.
+  const scarce = sheet.excessDb.nominal > filmDb ? filmDb / sheet.excessDb.nominal : 1;
+  const times = ({ low, nominal, high }: Bounded) => ({
+    low: low * scarce,
+    nominal: nominal * scarce,
+    high: high * scarce,
+  });
+  const { mismatchDb, dissipationDb } = difference(dry, wet, []);
   const { low, nominal, high } = sheet.excessDb;
-  const spread = { low: low - nominal, high: high - nominal };
   return {
-    mismatchDb,
-    dissipationDb: bounded(
-      Math.max(0, dissipationDb.nominal + spread.low),
-      dissipationDb.nominal,
-      dissipationDb.nominal + spread.high,
+    mismatchDb: times(mismatchDb),
+    dissipationDb: times(
+      bounded(
+        Math.max(0, dissipationDb.nominal + low - nominal),
+        dissipationDb.nominal,
+        dissipationDb.nominal + high - nominal,
+      ),
     ),
     phaseSpreadDb: wet.phaseSpreadDb,
     returnLossDb: wet.returnLossDb,
@@ -170,45 +164,44 @@ function beads(
   };
 }
 
-function publishedLoss(model: Exclude<WetModel, "film" | "beads">, frequencyGHz: number, wetness: Wetness) {
-  const { rainRateMmPerH } = wetness;
+function publishedLoss(
+  model: Exclude<WetModel, "film" | "beads">,
+  frequencyGHz: number,
+  { rainRateMmPerH, driedForMin }: Wetness,
+  filmDb: number,
+) {
   const rain = { frequencyGHz, rainRateMmPerH };
   const { lossDb, ends, extrapolated } = wetAntennaLoss(
     model === "merceret2000" ? { model, surface: "hydrophobic", ...rain } : { model, ...rain },
   );
   const { source, range } = wetAntennaModels.find(({ name }) => name === model)!;
   const [low, high] = range.frequencyGHz;
+  const oneEnd = ends === "both" ? lossDb / 2 : lossDb;
   return {
-    lossDb: ends === "both" ? lossDb / 2 : lossDb,
+    // The models know falling rain; dew, or what a shower left, is taken as a film shed by that surface.
+    lossDb: rainRateMmPerH > 0 && driedForMin === 0 ? oneEnd : filmDb / REPELLENT_GAIN,
     source,
     extrapolated,
     range: `fitted at ${low === high ? low : `${low} to ${high}`} GHz, carried on to ${frequencyGHz} GHz`,
   };
 }
 
-export function sheetOf(frequencyGHz: number, layers: readonly Layer[]): SheetScattering {
-  return layeredSheet({ frequencyGHz, incidenceDeg: 0, polarization: "te", layers });
-}
-
-export function cascade(frequencyGHz: number, feed: Feed, cover: Cover, sheet: SheetScattering): CoveredFeed {
-  return coveredFeed({
-    feedReturnLossDb: feed.returnLossDb,
-    sheet,
-    phaseDeg: feed.phaseDeg,
-    gapMm: cover.gapMm,
-    frequencyGHz,
-  });
-}
-
 /** Wet less dry, bound by bound, so that the bounds of dry and water add up to those of the wet whole. */
-function difference(dry: CoveredFeed, wet: CoveredFeed): Pick<WaterCost, "mismatchDb" | "dissipationDb"> {
-  const less = (a: Bounded, b: Bounded) => {
-    const nominal = a.nominal - b.nominal;
-    const ends = [a.low - b.low, a.high - b.high];
-    return bounded(Math.min(...ends), nominal, Math.max(...ends));
+function difference(
+  dry: CoveredFeed,
+  wet: CoveredFeed,
+  /** The wet feed at the least and the most water. */
+  ends: readonly CoveredFeed[],
+): Pick<WaterCost, "mismatchDb" | "dissipationDb"> {
+  const less = (part: "mismatchLossDb" | "dissipationDb" | "sidewaysLossDb") => {
+    const all = [wet, ...ends].flatMap((one) => [
+      one[part].low - dry[part].low,
+      one[part].high - dry[part].high,
+    ]);
+    return bounded(Math.min(...all), wet[part].nominal - dry[part].nominal, Math.max(...all));
   };
   return {
-    mismatchDb: less(wet.mismatchLossDb, dry.mismatchLossDb),
-    dissipationDb: less(wet.dissipationDb, dry.dissipationDb),
+    mismatchDb: less("mismatchLossDb"),
+    dissipationDb: plus(less("dissipationDb"), less("sidewaysLossDb")),
   };
 }

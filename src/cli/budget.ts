@@ -8,9 +8,9 @@ import {
   marginJson,
   marginReport,
   marginReportText,
-  nearest,
   prepare,
 } from "../index.ts";
+import { knownName } from "./knownName.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { paintFor, print, UserError } from "./terminal.ts";
 
@@ -63,15 +63,15 @@ export const budgetCommand = new Command("budget")
 function choose(link: Link, { feed, cover, weather, mode }: BudgetOptions): Case[] {
   const { transmitter, receiver } = link.ends;
   if (feed !== undefined) {
-    known("feed", feed, Object.keys(link.scenario.feeds));
+    knownName("feed", feed, Object.keys(link.scenario.feeds));
     for (const [end, feeds] of Object.entries({ transmitter, receiver })) {
       if (!(feed in feeds))
         throw new UserError(`feed "${feed}" does not suit the ${end}'s dish, or has no gain by itself`);
     }
   }
-  if (cover !== undefined) known("cover", cover, Object.keys(link.scenario.covers));
-  if (weather !== undefined) known("weather", weather, Object.keys(link.weathers));
-  if (mode !== undefined) known("mode", mode, Object.keys(link.modes));
+  if (cover !== undefined) knownName("cover", cover, Object.keys(link.scenario.covers));
+  if (weather !== undefined) knownName("weather", weather, Object.keys(link.weathers));
+  if (mode !== undefined) knownName("mode", mode, Object.keys(link.modes));
   const all = cases(link)
     .filter((one) => weather === undefined || one.weather === weather)
     .filter((one) => cover === undefined || (one.transmitter.cover === cover && one.receiver.cover === cover))
@@ -83,11 +83,4 @@ function choose(link: Link, { feed, cover, weather, mode }: BudgetOptions): Case
   if (mode === undefined) return all;
   const first = all[0]?.mode;
   return all.filter((one) => one.mode === first).map((one) => ({ ...one, mode }));
-}
-
-function known(noun: string, name: string, names: readonly string[]): void {
-  if (names.includes(name)) return;
-  const meant = nearest(name, names);
-  const hint = meant === undefined ? "" : ` (did you mean ${meant}?)`;
-  throw new UserError(`no ${noun} "${name}" in the scenario; expected one of ${names.join(", ")}${hint}`);
 }

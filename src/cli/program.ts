@@ -1,10 +1,12 @@
 import { Command } from "commander";
 import { budgetCommand } from "./budget.ts";
 import { checkCommand } from "./check.ts";
+import { coversCommand } from "./covers.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
 import { schemaCommand } from "./schema.ts";
 import { UserError } from "./terminal.ts";
+import { thicknessCommand } from "./thickness.ts";
 
 /** Exit status of bad input and of a command line that makes no sense. */
 const BAD_INPUT = 2;
@@ -20,7 +22,15 @@ const program = new Command("oilskin")
   .description("Will this microwave path close, dry and in rain, and what does the cover on the feed cost?")
   .version("0.1.0")
   .showHelpAfterError("(oilskin --help shows the commands)");
-for (const command of [budgetCommand, checkCommand, newCommand, materialsCommand, schemaCommand]) {
+for (const command of [
+  budgetCommand,
+  coversCommand,
+  checkCommand,
+  newCommand,
+  thicknessCommand,
+  materialsCommand,
+  schemaCommand,
+]) {
   program.addCommand(command.showHelpAfterError(`(oilskin ${command.name()} --help shows what it takes)`));
 }
 for (const command of [program, ...program.commands]) {

@@ -14,3 +14,7 @@ export function exactly(value: number): Bounded {
 export function bounded(low: number, nominal: number, high: number): Bounded {
   return { nominal, low: Math.min(low, nominal), high: Math.max(high, nominal) };
 }
+
+export function plus(a: Bounded, b: Bounded): Bounded {
+  return { low: a.low + b.low, nominal: a.nominal + b.nominal, high: a.high + b.high };
+}

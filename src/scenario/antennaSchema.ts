@@ -117,6 +117,10 @@ export const dishSchema = group(
     efficiency: quantity("percent", { about: "aperture efficiency", range: [1, 100] }).optional(),
     gain: uncertain("gainDbi", { about: "gain of dish and feed together", range: [5, 75] }).optional(),
     surface_rms: quantity("thicknessMm", { about: "rms error of the surface", range: [0, 50] }).optional(),
+    other_losses: uncertain("levelDb", {
+      about: "what a real dish loses beside: phase of the feed, struts, ohmic loss",
+      range: [0, 10],
+    }).optional(),
     blockage: quantity("lengthM", {
       about: "diameter of what stands before the dish",
       range: [0, 10],
@@ -150,6 +154,7 @@ export const dishSchema = group(
     efficiency: efficiency && efficiency / 100,
     gainDbi: gain,
     surfaceRmsMm: dish.surface_rms ?? 0,
+    otherLossesDb: dish.other_losses ?? { value: 0 },
     blockageM: dish.blockage ?? 0,
     pointingErrorDeg: dish.pointing_error ?? 0,
     pointingOffsetDeg: dish.pointing_offset ?? 0,

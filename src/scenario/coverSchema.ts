@@ -1,6 +1,7 @@
 import * as z from "zod";
 import { type Bounded, exactly } from "../cover/bounded.ts";
 import { findMaterial, materials } from "../cover/materials.ts";
+import { mixture } from "../cover/mixture.ts";
 import { wetModels } from "../cover/wetModels.ts";
 import { group, oneOf, text } from "./fields.ts";
 import { quantity, uncertain } from "./quantityField.ts";
@@ -16,11 +17,15 @@ const layer = group(
   {
     material: text("a material of `oilskin materials`, air, or a name of your own with its permittivity"),
     thickness: quantity("thicknessMm", { about: "thickness of the layer", range: [0, 1000] }),
+    fill: quantity("percent", {
+      about: "share of solid material, the rest being air",
+      range: [0.1, 100],
+    }).optional(),
     permittivity: uncertain("ratio", { about: "relative permittivity", range: [1, 200] }).optional(),
     loss_tangent: uncertain("ratio", { about: "loss tangent", range: [0, 10] }).optional(),
   },
   "a layer: material and thickness",
-).transform(({ material, thickness: thicknessMm, permittivity, loss_tangent }, context): CoverLayer => {
+).transform(({ material, thickness: thicknessMm, fill, permittivity, loss_tangent }, context): CoverLayer => {
   const known = material === "air" ? undefined : findMaterial(material);
   const eps = permittivity && spreadOf(permittivity, 1);
   const loss = loss_tangent && spreadOf(loss_tangent, 0);
@@ -34,13 +39,29 @@ const layer = group(
     context.addIssue({ code: "custom", message, path: ["material"], input: material });
     return z.NEVER;
   }
-  return {
-    material: known?.name ?? material,
-    thicknessMm,
+  const solid = {
     permittivity: eps ?? known!.permittivity,
     lossTangent: loss ?? known?.lossTangent ?? exactly(0),
   };
+  return {
+    material: known?.name ?? material,
+    thicknessMm,
+    ...(fill === undefined ? solid : filled(solid, fill / 100)),
+  };
 });
+
+/** Foam, cloth or printed infill: the solid and the air in it, bound by bound. */
+function filled(solid: Pick<CoverLayer, "permittivity" | "lossTangent">, solidShare: number) {
+  const at = (figure: keyof Bounded) =>
+    mixture({ permittivity: solid.permittivity[figure], lossTangent: solid.lossTangent[figure], solidShare });
+  const [low, nominal, high] = [at("low"), at("nominal"), at("high")];
+  const of = (part: "permittivity" | "lossTangent"): Bounded => ({
+    low: low[part],
+    nominal: nominal[part],
+    high: high[part],
+  });
+  return { permittivity: of("permittivity"), lossTangent: of("lossTangent") };
+}
 
 const measured = group(
   {
@@ -69,6 +90,10 @@ export const coverSchema = group(
       about: "distance from the mouth to the cover",
       range: [0, 1000],
     }).optional(),
+    dome_radius: quantity("thicknessMm", {
+      about: "radius of a dome bulging outwards",
+      range: [5, 10000],
+    }).optional(),
     slope_length: quantity("thicknessMm", {
       about: "length down which water runs",
       range: [1, 10000],
@@ -84,6 +109,7 @@ export const coverSchema = group(
     wet_model: wetModel,
     gap: gapMm = 0,
     slope_length: slopeMm,
+    dome_radius: domeRadiusMm,
   }): Cover => {
     const outermost = layers.at(-1);
     return {
@@ -97,6 +123,7 @@ export const coverSchema = group(
       wetModel,
       gapMm,
       slopeMm,
+      domeRadiusMm,
     };
   },
 );

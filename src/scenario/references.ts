@@ -49,6 +49,11 @@ export function danglingNames(raw: unknown): Fault[] {
   for (const side of ["transmitter", "receiver"]) {
     const end = groupAt(raw, side);
     for (const noun of ["feed", "dish", "cover"] as const) lookUp(noun, end[noun], [side, noun]);
+    lookUp("cover", end["dish_cover"], [side, "dish_cover"]);
+    if (hasAny(end, "dish_cover") && !hasAny(end, "dish")) {
+      const message = `a dish_cover without a dish; a cover on the ${side}'s feed goes under cover`;
+      faults.push({ code: "no_dish", message, path: [side, "dish_cover"] });
+    }
     faults.push(...unsuitedFeed(side, end, feeds, dishes));
   }
   const { mode } = groupAt(raw, "receiver");

@@ -18,6 +18,7 @@ const endShape = {
   feed: text("the name of a feed"),
   dish: text("the name of a dish; without one the feed radiates by itself").optional(),
   cover: text("the name of the cover on the feed's mouth").optional(),
+  dish_cover: text("the name of a cover over the whole dish").optional(),
   line_loss: uncertain("levelDb", { about: "loss of line and joints", range: [0, 60] }).optional(),
 };
 
@@ -25,13 +26,15 @@ const end = ({
   feed,
   dish,
   cover = BARE,
+  dish_cover: dishCover,
   line_loss: lineLossDb = { value: 0 },
 }: {
   feed: string;
   dish?: string | undefined;
   cover?: string | undefined;
+  dish_cover?: string | undefined;
   line_loss?: { value: number; sigma?: number | undefined } | undefined;
-}) => ({ feed, dish, cover, lineLossDb });
+}) => ({ feed, dish, cover, dishCover, lineLossDb });
 
 const transmitter = group(
   { power: uncertain("powerDbm", { about: "power at the transmitter", range: [-60, 70] }), ...endShape },

@@ -38,6 +38,8 @@ export interface End {
   readonly feed: string;
   /** The cover on the feed's mouth. */
   readonly cover: string;
+  /** A cover over the whole dish, beside that on the feed. */
+  readonly dishCover?: string | undefined;
   readonly dish?: string | undefined;
   readonly lineLossDb: Uncertain;
 }
@@ -87,6 +89,8 @@ export interface Dish {
   readonly efficiency?: number | undefined;
   readonly gainDbi?: Uncertain | undefined;
   readonly surfaceRmsMm: number;
+  /** What a real dish loses beside: phase of the feed, struts, ohmic loss [dB]. */
+  readonly otherLossesDb: Uncertain;
   readonly blockageM: number;
   /** Known standing offset of the aim [deg]. */
   readonly pointingOffsetDeg: number;
@@ -120,6 +124,8 @@ export interface Cover {
   readonly gapMm: number;
   /** Length down which water runs [mm]; the feed's mouth where not given. */
   readonly slopeMm?: number | undefined;
+  /** Radius of a spherical cap bulging outwards [mm]; undefined for a flat sheet. */
+  readonly domeRadiusMm?: number | undefined;
 }
 
 export interface Weather {
@@ -139,6 +145,21 @@ export interface Weather {
   readonly wets: readonly EndName[];
   /** Rain rate at which the covers got their water, where it is not the rain now on the path [mm/h]. */
   readonly coversWetAsAtMmPerH?: number | undefined;
+  /** Time since the rain that wetted the covers stopped [min]. */
+  readonly driedForMin: number;
+  /** Film of dew on the covers [mm]. */
+  readonly dewMm: Uncertain;
+  /** Clear ice on the covers [mm]. */
+  readonly iceMm: number;
+  readonly snow?: Snow | undefined;
+}
+
+/** Snow that lies on the covers. */
+export interface Snow {
+  readonly depthMm: number;
+  readonly dryDensityGcm3: number;
+  /** Liquid water by volume [%]. */
+  readonly wetnessPercent: number;
 }
 
 export interface Decision {

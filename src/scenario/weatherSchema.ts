@@ -7,8 +7,27 @@ import { instead } from "./wording.ts";
 /** Wind that drives rain against an upright cover where the scenario names none [m/s]: common practice, no source. */
 const RAINY_WIND_M_PER_S = 4;
 
+/** Density of snow where the scenario names none: settled snow, common practice, no source [g/m3]. */
+const USUAL_SNOW_G_PER_M3 = 300_000;
+
 const rate = (about: string) => quantity("rainRateMmPerH", { about, range: [0, 400] });
 const stretch = (about: string) => quantity("distanceKm", { about, range: [0.01, 1000] });
+
+const snow = group(
+  {
+    depth: quantity("thicknessMm", { about: "depth of the snow", range: [0.1, 2000] }),
+    density: quantity("densityGm3", {
+      about: "density of the snow when dry",
+      range: [20_000, 916_000],
+    }).optional(),
+    wetness: quantity("percent", { about: "liquid water in it by volume", range: [0, 30] }).optional(),
+  },
+  "snow on the covers: depth, density, wetness",
+).transform(({ depth: depthMm, density = USUAL_SNOW_G_PER_M3, wetness: wetnessPercent = 0 }) => ({
+  depthMm,
+  dryDensityGcm3: density / 1e6,
+  wetnessPercent,
+}));
 
 /** One weather to judge the path in; `{}` is dry, of the reference atmosphere. */
 export const weatherSchema = group(
@@ -34,6 +53,16 @@ export const weatherSchema = group(
       .meta({ description: "ends whose covers the rain wets; both where not given" })
       .optional(),
     covers_wet_as_at: rate("rain rate that wetted the covers").optional(),
+    dried_for: quantity("durationMin", {
+      about: "time since that rain stopped",
+      range: [0, 1440],
+    }).optional(),
+    dew: uncertain("thicknessMm", {
+      about: "film of dew on the covers, 0.1 mm on a clear night",
+      range: [0, 1],
+    }).optional(),
+    ice: quantity("thicknessMm", { about: "clear ice on the covers", range: [0, 200] }).optional(),
+    snow: snow.optional(),
   },
   "a weather: rain, fog, temperature, what it wets; {} is dry",
   (has) => {
@@ -54,5 +83,9 @@ export const weatherSchema = group(
     windMPerS: weather.wind ?? RAINY_WIND_M_PER_S,
     wets: weather.wets ?? ["transmitter", "receiver"],
     coversWetAsAtMmPerH: weather.covers_wet_as_at,
+    driedForMin: weather.dried_for ?? 0,
+    dewMm: weather.dew ?? { value: 0 },
+    iceMm: weather.ice ?? 0,
+    snow: weather.snow,
   };
 });

@@ -1,6 +1,7 @@
 import { beforeEach, describe, expect, it, vi } from "vitest";
+import { cases } from "../../src/budget/cases.ts";
 import { evaluate } from "../../src/budget/evaluate.ts";
-import { cases, prepare, withWeather } from "../../src/budget/prepare.ts";
+import { prepare, withWeather } from "../../src/budget/prepare.ts";
 import { layeredSheet } from "../../src/cover/layeredSheet.ts";
 import { caseOf, coverOf, layerOf, scenarioOf, weatherOf } from "./scenarios.ts";
 

@@ -3,7 +3,7 @@ import { describe, expect, it } from "vitest";
 import { coverNoise } from "../../src/cover/coverNoise.ts";
 import { layeredSheet } from "../../src/cover/layeredSheet.ts";
 import { noiseTemperatureK, systemTemperatureK } from "../../src/receiver/noise.ts";
-import { budgetOf, coverOf, entryOf, feedOf, layerOf, scenarioOf, weatherOf } from "./scenarios.ts";
+import { budgetOf, coverOf, dishOf, entryOf, feedOf, layerOf, scenarioOf, weatherOf } from "./scenarios.ts";
 
 /** Matched, bare feeds; the receiver as given. */
 function matched({ lineDb = 0, figureDb = 1.1, antennaK = 200, rain = 0, fog = 0 }) {
@@ -100,7 +100,8 @@ describe("a covered mouth ahead of a receiver", () => {
               antennaTemperatureK: { value: skyK },
             },
             feeds: {
-              stub: feedOf({ returnLossDb, phaseDeg }),
+              // A mouth so wide that it collects all that the sheet sends back, as the reference has it.
+              stub: feedOf({ returnLossDb, phaseDeg, apertureMm: 5000 }),
               perfect: feedOf({ returnLossDb: Number.POSITIVE_INFINITY }),
             },
             covers: {
@@ -110,6 +111,8 @@ describe("a covered mouth ahead of a receiver", () => {
                 gapMm,
               }),
             },
+            // Of a dish whose shape is not known the sheet is met straight on, as the reference has it.
+            dish: { tripod: dishOf({ focalRatio: undefined, efficiency: 0.55 }) },
             weather: { dry: weatherOf({ temperatureC }) },
           });
           const covered = budgetOf(scenario);

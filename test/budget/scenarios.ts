@@ -35,11 +35,13 @@ export function coverOf(change: Partial<Cover> = {}): Cover {
 }
 
 export function weatherOf(change: Partial<Weather> = {}): Weather {
-  return { rainMmPerH: { value: 0 }, fogGPerM3: 0, windMPerS: 4, wets: BOTH, ...change };
+  const dry = { rainMmPerH: { value: 0 }, fogGPerM3: 0, driedForMin: 0, dewMm: { value: 0 }, iceMm: 0 };
+  return { ...dry, windMPerS: 4, wets: BOTH, ...change };
 }
 
 export function feedOf(change: Partial<Feed> = {}): Feed {
-  return { returnLossDb: 14, edgeTaperDb: 10, apertureMm: 46, facingDeg: 0, ...change };
+  // Two wavelengths wide at 10 GHz, so that a plane wave may be taken.
+  return { returnLossDb: 14, edgeTaperDb: 10, apertureMm: 60, facingDeg: 0, ...change };
 }
 
 export function dishOf(change: Partial<Dish> = {}): Dish {
@@ -47,6 +49,7 @@ export function dishOf(change: Partial<Dish> = {}): Dish {
     diameterM: 0.6,
     focalRatio: 0.4,
     surfaceRmsMm: 0.4,
+    otherLossesDb: { value: 0 },
     blockageM: 0.06,
     pointingOffsetDeg: 0,
     pointingErrorDeg: 0.5,
@@ -149,6 +152,7 @@ export const anyLayeredCover: fc.Arbitrary<Cover> = fc.record({
   layers: fc.array(anyLayer, { minLength: 1, maxLength: 3 }),
   gapMm: real(0, 20),
   slopeMm: maybe(real(10, 300)),
+  domeRadiusMm: maybe(real(10, 300)),
 });
 
 /** Layers, readings, both or neither. */
@@ -183,6 +187,12 @@ export const anyWeather: fc.Arbitrary<Weather> = fc.record({
   windMPerS: real(0, 15),
   wets: fc.subarray([...BOTH]),
   coversWetAsAtMmPerH: maybe(real(0, 150)),
+  driedForMin: fc.oneof(fc.constant(0), real(0, 60)),
+  dewMm: fc.oneof(fc.constant(0), real(0, 0.3)).map((value) => ({ value, sigma: value / 3 })),
+  iceMm: fc.oneof(fc.constant(0), real(0, 10)),
+  snow: maybe(
+    fc.record({ depthMm: real(1, 50), dryDensityGcm3: real(0.05, 0.6), wetnessPercent: real(0, 12) }),
+  ),
 });
 
 /** Two ends of different feeds, covers and dishes on a path of some 1 to 200 km, in the weather "now". */

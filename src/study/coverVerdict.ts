@@ -1,0 +1,156 @@
+import { evaluate } from "../budget/evaluate.ts";
+import type { Budget, Case, CoverState, Link, PathGeometry, Verdict, Warning } from "../budget/types.ts";
+import { type Bounded, plus } from "../cover/bounded.ts";
+import { type Fixing, fixingOf } from "../cover/fixing.ts";
+import { findMaterial, type Material } from "../cover/materials.ts";
+import { powerToDb } from "../numeric/decibels.ts";
+import type { Cover } from "../scenario/types.ts";
+import { type BreakEven, breakEven, rainiest } from "./breakEven.ts";
+
+/** Where a cover sits while it is judged. */
+export type Placing = "both" | "transmitter" | "receiver";
+export const placings: readonly Placing[] = ["both", "transmitter", "receiver"];
+
+/** One cover in one weather at one or both ends. */
+export interface CoverRow {
+  readonly weather: string;
+  readonly placing: Placing;
+  /** What the cover takes dry, by mismatch and heat, and what water adds; of both ends together where both are covered [dB]. */
+  readonly dryCostDb: Bounded;
+  readonly waterCostDb: Bounded;
+  /** Rise of the system's noise temperature against bare [K], and what that costs in signal to noise [dB]. */
+  readonly noiseAddedK: number;
+  readonly noiseCostDb: number;
+  /** Bare margin less covered margin [dB]: all of the above. */
+  readonly costDb: number;
+  readonly transmitter: CoverState;
+  readonly receiver: CoverState;
+  readonly marginDb: number;
+  readonly marginSigmaDb: number;
+  readonly verdict: Verdict;
+  readonly bareMarginDb: number;
+  readonly bareVerdict: Verdict;
+}
+
+/** What a layer's material is known to do outdoors; undefined for a material of the user's own. */
+export interface Durability {
+  readonly name: string;
+  readonly material: Material | undefined;
+  readonly fixing: Fixing;
+}
+
+export interface CoverJudgement {
+  readonly cover: string;
+  readonly rows: readonly CoverRow[];
+  /** The layers, feed side first. */
+  readonly durability: readonly Durability[];
+  /** Repeatability below which its dry cost cannot be told from nothing, both ends together [dB]. */
+  readonly repeatabilityDb: number;
+  readonly breakEven: BreakEven;
+}
+
+export interface CoverVerdict {
+  readonly title: string;
+  readonly frequencyGHz: number;
+  readonly path: PathGeometry;
+  readonly mode: string;
+  readonly weathers: readonly string[];
+  /** The asked weather that leaves a bare path the least. */
+  readonly worstWeather: string;
+  /** The weather that break-even rates are sought in. */
+  readonly rainWeather: string;
+  /** Best first, by the margin left in the worst weather with the cover at both ends; bare among them. */
+  readonly covers: readonly CoverJudgement[];
+  readonly warnings: readonly Warning[];
+}
+
+/** A with/without test in free air repeats to about this [dB]: common practice, no source. */
+const BENCH_REPEATABILITY_DB = 0.05;
+
+/**
+ * Which cover: every cover of the scenario in every asked weather, at one end and at both, against bare mouths.
+ *
+ * @param mode      name of a mode of the link
+ * @param weathers  names of weathers of the link, at least one
+ */
+export function coverVerdict(link: Link, mode: string, weathers: readonly string[]): CoverVerdict {
+  const { scenario, path } = link;
+  const warnings = new Map<string, Warning>();
+  const budgetOf = (weather: string, placing: Placing, cover: string): Budget => {
+    const budget = evaluate(link, caseOf(link, weather, placing, cover, mode));
+    for (const warning of budget.warnings)
+      warnings.set(`${warning.code} ${warning.where} ${warning.message}`, warning);
+    return budget;
+  };
+  const bare = new Map(weathers.map((weather) => [weather, budgetOf(weather, "both", "bare")]));
+  const worstWeather = weathers.reduce((a, b) => (bare.get(b)!.marginDb < bare.get(a)!.marginDb ? b : a));
+  const rainWeather = rainiest(link, weathers);
+
+  const covers = Object.entries(scenario.covers).map(([name, cover]): CoverJudgement => {
+    const rows = weathers.flatMap((weather) =>
+      placings.map((placing) =>
+        rowOf(weather, placing, budgetOf(weather, placing, name), bare.get(weather)!),
+      ),
+    );
+    return {
+      cover: name,
+      rows,
+      durability: cover.layers
+        .filter(({ material }) => material !== "air")
+        .map(({ material }) => durabilityOf(material)),
+      repeatabilityDb: repeatabilityOf(cover),
+      breakEven: breakEven(link, caseOf(link, rainWeather, "both", name, mode)),
+    };
+  });
+  const left = ({ rows }: CoverJudgement) =>
+    rows.find(({ weather, placing }) => weather === worstWeather && placing === "both")!.marginDb;
+  return {
+    title: scenario.title,
+    frequencyGHz: scenario.frequencyGHz,
+    path,
+    mode,
+    weathers,
+    worstWeather,
+    rainWeather,
+    covers: covers.toSorted((a, b) => left(b) - left(a)),
+    warnings: [...warnings.values()],
+  };
+}
+
+function caseOf({ scenario }: Link, weather: string, placing: Placing, cover: string, mode: string): Case {
+  const at = (end: "transmitter" | "receiver") => ({
+    feed: scenario[end].feed,
+    cover: placing === "both" || placing === end ? cover : "bare",
+  });
+  return { weather, mode, transmitter: at("transmitter"), receiver: at("receiver") };
+}
+
+function rowOf(weather: string, placing: Placing, budget: Budget, bare: Budget): CoverRow {
+  const { transmitterCover: transmitter, receiverCover: receiver } = budget;
+  return {
+    weather,
+    placing,
+    dryCostDb: plus(transmitter.dryCostDb, receiver.dryCostDb),
+    waterCostDb: plus(transmitter.waterCostDb, receiver.waterCostDb),
+    noiseAddedK: budget.systemTemperatureK - bare.systemTemperatureK,
+    noiseCostDb: powerToDb(budget.systemTemperatureK / bare.systemTemperatureK),
+    costDb: bare.marginDb - budget.marginDb,
+    transmitter,
+    receiver,
+    marginDb: budget.marginDb,
+    marginSigmaDb: budget.marginSigmaDb,
+    verdict: budget.verdict,
+    bareMarginDb: bare.marginDb,
+    bareVerdict: bare.verdict,
+  };
+}
+
+function durabilityOf(name: string): Durability {
+  return { name, material: findMaterial(name), fixing: fixingOf(name) };
+}
+
+/** Twice the standard deviation of a reading, or the bench's usual; two ends add by root-sum-square. */
+function repeatabilityOf({ measured }: Cover): number {
+  const oneEnd = Math.max(BENCH_REPEATABILITY_DB, 2 * (measured?.insertionLossDb.sigma ?? 0));
+  return Math.SQRT2 * oneEnd;
+}
