@@ -1,7 +1,43 @@
 import { Command } from "commander";
-import { materials, materialsText } from "../index.ts";
-import { paintFor, print } from "./terminal.ts";
+import {
+  findMaterial,
+  type Material,
+  materials,
+  materialsText,
+  materialText,
+  materialThickness,
+  nearest,
+} from "../index.ts";
+import { paintFor, print, UserError } from "./terminal.ts";
+
+/** Where and for what loss the thicknesses of a material are told. */
+const ORIENTATION = { frequencyGHz: 10.368, limitDb: 0.1 };
 
 export const materialsCommand = new Command("materials")
-  .description("list the cover materials with their figures, durability and source")
-  .action(async () => print(await materialsText(materials, paintFor(process.stdout))));
+  .description("list the cover materials with their figures, durability and source, or tell all of one")
+  .argument("[name...]", "material, in full")
+  .action(async (words: string[]) => {
+    const paint = paintFor(process.stdout);
+    if (words.length === 0) {
+      print(await materialsText(materials, paint));
+      return;
+    }
+    const material = known(words.join(" "));
+    print(materialText(material, materialThickness(material, ORIENTATION), ORIENTATION, paint));
+  });
+
+function known(name: string): Material {
+  const material = findMaterial(name);
+  if (material !== undefined) return material;
+  const part = name.trim().toLowerCase();
+  const alike = materials.filter((one) =>
+    [one.name, ...one.aliases].some((word) => part !== "" && word.toLowerCase().includes(part)),
+  );
+  const close = nearest(
+    name,
+    materials.flatMap((one) => [one.name, ...one.aliases]),
+  );
+  const meant = alike.length > 0 ? alike.map((one) => one.name) : close === undefined ? [] : [close];
+  const hint = meant.length > 0 ? `did you mean ${meant.join(", ")}?` : "`oilskin materials` lists them";
+  throw new UserError(`no material "${name}" (${hint})`);
+}

@@ -1,14 +1,9 @@
-import type { Bounded } from "../cover/bounded.ts";
-import type { Material } from "../cover/materials.ts";
+import { type Material, uvClasses } from "../cover/materials.ts";
 import { grid } from "./grid.ts";
+import { heatWords, spread, sunWords, waterWords } from "./materialWords.ts";
 import { type Paint, paragraph, plain } from "./words.ts";
 
-/** Permittivity or loss tangent with its published spread. */
-function spread({ nominal, low, high }: Bounded): string {
-  return low === high ? String(nominal) : `${nominal} (${low}-${high})`;
-}
-
-/** All materials in a table, then where their figures come from. */
+/** All materials in a table, then each one's life outdoors and where its figures come from. */
 export async function materialsText(materials: readonly Material[], paint: Paint = plain): Promise<string> {
   const rows = materials.map((material) => [
     material.name,
@@ -27,19 +22,22 @@ export async function materialsText(materials: readonly Material[], paint: Paint
       { align: "left", width: 8 },
     ],
   );
-  const sources = materials.map(({ name, source, confidence }) =>
-    paragraph(`${name}: ${source} (${confidence})`, "  "),
-  );
+  const classes = Object.entries(uvClasses).map(([letter, words]) => `${letter} ${words}`);
   return `${[
     paint("strong", "Cover materials, value (low-high)"),
     table,
-    [
-      paragraph(
-        "A years bare; B years if stabilised or pigmented; C one or two seasons; D needs a skin",
-        "sun:   ",
-      ),
-      paragraph("how it lies on a clean new surface; dirt and weather take it towards wetting", "water: "),
-    ].join("\n"),
-    [paint("strong", "Sources"), ...sources].join("\n"),
+    `${paragraph(`sun: ${classes.join("; ")}`)}\n` +
+      paragraph("water: how it lies on a clean new surface; dirt and weather take it towards wetting"),
+    [paint("strong", "Outdoors, and where the figures come from"), ...materials.map(lifeText)].join("\n"),
+    paragraph("`oilskin materials NAME` tells all of one: temperatures, notes, thicknesses, how to fix it."),
   ].join("\n\n")}\n`;
+}
+
+function lifeText(material: Material): string {
+  const { name, source, confidence, weatherSource } = material;
+  const life =
+    weatherSource === undefined
+      ? ""
+      : `${sunWords(material)}; ${waterWords(material)}; ${heatWords(material)} (${weatherSource}). `;
+  return paragraph(`${name}: ${life}Figures: ${source} (${confidence}).`, "  ");
 }
