@@ -4,5 +4,6 @@
  *     npm run build && npm run speed
  */
 import { coldStart } from "./coldStart.mjs";
+import { sheetRate } from "./sheets.mjs";
 
-for (const measure of [coldStart]) process.stdout.write(`${measure()}\n`);
+for (const measure of [coldStart, sheetRate]) process.stdout.write(`${measure()}\n`);
