@@ -1,11 +1,12 @@
 import { readFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import { join } from "node:path";
-import { constants, Script } from "node:vm";
+import { Script } from "node:vm";
 
 /**
  * Runs the bundled program from V8's code cache, which is written when the package is built: reading it takes
- * half the time of compiling. V8 refuses the cache of another version, and then compiles.
+ * half the time of compiling. V8 refuses the cache of another version, and then compiles. Code from a cache
+ * cannot `import()`, so the bundler turns what the program loads late into `require()`.
  *
  * @param folder  where program.cjs and program.cache lie
  * @returns the compiled script, from which the cache can be written
@@ -15,11 +16,7 @@ export function runProgram(folder: string): Script {
   const cachedData = bytesOf(cacheFile(folder));
   // The bundle is pure ASCII, and already wrapped as a function of a module's arguments.
   const source = readFileSync(filename, "latin1");
-  const script = new Script(source, {
-    filename,
-    ...(cachedData && { cachedData }),
-    importModuleDynamically: constants.USE_MAIN_CONTEXT_DEFAULT_LOADER,
-  });
+  const script = new Script(source, { filename, ...(cachedData && { cachedData }) });
   const module = { exports: {} };
   script.runInThisContext()(createRequire(filename), module, module.exports);
   return script;
