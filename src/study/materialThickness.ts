@@ -2,6 +2,7 @@ import { type Layer, layeredSheet } from "../cover/layeredSheet.ts";
 import type { Material } from "../cover/materials.ts";
 import { wavelengthM } from "../numeric/constants.ts";
 import { reach } from "./reach.ts";
+import { MOST_WAVELENGTHS } from "./thicknessLimits.ts";
 
 /** A thickness by the spread of its material: `thin` is the least, where both figures lie high. */
 export interface ThicknessSpread {
@@ -17,9 +18,8 @@ export interface MaterialThickness {
   readonly thinLimitMm: ThicknessSpread;
 }
 
-/** Steps of the search in one half wave, and how far it goes. */
+/** Steps of the search in one half wave. */
 const STEPS = 32;
-const MOST_WAVELENGTHS = 10;
 
 /**
  * Two thicknesses for orientation: half a wave, and where a sheet by itself before a matched feed begins to cost.
