@@ -11,7 +11,10 @@ export function coversText(verdict: CoverVerdict, link: Link, paint: Paint = pla
   const { weathers, worstWeather } = verdict;
   const parts = [
     pathLines(verdict, link, paint),
-    `${capital(link.modes[verdict.mode]!.label)}; best first by the margin left in ${worstWeather}, cover at both ends.`,
+    paragraph(
+      `${capital(link.modes[verdict.mode]!.label)}; ` +
+        `best first by the margin left in ${worstWeather}, cover at both ends.`,
+    ),
     verdict.covers.map((judged, i) => paragraph(sentence(judged, verdict, link), `${i + 1} `)).join("\n"),
     ...weathers.map(
       (weather) => `${paint("strong", weatherTitle(weather, link))}\n${costTable(verdict, weather, paint)}`,

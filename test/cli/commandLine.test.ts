@@ -4,7 +4,7 @@ import { describe, expect, it } from "vitest";
 import { materials } from "../../src/cover/materials.ts";
 import { demo, oilskin, root, scenarioFile, scenarioNames, shell, widest } from "./run.ts";
 
-const commands = ["budget", "check", "new", "materials", "schema"];
+const commands = ["budget", "covers", "thickness", "check", "new", "materials", "schema"];
 const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8")) as { version: string };
 const ESCAPE = "\u001b";
 
@@ -53,13 +53,19 @@ describe("a slip on the command line", () => {
   });
 });
 
-describe("materials and schema", () => {
+describe("covers, materials and schema", () => {
   it("materials lists names, figures and sources within 80 columns", () => {
     const { status, stdout, stderr } = oilskin(["materials"]);
     expect({ status, stderr }).toEqual({ status: 0, stderr: "" });
     expect(widest(stdout)).toBeLessThanOrEqual(80);
     expect(stdout).toMatch(/^FEP film +2\.05 \(2\.01-2\.1\) +0\.0008 /m);
     expect(stdout).toMatch(/^polycarbonate +2\.77 /m);
+  });
+
+  it.each(scenarioNames)("covers judges those of %s within 80 columns", (name) => {
+    const { status, stdout, stderr } = oilskin(["covers", scenarioFile(name)]);
+    expect({ status, stderr }).toEqual({ status: 0, stderr: "" });
+    expect(widest(stdout)).toBeLessThanOrEqual(80);
   });
 
   it("materials says of each where its figures are from", () => {
@@ -157,6 +163,7 @@ describe("no promise that someone could be hurt by", () => {
         ["budget", scenarioFile(name), "--detail"],
         ["budget", scenarioFile(name), "--json"],
         ["budget", scenarioFile(name), "--csv"],
+        ["covers", scenarioFile(name)],
         ["check", scenarioFile(name)],
       ]),
     ];

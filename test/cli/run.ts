@@ -33,6 +33,7 @@ export function oilskin(args: readonly string[], options: RunOptions = {}): Ende
     spawnSync(process.execPath, [...node, program, ...args], {
       cwd: folder,
       encoding: "utf8",
+      maxBuffer: 64e6,
       env: { PATH: process.env["PATH"], ...environment },
     }),
   );
@@ -44,6 +45,7 @@ export function shell(line: string, environment: Readonly<Record<string, string>
     spawnSync("/bin/bash", ["--norc", "-c", line], {
       cwd: root,
       encoding: "utf8",
+      maxBuffer: 64e6,
       env: { PATH: process.env["PATH"], NODE: process.execPath, OILSKIN: programFile, ...environment },
     }),
   );
