@@ -1,9 +1,12 @@
 import { requireNotNegative, requirePositive, requireWithin } from "../numeric/check.ts";
-import { abs, abs2, add, type Complex, multiply, polar, scale } from "../numeric/complex.ts";
+import { abs, abs2, add, multiply, polar, scale, ZERO } from "../numeric/complex.ts";
 import { RADIANS_PER_DEGREE, wavelengthM } from "../numeric/constants.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
-import { integrate } from "../numeric/quadrature.ts";
+import { gaussRule } from "../numeric/quadrature.ts";
 import { type Layer, layeredSheet, type Sheet } from "./layeredSheet.ts";
+
+/** Rays over the beam: the loss of a sheet of three wavelengths then holds to 2e-5 dB, that of ten to 0.04 dB. */
+const NODES = 16;
 
 export interface SheetOverBeamInput {
   readonly frequencyGHz: number;
@@ -60,33 +63,30 @@ export function sheetOverBeam({
   const thicknessMm = layers.reduce((sum, layer) => sum + layer.thicknessMm, 0);
   const airPhase = (2e-3 * Math.PI * thicknessMm) / wavelengthM(frequencyGHz);
 
-  const rays = new Map<number, Ray>();
-  const rayAt = (theta: number): Ray => {
-    const known = rays.get(theta);
-    if (known !== undefined) return known;
+  const { nodes, weights } = gaussRule(NODES);
+  const half = (halfAngleDeg * RADIANS_PER_DEGREE) / 2;
+  let whole = 0;
+  let reflection = ZERO;
+  let shifted = ZERO;
+  let power = 0;
+  let absorbed = 0;
+  for (let i = 0; i < NODES; i++) {
+    const theta = half * (1 + nodes[i]!);
+    const weight = weights[i]! * Math.cos(theta) ** exponent * Math.sin(theta);
     const incidence = Math.asin(bend * Math.sin(theta));
-    const ray = rayThrough({ frequencyGHz, layers, incidence, airPhase });
-    rays.set(theta, ray);
-    return ray;
-  };
-  const weighted = (figure: (ray: Ray) => number) =>
-    integrate(
-      (theta) => Math.cos(theta) ** exponent * Math.sin(theta) * figure(rayAt(theta)),
-      0,
-      halfAngleDeg * RADIANS_PER_DEGREE,
-    );
-  const whole = weighted(() => 1);
-  const mean = (figure: (ray: Ray) => number) => weighted(figure) / whole;
-  const meanOf = (wave: (ray: Ray) => Complex) => ({
-    re: mean((ray) => wave(ray).re),
-    im: mean((ray) => wave(ray).im),
-  });
-
-  const reflection = meanOf((ray) => ray.reflection);
-  const transmission = multiply(
-    meanOf((ray) => ray.transmission),
-    polar(1, -airPhase),
-  );
+    const wave = { frequencyGHz, layers, incidenceDeg: incidence / RADIANS_PER_DEGREE };
+    const te = layeredSheet({ ...wave, polarization: "te" });
+    const tm = layeredSheet({ ...wave, polarization: "tm" });
+    // TE and TM in equal shares; the transmission against the air that the sheet replaces.
+    reflection = add(reflection, scale(add(te.reflection, tm.reflection), weight / 2));
+    const passed = scale(add(te.transmission, tm.transmission), weight / 2);
+    shifted = add(shifted, multiply(passed, polar(1, airPhase * Math.cos(incidence))));
+    power += (weight * (abs2(te.transmission) + abs2(tm.transmission))) / 2;
+    absorbed += (weight * (te.absorbedFraction + tm.absorbedFraction)) / 2;
+    whole += weight;
+  }
+  reflection = scale(reflection, 1 / whole);
+  const transmission = multiply(scale(shifted, 1 / whole), polar(1, -airPhase));
   const transmissionLossDb = 0 - amplitudeToDb(abs(transmission));
   const straightOn = layeredSheet({ frequencyGHz, incidenceDeg: 0, polarization: "te", layers });
   return {
@@ -94,8 +94,8 @@ export function sheetOverBeam({
     transmission,
     transmissionLossDb,
     returnLossDb: 0 - amplitudeToDb(abs(reflection)),
-    absorbedFraction: mean((ray) => ray.absorbed),
-    meanPowerTransmission: mean((ray) => ray.power),
+    absorbedFraction: absorbed / whole,
+    meanPowerTransmission: power / whole,
     spreadDb: transmissionLossDb - straightOn.transmissionLossDb,
   };
 }
@@ -105,36 +105,4 @@ function bendOf({ radiusMm, centreBehindMm }: { radiusMm: number; centreBehindMm
   requirePositive("dome.radiusMm", radiusMm);
   requireWithin("dome.centreBehindMm", centreBehindMm, 0, radiusMm);
   return centreBehindMm / radiusMm;
-}
-
-/** What one ray meets, both polarisations in equal shares. */
-interface Ray {
-  readonly reflection: Complex;
-  /** Against the air that the sheet replaces. */
-  readonly transmission: Complex;
-  readonly power: number;
-  readonly absorbed: number;
-}
-
-function rayThrough({
-  frequencyGHz,
-  layers,
-  incidence,
-  airPhase,
-}: {
-  readonly frequencyGHz: number;
-  readonly layers: readonly Layer[];
-  readonly incidence: number;
-  readonly airPhase: number;
-}): Ray {
-  const wave = { frequencyGHz, layers, incidenceDeg: incidence / RADIANS_PER_DEGREE };
-  const te = layeredSheet({ ...wave, polarization: "te" });
-  const tm = layeredSheet({ ...wave, polarization: "tm" });
-  const air = polar(0.5, airPhase * Math.cos(incidence));
-  return {
-    reflection: scale(add(te.reflection, tm.reflection), 0.5),
-    transmission: multiply(add(te.transmission, tm.transmission), air),
-    power: (abs2(te.transmission) + abs2(tm.transmission)) / 2,
-    absorbed: (te.absorbedFraction + tm.absorbedFraction) / 2,
-  };
 }

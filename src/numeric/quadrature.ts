@@ -29,20 +29,26 @@ function legendreRule(n: number): { nodes: Float64Array; weights: Float64Array }
 
 const rules = new Map<number, ReturnType<typeof legendreRule>>();
 
+/** Abscissae and weights on [-1, 1] of the n-point Gauss-Legendre rule, for sums that share their nodes. */
+export function gaussRule(points: number): ReturnType<typeof legendreRule> {
+  let rule = rules.get(points);
+  if (rule === undefined) {
+    rule = legendreRule(points);
+    rules.set(points, rule);
+  }
+  return rule;
+}
+
 /**
  * Integral of a smooth function by one Gauss-Legendre rule, Abramowitz & Stegun 25.4.29.
  *
  * @param points  nodes of the rule, at least 2; 32 reaches rounding for the smooth integrands used here
  */
 export function integrate(f: (x: number) => number, low: number, high: number, points = 32): number {
-  let rule = rules.get(points);
-  if (rule === undefined) {
-    rule = legendreRule(points);
-    rules.set(points, rule);
-  }
+  const { nodes, weights } = gaussRule(points);
   const centre = (low + high) / 2;
   const half = (high - low) / 2;
   let sum = 0;
-  for (let i = 0; i < points; i++) sum += rule.weights[i]! * f(centre + half * rule.nodes[i]!);
+  for (let i = 0; i < points; i++) sum += weights[i]! * f(centre + half * nodes[i]!);
   return sum * half;
 }

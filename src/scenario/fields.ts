@@ -4,26 +4,30 @@ import { didYouMean, instead, shown } from "./wording.ts";
 /** Longest text of the user's own: a name, a title, the path of a file [characters]. */
 const LONGEST_TEXT = 500;
 
+/**
+ * A schema with what an editor is to be told of it. The package's own `.meta()` copies the schema for that, which a
+ * hundred fields would feel at every start.
+ */
+export function described<T extends z.ZodType>(schema: T, meta: { description: string; type?: string[] }): T {
+  z.globalRegistry.add(schema, meta as z.GlobalMeta);
+  return schema;
+}
+
 /** A field that takes one of a few words. */
 export function oneOf<const Words extends readonly [string, ...string[]]>(words: Words, about: string) {
-  return z
-    .enum(words, {
-      error: ({ input }) => instead(input, `${about}: ${words.join(", ")}`) + didYouMean(input, words),
-    })
-    .meta({ description: about });
+  const field = z.enum(words, {
+    error: ({ input }) => instead(input, `${about}: ${words.join(", ")}`) + didYouMean(input, words),
+  });
+  return described(field, { description: about });
 }
 
 /** A field that takes words of the user's own. A name such as `24` is a number to YAML; it is a name all the same. */
 export function text(about: string) {
-  return z
-    .union([z.string(), z.number()], { error: ({ input }) => instead(input, about) })
-    .transform(String)
-    .superRefine((value, context) => {
-      const message = faultOfText(value);
-      if (message)
-        context.addIssue({ code: "custom", message: `${message}, expected ${about}`, input: value });
-    })
-    .meta({ description: about });
+  const field = z.string({ error: ({ input }) => instead(input, about) }).superRefine((value, context) => {
+    const message = faultOfText(value);
+    if (message) context.addIssue({ code: "custom", message: `${message}, expected ${about}`, input: value });
+  });
+  return described(field, { description: about, type: ["string", "number"] });
 }
 
 /** What is wrong with a name or other text of the user's own. */
@@ -36,9 +40,10 @@ export function faultOfText(value: string): string | undefined {
 
 /** A group of named things, each of one shape. */
 export function named<T extends z.ZodType>(shape: T, about: string) {
-  return z
-    .record(z.string(), shape, { error: ({ input }) => instead(input, `${about}, each under its name`) })
-    .meta({ description: about });
+  const field = z.record(z.string(), shape, {
+    error: ({ input }) => instead(input, `${about}, each under its name`),
+  });
+  return described(field, { description: about });
 }
 
 /**
@@ -52,16 +57,16 @@ export function group<T extends z.core.$ZodLooseShape>(
   about: string,
   judge?: (has: (key: keyof T & string) => boolean) => string | undefined,
 ) {
-  return z
-    .strictObject(shape, {
-      error: ({ code, input }) => (code === "invalid_type" ? instead(input, about) : undefined),
-    })
-    .superRefine(
-      (value, context) => {
-        const message = judge?.((key) => Object.hasOwn(value, key));
-        if (message) context.addIssue({ code: "custom", message, input: value });
-      },
-      { when: ({ value }) => typeof value === "object" && value !== null && !Array.isArray(value) },
-    )
-    .meta({ description: about });
+  const field = z.strictObject(shape, {
+    error: ({ code, input }) => (code === "invalid_type" ? instead(input, about) : undefined),
+  });
+  if (judge === undefined) return described(field, { description: about });
+  const judged = field.superRefine(
+    (value, context) => {
+      const message = judge((key) => Object.hasOwn(value, key));
+      if (message) context.addIssue({ code: "custom", message, input: value });
+    },
+    { when: ({ value }) => typeof value === "object" && value !== null && !Array.isArray(value) },
+  );
+  return described(judged, { description: about });
 }

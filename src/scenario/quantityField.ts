@@ -1,4 +1,5 @@
 import * as z from "zod";
+import { described } from "./fields.ts";
 import {
   describeRefusal,
   kinds,
@@ -32,10 +33,11 @@ function field<T>(kind: QuantityKind, options: FieldOptions, spread: boolean, ta
   const { expected, usual } = kinds[kind];
   const error = ({ input }: { input?: unknown }) => instead(input, expected);
   const needsUnit = usual[0] !== "";
-  const typed: z.ZodType<string | number> = needsUnit
-    ? z.string({ error })
-    : z.union([z.string(), z.number()], { error });
-  return typed.meta({ description: `${options.about}: ${expected}` }).transform((input, context) => {
+  const typed = described(z.string({ error }), {
+    description: `${options.about}: ${expected}`,
+    ...(!needsUnit && { type: ["string", "number"] }),
+  });
+  return typed.transform((input, context) => {
     const judge = (reading: Reading): T => {
       const fault = reading.ok ? outOfRange(reading, kind, options) : describeRefusal(reading);
       if (reading.ok && fault === undefined) return take(reading);
