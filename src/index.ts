@@ -43,6 +43,7 @@ export { evaluate } from "./budget/evaluate.ts";
 export { prepare, withWeather } from "./budget/prepare.ts";
 export type { Budget, Case, Link, Warning } from "./budget/types.ts";
 // Covers and feeds
+export { bandRipple } from "./cover/bandRipple.ts";
 export { beadedSheet } from "./cover/beads.ts";
 export { coveredFeed } from "./cover/coveredFeed.ts";
 export { coverNoise } from "./cover/coverNoise.ts";

@@ -13,7 +13,7 @@ import { ZERO_CELSIUS_K } from "../numeric/constants.ts";
 import { freeSpaceLoss } from "../path/freeSpaceLoss.ts";
 import { effectiveRainLength, rainFadeValidity } from "../path/rainFade.ts";
 import type { Scenario, Weather } from "../scenario/types.ts";
-import { type Entry, lossEntry } from "./entry.ts";
+import { type Entry, lossEntry, sumOf } from "./entry.ts";
 import { overreachWarning } from "./overreach.ts";
 import type { PathGeometry, PreparedWeather, Warning } from "./types.ts";
 
@@ -64,7 +64,8 @@ export function prepareWeather(
   return {
     weather,
     entries: [freeSpaceEntry(frequencyGHz, slantKm, path), gasEntry(gas), ...rain, ...fog],
-    hydrometeorLossDb: [...rain, ...fog].reduce((sum, { db }) => sum - db, 0),
+    rainLossDb: 0 - sumOf(rain, "db"),
+    hydrometeorLossDb: 0 - sumOf([...rain, ...fog], "db"),
     ambientK: ambient.temperatureK,
     warnings,
   };

@@ -10,6 +10,8 @@ import type { Snow } from "../scenario/types.ts";
 export interface Wetness {
   /** Rain that keeps a cover wet, or did until `driedForMin` ago. */
   readonly rainRateMmPerH: number;
+  /** What that rain takes on the path [dB]: some wet-antenna models start from it. */
+  readonly pathRainDb: number;
   readonly windMPerS: number;
   readonly temperatureC: number;
   readonly driedForMin: number;

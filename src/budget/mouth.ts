@@ -61,7 +61,7 @@ export function mouthUnder(
   const where = `covers.${coverName}`;
   const feedMismatchDb = mismatchLossDb(gammaOfReturnLoss("returnLossDb", feed.returnLossDb));
   const feedEntry = lossEntry(
-    heading("feed_mismatch", "feed mismatch, bare", "return loss of the scenario"),
+    heading("feed_mismatch", "feed alone, mismatch", "return loss of the scenario"),
     feedMismatchDb,
     mismatchDoubt(feed.returnLossDb),
   );

@@ -7,7 +7,7 @@ import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
 import { mouthUnder } from "./mouth.ts";
-import type { Link, PathGeometry, PreparedEnd, Warning } from "./types.ts";
+import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning } from "./types.ts";
 
 /** 1-sigma of a power read with coupler and diode, and of a line's loss out of a table [dB]: common practice, no source. */
 const POWER_SIGMA_DB = 0.7;
@@ -31,8 +31,8 @@ export function prepare(scenario: Scenario): Link {
     prepareWeather(scenario, path, weather, `weather.${name}`),
   );
   const ends = {
-    transmitter: prepareEnds(scenario, "transmitter", path),
-    receiver: prepareEnds(scenario, "receiver", path),
+    transmitter: prepareEnds(scenario, "transmitter", path, weathers),
+    receiver: prepareEnds(scenario, "receiver", path, weathers),
   };
   const warnings = geometryWarnings(path, scenario.path.terrain !== undefined);
   return { scenario, path, ends, weathers, modes: scenario.modes, warnings };
@@ -41,20 +41,18 @@ export function prepare(scenario: Scenario): Link {
 /** The same link with one weather more, or another one under the same name: what a sweep of the rain rate needs. */
 export function withWeather(link: Link, name: string, weather: Weather): Link {
   const scenario = { ...link.scenario, weather: { ...link.scenario.weather, [name]: weather } };
-  const onEnd = (end: EndName) => mapValues(link.ends[end], (ready) => inWeather(ready, end, name, weather));
+  const prepared = prepareWeather(scenario, link.path, weather, `weather.${name}`);
+  const onEnd = (end: EndName) => mapValues(link.ends[end], (ready) => inWeather(ready, end, name, prepared));
   return {
     ...link,
     scenario,
     ends: { transmitter: onEnd("transmitter"), receiver: onEnd("receiver") },
-    weathers: {
-      ...link.weathers,
-      [name]: prepareWeather(scenario, link.path, weather, `weather.${name}`),
-    },
+    weathers: { ...link.weathers, [name]: prepared },
   };
 }
 
 /** An end made ready for one weather more. */
-function inWeather(ready: PreparedEnd, end: EndName, name: string, weather: Weather): PreparedEnd {
+function inWeather(ready: PreparedEnd, end: EndName, name: string, weather: PreparedWeather): PreparedEnd {
   const wetness = wetnessAt(end, weather);
   return {
     ...ready,
@@ -67,7 +65,12 @@ function inWeather(ready: PreparedEnd, end: EndName, name: string, weather: Weat
 }
 
 /** Both ends may try any feed that suits their dish. */
-function prepareEnds(scenario: Scenario, end: EndName, path: PathGeometry): Record<string, PreparedEnd> {
+function prepareEnds(
+  scenario: Scenario,
+  end: EndName,
+  path: PathGeometry,
+  weathers: Link["weathers"],
+): Record<string, PreparedEnd> {
   const { dish: dishName, feed: own } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
   const suits = (name: string) => {
@@ -76,11 +79,17 @@ function prepareEnds(scenario: Scenario, end: EndName, path: PathGeometry): Reco
     return dish.focalRatio === undefined || (feed.edgeTaperDb ?? feed.tenDbWidthDeg) !== undefined;
   };
   const names = Object.keys(scenario.feeds).filter((name) => name === own || suits(name));
-  return Object.fromEntries(names.map((name) => [name, prepareEnd(scenario, end, name, path)]));
+  return Object.fromEntries(names.map((name) => [name, prepareEnd(scenario, end, name, path, weathers)]));
 }
 
-function prepareEnd(scenario: Scenario, end: EndName, feedName: string, path: PathGeometry): PreparedEnd {
-  const { frequencyGHz, covers, weather } = scenario;
+function prepareEnd(
+  scenario: Scenario,
+  end: EndName,
+  feedName: string,
+  path: PathGeometry,
+  weathers: Link["weathers"],
+): PreparedEnd {
+  const { frequencyGHz, covers } = scenario;
   const feed = scenario.feeds[feedName]!;
   const { lineLossDb, dish: dishName, dishCover } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
@@ -105,7 +114,7 @@ function prepareEnd(scenario: Scenario, end: EndName, feedName: string, path: Pa
     dishCover: {},
     warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),
   };
-  return Object.entries(weather).reduce((done, [name, one]) => inWeather(done, end, name, one), ready);
+  return Object.entries(weathers).reduce((done, [name, one]) => inWeather(done, end, name, one), ready);
 }
 
 function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
@@ -114,10 +123,11 @@ function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario
 }
 
 /** Rain on the covers of one end; a cover may be wet without rain on the path, and dry while it rains. */
-function wetnessAt(end: EndName, weather: Weather): Wetness | undefined {
+function wetnessAt(end: EndName, { weather, rainLossDb }: PreparedWeather): Wetness | undefined {
   if (!weather.wets.includes(end)) return undefined;
   return {
     rainRateMmPerH: weather.coversWetAsAtMmPerH ?? weather.rainMmPerH.value,
+    pathRainDb: rainLossDb,
     windMPerS: weather.windMPerS,
     driedForMin: weather.driedForMin,
     dewMm: {

@@ -113,6 +113,8 @@ export interface Mouth extends CoverState {
 export interface PreparedWeather {
   readonly weather: Weather;
   readonly entries: readonly Entry[];
+  /** Rain on the path [dB]. */
+  readonly rainLossDb: number;
   /** Rain and fog on the path [dB]: what warms the beam. */
   readonly hydrometeorLossDb: number;
   readonly ambientK: number;

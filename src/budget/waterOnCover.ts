@@ -5,7 +5,7 @@ import type { Layer } from "../cover/layeredSheet.ts";
 import type { Wetting } from "../cover/materials.ts";
 import { type SurfaceCare, surfaceState } from "../cover/surfaceState.ts";
 import { waterLayer } from "../cover/waterFilm.ts";
-import { wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
+import { type WetAntennaInput, wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
 import type { WetModel } from "../cover/wetModels.ts";
 import { abs } from "../numeric/complex.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
@@ -25,6 +25,8 @@ export interface WaterCost {
   readonly source: string;
   readonly warnings: readonly Warning[];
 }
+
+const STEADY_RAIN_MIN = 60;
 
 /** Loss of a film over that of the same rain on a fresh repellent surface: Merceret & Ward 2000. */
 const REPELLENT_GAIN = 2.9;
@@ -101,7 +103,7 @@ export function waterOnCover(
       ? [
           {
             code: "wet_model_range",
-            message: `the ${model} model of water on them was ${published.range}`,
+            message: `water on a cover by the model ${model}, ${published.range}: trust it to a factor of two`,
             where: "covers",
           },
           ...standing,
@@ -167,13 +169,20 @@ function beads(
 function publishedLoss(
   model: Exclude<WetModel, "film" | "beads">,
   frequencyGHz: number,
-  { rainRateMmPerH, driedForMin }: Wetness,
+  { rainRateMmPerH, driedForMin, pathRainDb: attenuationDb }: Wetness,
   filmDb: number,
 ) {
   const rain = { frequencyGHz, rainRateMmPerH };
-  const { lossDb, ends, extrapolated } = wetAntennaLoss(
-    model === "merceret2000" ? { model, surface: "hydrophobic", ...rain } : { model, ...rain },
-  );
+  const input: Record<typeof model, WetAntennaInput> = {
+    leijnse2008: { model: "leijnse2008", ...rain },
+    pastorek2022: { model: "pastorek2022", ...rain },
+    kharadly2001: { model: "kharadly2001", attenuationDb, ...rain },
+    merceret2000: { model: "merceret2000", surface: "hydrophobic", ...rain },
+    // Steady rain: long enough for the antennas to be as wet as they get.
+    schleiss2013: { model: "schleiss2013", attenuationDb, wetMinutes: STEADY_RAIN_MIN, ...rain },
+    constant: { model: "constant", ...rain },
+  };
+  const { lossDb, ends, extrapolated } = wetAntennaLoss(input[model]);
   const { source, range } = wetAntennaModels.find(({ name }) => name === model)!;
   const [low, high] = range.frequencyGHz;
   const oneEnd = ends === "both" ? lossDb / 2 : lossDb;

@@ -37,6 +37,7 @@ covers:
     layers: [{ material: FEP film, thickness: 5 mil }] # feed side first; oilskin materials lists them
   lid:
     layers: [{ material: polycarbonate, thickness: 2 mm }]
+    gap: 5 mm # in front of the mouth; dome_radius: 60 mm makes it bulge
     surface: wetting # or beading, mixed
     state: weathered # or new, treated
   unknown sheet: # measured on the bench, with and without
@@ -48,6 +49,7 @@ dish:
     focal_ratio: 0.4
     surface_rms: 0.4 mm
     blockage: 6 cm # what stands before the dish
+    other_losses: 1 dB # phase of the feed, struts: a small dish loses 1 to 1.5 dB beside
     pointing_error: 0.5 deg # rms in each axis; a hand compass is good to 1 to 5 deg
 
 path:
@@ -59,6 +61,8 @@ weather:
   shower: { rain: 16 mm/h, extent: 6 km } # wets both covers
   thunderstorm: { rain: 50 mm/h, extent: 4 km, wind: 8 m/s }
   after the shower: { covers_wet_as_at: 5 mm/h } # wet covers, no rain on the path
+  # dew: { dew: 0.1 mm }   ice: { ice: 2 mm }   snow: { snow: { depth: 20 mm, wetness: 5 % } }
+  # dried_for: 20 min   beside covers_wet_as_at: the time since that rain stopped
   # fog: { fog: 0.5 g/m3, temperature: 5 degC }   0.05 g/m3 is fog of 300 m sight, 0.5 of 50 m
 
 decision: { reserve: 3 dB, confidence: 90 % }

@@ -1,15 +1,7 @@
 import { Command, Option } from "commander";
-import {
-  describeRefusal,
-  type QuantityKind,
-  readQuantity,
-  type Scenario,
-  thickness,
-  thicknessCsv,
-  thicknessJson,
-  thicknessText,
-} from "../index.ts";
+import { type Scenario, thickness, thicknessCsv, thicknessJson, thicknessText } from "../index.ts";
 import { knownName } from "./knownName.ts";
+import { bandOf, within } from "./optionQuantity.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { paintFor, print, UserError } from "./terminal.ts";
 
@@ -100,22 +92,4 @@ function wholeNumber(option: string, text: string, low: number, high: number): n
 function thicknessOf(option: string, text: string): number {
   if (text === "0") return 0;
   return within(option, text, "thicknessMm", [0, THICKEST_MM], `0 to ${THICKEST_MM} mm`);
-}
-
-function bandOf(text: string, { frequencyGHz }: Scenario): number {
-  const range = [1, 1e9 * frequencyGHz] as const;
-  return within("--band", text, "bandwidthHz", range, `1 Hz to the frequency, ${frequencyGHz} GHz`) / 1e9;
-}
-
-function within(
-  option: string,
-  text: string,
-  kind: QuantityKind,
-  [low, high]: readonly [number, number],
-  range: string,
-): number {
-  const reading = readQuantity(text, kind);
-  if (!reading.ok) throw new UserError(`${option}: ${describeRefusal(reading)}`);
-  if (reading.value >= low && reading.value <= high) return reading.value;
-  throw new UserError(`${option}: read "${text}", expected ${range}`);
 }

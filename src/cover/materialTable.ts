@@ -1,36 +1,36 @@
 /**
  * The materials of covers as plain tables, read by `materials.ts`. "-" stands for a figure that does not apply or is
- * not known. RBK: Riddle, Baker-Jarvis, Krupka 2003, IEEE Trans. MTT 51, 727, as listed in a university
+ * not known. Riddle et al. 2003: Riddle, Baker-Jarvis, Krupka 2003, IEEE Trans. MTT 51, 727, as listed in a university
  * compilation of permittivities. Von Hippel: Dielectric Materials and Applications, 1954.
  */
 
 /** Permittivity and loss tangent (value, low, high), where they hold, and whence they come. */
 export const electricalTable = `
 name | permittivity | low | high | loss tangent | low | high | GHz | degC | confidence | source
-PTFE sheet | 2.08 | 2.02 | 2.12 | 0.0003 | 0.0002 | 0.0006 | 10 | 25 | published | RBK: 2.05/0.0002 at 10 GHz, 2.04/0.0004 at 11.5 GHz; Pozar, Microwave Engineering, after von Hippel (from memory): 2.08/0.0004
+PTFE sheet | 2.08 | 2.02 | 2.12 | 0.0003 | 0.0002 | 0.0006 | 10 | 25 | published | Riddle et al. 2003: 2.05/0.0002 at 10 GHz, 2.04/0.0004 at 11.5 GHz; Pozar, Microwave Engineering, after von Hippel (from memory): 2.08/0.0004
 PTFE expanded (radome laminate) | 1.25 | 1.2 | 1.3 | 0.0005 | 0.0001 | 0.001 | 10 | 25 | partly published | Koller, Ediss, Kerr, ALMA Memo 309; loss from memory
 PTFE thin tape or film with adhesive | 2.3 | 2.05 | 2.6 | 0.003 | 0.0005 | 0.01 | 10 | 25 | estimate | PTFE with 20-40 % of adhesive 2.8 as layers in series
 FEP film | 2.05 | 2.01 | 2.1 | 0.0008 | 0.0005 | 0.0012 | 10 | 25 | memory | from memory
 ETFE film | 2.4 | 2.3 | 2.6 | 0.009 | 0.005 | 0.013 | 10 | 25 | memory | from memory
 PVDF sheet or film | 2.9 | 2.5 | 3.5 | 0.06 | 0.03 | 0.11 | 10 | 25 | memory | from memory, wide
 polyimide film | 3.3 | 3.0 | 3.5 | 0.008 | 0.002 | 0.015 | 10 | 23 | memory | from memory; dependence on humidity: Sawada et al. 2024 at 10 GHz
-rigid PVC (uPVC) | 2.75 | 2.65 | 3.0 | 0.006 | 0.005 | 0.01 | 10 | 25 | published | RBK: 2.71/0.006 at 11 GHz
+rigid PVC (uPVC) | 2.75 | 2.65 | 3.0 | 0.006 | 0.005 | 0.01 | 10 | 25 | published | Riddle et al. 2003: 2.71/0.006 at 11 GHz
 plasticised PVC (vinyl sheet or tape) | 2.8 | 2.6 | 3.3 | 0.03 | 0.015 | 0.07 | 10 | 25 | memory | from memory, wide; softer grades lose more
-acrylic (PMMA) | 2.6 | 2.55 | 2.7 | 0.007 | 0.005 | 0.01 | 10 | 25 | published | RBK: 2.61/0.01 at 11 GHz; von Hippel (from memory): 2.59/0.0067
-polycarbonate | 2.77 | 2.7 | 2.95 | 0.0055 | 0.004 | 0.007 | 10 | 25 | partly published | RBK: 2.76 at 11 GHz; the loss printed there, 0.0005, is taken as a slip for 0.005
-ABS (moulded) | 2.7 | 2.5 | 2.9 | 0.008 | 0.005 | 0.012 | 11 | 25 | published | RBK: 2.7/0.008 at 11 GHz
+acrylic (PMMA) | 2.6 | 2.55 | 2.7 | 0.007 | 0.005 | 0.01 | 10 | 25 | published | Riddle et al. 2003: 2.61/0.01 at 11 GHz; von Hippel (from memory): 2.59/0.0067
+polycarbonate | 2.77 | 2.7 | 2.95 | 0.0055 | 0.004 | 0.007 | 10 | 25 | partly published | Riddle et al. 2003: 2.76 at 11 GHz; the loss printed there, 0.0005, is taken as a slip for 0.005
+ABS (moulded) | 2.7 | 2.5 | 2.9 | 0.008 | 0.005 | 0.012 | 11 | 25 | published | Riddle et al. 2003: 2.7/0.008 at 11 GHz
 ABS (3-D printed) | 2.55 | 2.3 | 2.8 | 0.008 | 0.005 | 0.015 | 10 | 25 | published range | Zechmeister, Lacik 2019: printed plastics 2.55-2.95 up to 10 GHz; value from memory
 ASA | 2.8 | 2.5 | 3.1 | 0.01 | 0.006 | 0.018 | 10 | 25 | memory | from memory
 PETG | 2.65 | 2.4 | 2.9 | 0.01 | 0.006 | 0.02 | 10 | 25 | published range | Zechmeister, Lacik 2019: printed plastics 2.55-2.95 up to 10 GHz; value from memory
 PLA (3-D printed) | 2.65 | 2.3 | 2.95 | 0.01 | 0.006 | 0.025 | 10 | 25 | published range | Zechmeister, Lacik 2019: printed plastics 2.55-2.95 up to 10 GHz; value from memory
-HDPE | 2.34 | 2.28 | 2.4 | 0.0003 | 0.0002 | 0.0006 | 11 | 25 | published | RBK: 2.37/0.0002 at 11.3 GHz; Seeger: 2.34 up to 40 GHz
+HDPE | 2.34 | 2.28 | 2.4 | 0.0003 | 0.0002 | 0.0006 | 11 | 25 | published | Riddle et al. 2003: 2.37/0.0002 at 11.3 GHz; Seeger: 2.34 up to 40 GHz
 LDPE film or sheet | 2.26 | 2.2 | 2.3 | 0.0004 | 0.0002 | 0.0008 | 10 | 25 | memory | Pozar, Microwave Engineering, after von Hippel (from memory): 2.25/0.0004
 UHMWPE | 2.32 | 2.28 | 2.36 | 0.0003 | 0.0001 | 0.0006 | 10 | 25 | memory | from memory
-polypropylene | 2.26 | 2.2 | 2.3 | 0.0003 | 0.0001 | 0.0008 | 9.4 | 25 | published | RBK: 2.27/0.0001 at 9.4 GHz
-polystyrene (rigid, crosslinked) | 2.54 | 2.5 | 2.57 | 0.0005 | 0.0003 | 0.0009 | 10.7 | 25 | published | RBK: 2.54/0.0005 at 10.7 GHz; Pozar, Microwave Engineering, after von Hippel (from memory): 2.54/0.00033
+polypropylene | 2.26 | 2.2 | 2.3 | 0.0003 | 0.0001 | 0.0008 | 9.4 | 25 | published | Riddle et al. 2003: 2.27/0.0001 at 9.4 GHz
+polystyrene (rigid, crosslinked) | 2.54 | 2.5 | 2.57 | 0.0005 | 0.0003 | 0.0009 | 10.7 | 25 | published | Riddle et al. 2003: 2.54/0.0005 at 10.7 GHz; Pozar, Microwave Engineering, after von Hippel (from memory): 2.54/0.00033
 high-impact polystyrene sheet | 2.51 | 2.497 | 2.522 | 0.0008 | 0.00079 | 0.00081 | 10 | 23 | published | split-post resonator report of a university metrology laboratory, 0.236 mm sheet
-expanded polystyrene 15-30 kg/m3 | 1.025 | 1.015 | 1.05 | 0.0002 | 0.00005 | 0.0007 | 10 | 25 | memory | Pozar, Microwave Engineering, after von Hippel (from memory): foam 1.03/0.0001 at 3 GHz; scaled by the rule of mixture.ts
-extruded polystyrene foam 28-45 kg/m3 | 1.045 | 1.03 | 1.07 | 0.0004 | 0.0001 | 0.001 | 10 | 25 | memory | from memory; scaled by the rule of mixture.ts
+expanded polystyrene 15-30 kg/m3 | 1.025 | 1.015 | 1.05 | 0.0002 | 0.00005 | 0.0007 | 10 | 25 | memory | Pozar, Microwave Engineering, after von Hippel (from memory): foam 1.03/0.0001 at 3 GHz; scaled by Looyenga's mixing rule
+extruded polystyrene foam 28-45 kg/m3 | 1.045 | 1.03 | 1.07 | 0.0004 | 0.0001 | 0.001 | 10 | 25 | memory | from memory; scaled by Looyenga's mixing rule
 PET film | 3.0 | 2.8 | 3.25 | 0.008 | 0.003 | 0.015 | 10 | 25 | memory | from memory
 silicone rubber | 3.0 | 2.8 | 3.4 | 0.012 | 0.003 | 0.03 | 10 | 25 | memory | from memory
 epoxy/glass FR-4 or G10 | 4.3 | 4.0 | 4.7 | 0.02 | 0.012 | 0.03 | 10 | 25 | memory | from memory
@@ -38,12 +38,12 @@ fused silica | 3.8 | 3.78 | 3.85 | 0.0001 | 0.00005 | 0.0004 | 10 | 25 | memory 
 borosilicate glass | 4.6 | 4.4 | 4.85 | 0.008 | 0.004 | 0.012 | 10 | 25 | memory | Pozar, Microwave Engineering, after von Hippel (from memory): 4.82/0.0054 at 3 GHz
 soda-lime window glass | 6.7 | 6.0 | 7.5 | 0.018 | 0.01 | 0.025 | 10 | 25 | memory | from memory
 PTFE-coated glass fabric | 2.8 | 2.4 | 3.3 | 0.004 | 0.001 | 0.01 | 10 | 25 | memory | from memory
-ripstop nylon cloth dry | 1.9 | 1.5 | 2.6 | 0.012 | 0.006 | 0.03 | 10 | 25 | estimate | solid polyamide of RBK, 3.01/0.02 at 10.8 GHz, at 50-70 % fill by the rule of mixture.ts
+ripstop nylon cloth dry | 1.9 | 1.5 | 2.6 | 0.012 | 0.006 | 0.03 | 10 | 25 | estimate | solid polyamide of Riddle et al. 2003, 3.01/0.02 at 10.8 GHz, at 50-70 % fill by Looyenga's mixing rule
 acrylic pressure-sensitive adhesive | 2.8 | 2.5 | 3.3 | 0.03 | 0.01 | 0.06 | 10 | 25 | memory | from memory, wide
 hot-melt (EVA) | 2.45 | 2.3 | 2.7 | 0.008 | 0.004 | 0.02 | 10 | 25 | memory | from memory
-ice | 3.184 | 3.16 | 3.20 | 0.0003 | 0.0001 | 0.001 | 10 | -5 | model | icePermittivity.ts
-dry snow 0.3 g/cm3 | 1.53 | 1.48 | 1.57 | 0.0001 | 0.00005 | 0.0005 | 10 | -5 | model | snowPermittivity.ts
-wet snow 0.3 g/cm3 5 % water | 1.91 | 1.8 | 2.1 | 0.156 | 0.12 | 0.2 | 10.4 | 0 | model | snowPermittivity.ts
+ice | 3.184 | 3.16 | 3.20 | 0.0003 | 0.0001 | 0.001 | 10 | -5 | model | Matzler & Wegmuller 1987, Hufford 1991
+dry snow 0.3 g/cm3 | 1.53 | 1.48 | 1.57 | 0.0001 | 0.00005 | 0.0005 | 10 | -5 | model | Ulaby & Long 2014
+wet snow 0.3 g/cm3 5 % water | 1.91 | 1.8 | 2.1 | 0.156 | 0.12 | 0.2 | 10.4 | 0 | model | Hallikainen, Ulaby, Abdelrazik 1986
 water | 52.3 | 40.7 | 62.0 | 0.73 | 0.49 | 1.0 | 10.368 | 10 | model | double Debye of ITU-R P.840; low and high at 0 and 25 degC
 `;
 

@@ -4,7 +4,9 @@ export const wetModels = [
   "beads",
   "leijnse2008",
   "pastorek2022",
+  "kharadly2001",
   "merceret2000",
+  "schleiss2013",
   "constant",
 ] as const;
 

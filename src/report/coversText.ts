@@ -20,6 +20,7 @@ export function coversText(verdict: CoverVerdict, link: Link, paint: Paint = pla
       (weather) => `${paint("strong", weatherTitle(weather, link))}\n${costTable(verdict, weather, paint)}`,
     ),
     `${paint("strong", "Match at the feed: return loss in dB, change against bare, VSWR")}\n${matchTable(verdict)}`,
+    rippleText(verdict, paint),
     `${paint("strong", `Rain that uses the margin up (path and covers, as in ${verdict.rainWeather})`)}\n${breakEvenTable(verdict, link)}`,
     `${paint("strong", "Outdoors")}\n${verdict.covers.flatMap(outdoors).join("\n")}`,
     warningText(verdict.warnings, paint),
@@ -124,6 +125,18 @@ function match({ bareReturnLossDb, returnLossDb: { nominal } }: CoverState): str
   const signed =
     tenth(change).startsWith("-") || tenth(change) === "0.0" ? tenth(change) : `+${tenth(change)}`;
   return `${tenth(nominal)} ${signed} ${reflectionFigures({ returnLossDb: nominal }).vswr.toFixed(2)}`;
+}
+
+/** Swing of each cover's loss over the band, where it is worth a line. */
+function rippleText({ covers, bandGHz }: CoverVerdict, paint: Paint): string {
+  const swings = covers.flatMap(({ cover, rippleDb }) => {
+    if (rippleDb === undefined || cover === "bare") return [];
+    const { transmitter, receiver } = rippleDb;
+    return `${cover} ${transmitter.toFixed(2)} and ${receiver.toFixed(2)} dB`;
+  });
+  if (swings.length === 0) return "";
+  const title = `Ripple over a band of ${Number((1000 * bandGHz).toPrecision(3))} MHz, dry, transmitter and receiver`;
+  return `${paint("strong", title)}\n${paragraph(`  ${swings.join("; ")}`)}`;
 }
 
 function breakEvenTable({ covers }: CoverVerdict, { scenario }: Link): string {

@@ -56,7 +56,7 @@ function entriesAbreast(shown: readonly Column[]): string {
     result("  margin", ({ marginDb }) => marginDb),
     result("  one standard deviation", ({ marginSigmaDb }) => marginSigmaDb),
     [
-      cell("  range by phase, plastic"),
+      cell("  range, phase unknown"),
       ...across(({ marginLowDb, marginHighDb }) => `${tenth(marginLowDb)} to ${tenth(marginHighDb)}`),
     ],
     [cell("  holds with"), ...across(({ holdProbability }) => percent(holdProbability))],
@@ -77,7 +77,9 @@ function stageRows(shown: readonly Column[], stage: Stage): Cell[][] {
       ...shown.flatMap(({ byId, levelAfter }) => {
         const entry = byId.get(id);
         if (entry === undefined) return [cell("-"), cell("")];
-        return [cell(levels.has(id) ? "" : tenth(entry.db)), cell(tenth(levelAfter.get(id)!))];
+        // A noise entry adds to the margin what it takes from the noise; here the noise itself is read.
+        const change = stage === "noise" ? 0 - entry.db : entry.db;
+        return [cell(levels.has(id) ? "" : tenth(change)), cell(tenth(levelAfter.get(id)!))];
       }),
     ]),
   ];

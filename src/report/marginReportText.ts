@@ -34,7 +34,7 @@ export async function marginReportText(
     [
       paragraph(
         `closes: ${tenth(reserveDb)} dB or more left, and holds with ${percent(confidence)}; ` +
-          "thin: less; fails: none left",
+          "thin: something left, but less or less sure; fails: nothing left",
       ),
       "±: one standard deviation; *: as the scenario has it",
     ].join("\n"),

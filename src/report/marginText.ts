@@ -1,7 +1,17 @@
 import type { Link, Verdict } from "../budget/types.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { cell, columns, RULE } from "./columns.ts";
-import { abreast, capital, listed, type Meaning, type Paint, paragraph, plain, tenth } from "./words.ts";
+import {
+  abreast,
+  capital,
+  listed,
+  type Meaning,
+  type Paint,
+  paragraph,
+  percent,
+  plain,
+  tenth,
+} from "./words.ts";
 
 export type ReportBudget = MarginReport["budgets"][number];
 
@@ -9,6 +19,9 @@ export const meanings = { closes: "good", thin: "doubtful", fails: "bad" } as co
   Verdict,
   Meaning
 >;
+
+/** Free-air tests repeat to this [dB]: common practice, no source. */
+const UNSEEN_DB = 0.05;
 
 /** Path, headings, frequency: what a report is about. */
 export function pathLines(
@@ -31,35 +44,58 @@ export function pathLines(
   ].join("\n");
 }
 
-/** The answer in a sentence or two: does it close, by weather, and what does the cover take. */
+/** The answer: does it close, a sentence a mode, what the cover takes, and what is taken for granted. */
 export function answer(report: MarginReport, link: Link): string {
   const own = ownBudgets(report, link);
-  const mode = own[0]?.case.mode;
-  if (mode === undefined) return "No case was asked for.";
-  const inMode = own.filter((budget) => budget.case.mode === mode);
-  const said = (["closes", "thin", "fails"] as const).flatMap((verdict) => {
-    const weathers = inMode
-      .filter((budget) => budget.verdict === verdict)
-      .map((budget) => `${budget.case.weather} (${tenth(budget.marginDb)} dB)`);
-    if (weathers.length === 0) return [];
-    return `${verdict === "thin" ? "is thin" : verdict} in ${listed(weathers)}`;
+  if (own.length === 0) return "No case was asked for.";
+  const modes = [...new Set(own.map(({ case: { mode } }) => mode))];
+  const sentences = modes.map((mode) =>
+    modeAnswer(
+      link.modes[mode]!.label,
+      own.filter((budget) => budget.case.mode === mode),
+    ),
+  );
+  const first = own.filter(({ case: { mode } }) => mode === modes[0]);
+  const costs = coverCosts(report, first);
+  return [...sentences, ...costs, "Line of sight is taken: no hill, tree or building in the way."]
+    .map((sentence) => paragraph(sentence))
+    .join("\n");
+}
+
+/** One mode in all weathers, the worst first. */
+function modeAnswer(label: string, budgets: readonly ReportBudget[]): string {
+  const words = { fails: "fails", thin: "is thin", closes: "closes" } as const;
+  const said = (["fails", "thin", "closes"] as const).flatMap((verdict) => {
+    const some = budgets.filter((budget) => budget.verdict === verdict);
+    if (some.length === 0) return [];
+    if (some.length === budgets.length && some.length > 1) {
+      const least = Math.min(...some.map(({ marginDb }) => marginDb));
+      return `${words[verdict]} in every weather (${tenth(least)} dB at the least)`;
+    }
+    const weathers = some.map(({ case: { weather }, marginDb, holdProbability }) => {
+      const holds = verdict === "thin" ? `, holds with ${percent(holdProbability)}` : "";
+      return `${weather} (${tenth(marginDb)} dB${holds})`;
+    });
+    return `${words[verdict]} in ${listed(weathers)}`;
   });
-  return paragraph(`${capital(link.modes[mode]!.label)} ${listed(said)}. ${coverCosts(report, inMode)}`);
+  return `${capital(label)} ${listed(said)}.`;
 }
 
 /** What the scenario's own covers take against bare mouths, weather by weather. */
-function coverCosts(report: MarginReport, own: readonly ReportBudget[]): string {
+function coverCosts(report: MarginReport, own: readonly ReportBudget[]): string[] {
   const costs = own.flatMap((budget) => {
     const { weather, mode } = budget.case;
     const bare = report.budgets.find(
       (other) => isBare(other) && other.case.mode === mode && other.case.weather === weather,
     );
     if (bare === undefined || isBare(budget)) return [];
-    return `${tenth(bare.marginDb - budget.marginDb)} dB in ${weather}`;
+    const cost = bare.marginDb - budget.marginDb;
+    return Math.abs(cost) < UNSEEN_DB
+      ? `nothing that a bench could show in ${weather}`
+      : `${tenth(cost)} dB in ${weather}`;
   });
-  return costs.length === 0
-    ? ""
-    : `The cover (${coverName(own[0]!)}) takes ${listed(costs)}, both ends together.`;
+  if (costs.length === 0) return [];
+  return [`The cover (${coverName(own[0]!)}) takes ${listed(costs)}, both ends together.`];
 }
 
 function isBare({ case: { transmitter, receiver } }: ReportBudget): boolean {

@@ -13,7 +13,7 @@ export function warningText(warnings: readonly Warning[], paint: Paint): string 
 /** What no figure of the report holds, so that silence is not taken for nothing. */
 export function leftOutText({ scenario }: Link): string {
   const left = [
-    "hills, trees and buildings in the way (line of sight is taken)",
+    "hills, trees and buildings in the way",
     "troposcatter, ducting, aircraft and rain scatter, which can carry a path that this report fails",
     "multipath fading",
     "crossed or tilted polarization",

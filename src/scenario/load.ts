@@ -15,12 +15,13 @@ export type Loaded =
 /**
  * Reads a scenario and checks all of it.
  *
- * @param pathOrText  path of a YAML file, or the YAML itself (anything with a line break or ": " in it)
+ * @param pathOrText  path of a YAML file, or the YAML itself (anything with a line break or ": " in it, unless it
+ *                    starts as a path does: / ./ ../)
  * @returns the scenario in canonical units, or every fault of the file with its line and column (from 1)
  * @throws nothing for a bad file: an unreadable one is a diagnostic at line 1
  */
 export async function loadScenario(pathOrText: string): Promise<Loaded> {
-  const isText = /\n|:\s/.test(pathOrText) || pathOrText.trim() === "";
+  const isText = !/^\.{0,2}\//.test(pathOrText) && (/\n|:\s/.test(pathOrText) || pathOrText.trim() === "");
   const source = isText ? { text: pathOrText } : readText(pathOrText);
   const diagnostics = source.text === undefined ? [source.fault] : await judge(source.text);
   return Array.isArray(diagnostics) ? { diagnostics: inOrder(diagnostics) } : { scenario: diagnostics };

@@ -74,6 +74,7 @@ const handover: Readonly<Partial<Record<QuantityKind, string>>> = {
   temperatureC: "K",
   temperatureK: "K",
   pressureHPa: "hPa",
+  densityGcm3: "g/cm^3",
   densityGm3: "g/m^3",
   speedMPerS: "m/s",
   durationMin: "min",

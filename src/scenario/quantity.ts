@@ -25,6 +25,7 @@ export type QuantityKind =
   | "temperatureK"
   | "pressureHPa"
   | "percent"
+  | "densityGcm3"
   | "densityGm3"
   | "speedMPerS"
   | "durationMin"
@@ -87,7 +88,7 @@ export const kinds: Readonly<Record<QuantityKind, Kind>> = {
   lengthM: kind("a length", "60 cm, 5 ft or 412 m", "m", "cm", "ft"),
   distanceKm: kind("a distance", "8 km or 5 mi", "km", "mi", "m"),
   powerDbm: kind("a power", "3 W, 200 mW or 34.8 dBm", "dBm", "W", "mW"),
-  levelDb: kind("a ratio", "0.25 dB", "dB"),
+  levelDb: kind("a loss or ratio", "0.25 dB", "dB"),
   gainDbi: kind("an antenna gain", "34.5 dBi or 32.4 dBd", "dBi", "dBd"),
   angleDeg: kind("an angle", "0.5 deg", "deg", "mrad"),
   rainRateMmPerH: kind("a rain rate", "16 mm/h or 0.6 in/h", "mm/h", "in/h"),
@@ -95,6 +96,7 @@ export const kinds: Readonly<Record<QuantityKind, Kind>> = {
   temperatureK: kind("a temperature", "200 K", "K"),
   pressureHPa: kind("a pressure", "1013 hPa or 29.92 inHg", "hPa", "kPa", "inHg"),
   percent: { expected: "a percentage, such as 90 %", usual: ["%"] },
+  densityGcm3: kind("a density", "0.3 g/cm3 or 300 kg/m3", "g/cm3", "kg/m3"),
   densityGm3: kind("a density", "0.05 g/m3", "g/m3", "kg/m3"),
   speedMPerS: kind("a speed", "12 m/s, 43 km/h or 23 kn", "m/s", "km/h", "kn"),
   durationMin: kind("a duration", "30 min or 2 h", "min", "h", "s"),

@@ -7,8 +7,8 @@ import { instead } from "./wording.ts";
 /** Wind that drives rain against an upright cover where the scenario names none [m/s]: common practice, no source. */
 const RAINY_WIND_M_PER_S = 4;
 
-/** Density of snow where the scenario names none: settled snow, common practice, no source [g/m3]. */
-const USUAL_SNOW_G_PER_M3 = 300_000;
+/** Density of snow where the scenario names none: settled snow, common practice, no source [g/cm3]. */
+const USUAL_SNOW_G_PER_CM3 = 0.3;
 
 const rate = (about: string) => quantity("rainRateMmPerH", { about, range: [0, 400] });
 const stretch = (about: string) => quantity("distanceKm", { about, range: [0.01, 1000] });
@@ -16,18 +16,20 @@ const stretch = (about: string) => quantity("distanceKm", { about, range: [0.01,
 const snow = group(
   {
     depth: quantity("thicknessMm", { about: "depth of the snow", range: [0.1, 2000] }),
-    density: quantity("densityGm3", {
+    density: quantity("densityGcm3", {
       about: "density of the snow when dry",
-      range: [20_000, 916_000],
+      range: [0.02, 0.916],
     }).optional(),
     wetness: quantity("percent", { about: "liquid water in it by volume", range: [0, 30] }).optional(),
   },
   "snow on the covers: depth, density, wetness",
-).transform(({ depth: depthMm, density = USUAL_SNOW_G_PER_M3, wetness: wetnessPercent = 0 }) => ({
-  depthMm,
-  dryDensityGcm3: density / 1e6,
-  wetnessPercent,
-}));
+).transform(
+  ({ depth: depthMm, density: dryDensityGcm3 = USUAL_SNOW_G_PER_CM3, wetness: wetnessPercent = 0 }) => ({
+    depthMm,
+    dryDensityGcm3,
+    wetnessPercent,
+  }),
+);
 
 /** One weather to judge the path in; `{}` is dry, of the reference atmosphere. */
 export const weatherSchema = group(

@@ -1,10 +1,13 @@
 import { evaluate } from "../budget/evaluate.ts";
+import { mouthWidthMm, sheetOf } from "../budget/mouthpiece.ts";
 import type { Budget, Case, CoverState, Link, PathGeometry, Verdict, Warning } from "../budget/types.ts";
+import { bandRipple } from "../cover/bandRipple.ts";
 import { type Bounded, plus } from "../cover/bounded.ts";
 import { type Fixing, fixingOf } from "../cover/fixing.ts";
 import { findMaterial, type Material } from "../cover/materials.ts";
+import { collectedShare } from "../cover/nearMouth.ts";
 import { powerToDb } from "../numeric/decibels.ts";
-import type { Cover } from "../scenario/types.ts";
+import type { Cover, EndName, Scenario } from "../scenario/types.ts";
 import { type BreakEven, breakEven, rainiest } from "./breakEven.ts";
 
 /** Where a cover sits while it is judged. */
@@ -44,6 +47,8 @@ export interface CoverJudgement {
   readonly rows: readonly CoverRow[];
   /** The layers, feed side first. */
   readonly durability: readonly Durability[];
+  /** Swing of the dry cover's loss over the band at each end, peak to peak [dB]; undefined for a measured cover. */
+  readonly rippleDb: { readonly transmitter: number; readonly receiver: number } | undefined;
   /** Repeatability below which its dry cost cannot be told from nothing, both ends together [dB]. */
   readonly repeatabilityDb: number;
   readonly breakEven: BreakEven;
@@ -59,10 +64,15 @@ export interface CoverVerdict {
   readonly worstWeather: string;
   /** The weather that break-even rates are sought in. */
   readonly rainWeather: string;
+  /** Width of the band in which the ripple is sought [GHz]. */
+  readonly bandGHz: number;
   /** Best first, by the margin left in the worst weather with the cover at both ends; bare among them. */
   readonly covers: readonly CoverJudgement[];
   readonly warnings: readonly Warning[];
 }
+
+/** Band of a cover that nobody stated, as a share of the frequency: own choice. */
+const USUAL_BAND_SHARE = 0.02;
 
 /** A with/without test in free air repeats to about this [dB]: common practice, no source. */
 const BENCH_REPEATABILITY_DB = 0.05;
@@ -72,8 +82,14 @@ const BENCH_REPEATABILITY_DB = 0.05;
  *
  * @param mode      name of a mode of the link
  * @param weathers  names of weathers of the link, at least one
+ * @param bandGHz   band in which the ripple is sought [GHz]
  */
-export function coverVerdict(link: Link, mode: string, weathers: readonly string[]): CoverVerdict {
+export function coverVerdict(
+  link: Link,
+  mode: string,
+  weathers: readonly string[],
+  bandGHz = USUAL_BAND_SHARE * link.scenario.frequencyGHz,
+): CoverVerdict {
   const { scenario, path } = link;
   const warnings = new Map<string, Warning>();
   const budgetOf = (weather: string, placing: Placing, cover: string): Budget => {
@@ -98,6 +114,7 @@ export function coverVerdict(link: Link, mode: string, weathers: readonly string
       durability: cover.layers
         .filter(({ material }) => material !== "air")
         .map(({ material }) => durabilityOf(material)),
+      rippleDb: rippleOf(scenario, cover, bandGHz),
       repeatabilityDb: repeatabilityOf(cover),
       breakEven: breakEven(link, caseOf(link, rainWeather, "both", name, mode)),
     };
@@ -112,6 +129,7 @@ export function coverVerdict(link: Link, mode: string, weathers: readonly string
     weathers,
     worstWeather,
     rainWeather,
+    bandGHz,
     covers: covers.toSorted((a, b) => left(b) - left(a)),
     warnings: [...warnings.values()],
   };
@@ -143,6 +161,31 @@ function rowOf(weather: string, placing: Placing, budget: Budget, bare: Budget):
     bareMarginDb: bare.marginDb,
     bareVerdict: bare.verdict,
   };
+}
+
+/** Each end's feed under the dry cover, straight on, swept over the band. */
+function rippleOf(scenario: Scenario, cover: Cover, bandGHz: number): CoverJudgement["rippleDb"] {
+  const { frequencyGHz } = scenario;
+  if (cover.measured) return undefined;
+  const layers = cover.layers.map(({ thicknessMm, permittivity, lossTangent }) => ({
+    thicknessMm,
+    permittivity: permittivity.nominal,
+    lossTangent: lossTangent.nominal,
+  }));
+  const at = (end: EndName) => {
+    const feed = scenario.feeds[scenario[end].feed]!;
+    const near = { frequencyGHz, apertureMm: mouthWidthMm(feed), gapMm: cover.gapMm };
+    return bandRipple({
+      frequencyGHz,
+      bandGHz,
+      sheetAt: (swept) => sheetOf(swept, layers),
+      feedReturnLossDb: feed.returnLossDb,
+      phaseDeg: feed.phaseDeg,
+      gapMm: cover.gapMm,
+      ...collectedShare(near),
+    }).rippleDb;
+  };
+  return { transmitter: at("transmitter"), receiver: at("receiver") };
 }
 
 function durabilityOf(name: string): Durability {
