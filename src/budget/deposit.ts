@@ -2,9 +2,12 @@ import { type Bounded, exactly } from "../cover/bounded.ts";
 import { filmAfterRain } from "../cover/drying.ts";
 import { icePermittivity } from "../cover/icePermittivity.ts";
 import { type Layer, layerOf } from "../cover/layeredSheet.ts";
-import { snowPermittivity } from "../cover/snowPermittivity.ts";
+import { snowPermittivity, wetSnowValidity } from "../cover/snowPermittivity.ts";
 import { type WaterFilmInput, waterFilm, waterLayer } from "../cover/waterFilm.ts";
+import { outside } from "../numeric/check.ts";
 import type { Snow } from "../scenario/types.ts";
+import { overreachWarning } from "./overreach.ts";
+import type { Warning } from "./types.ts";
 
 /** What the weather has put on the covers of an end. */
 export interface Wetness {
@@ -27,9 +30,9 @@ export type Surface = Pick<WaterFilmInput, "shape" | "sizeM" | "tiltDeg">;
 export interface Deposit {
   readonly noun: "water" | "ice" | "snow";
   readonly filmMm: Bounded;
-  readonly standing: boolean;
   readonly layersAt: (filmMm: number) => Layer[];
   readonly source: string;
+  readonly warnings: readonly Warning[];
 }
 
 /** Fall speed of rain drops [m/s]: common practice, no source. */
@@ -40,7 +43,7 @@ export function isDry({ rainRateMmPerH, dewMm, iceMm, snow }: Wetness): boolean 
 }
 
 /** Ice next to the cover, snow upon it, water outermost: the thicker of rain's film, dried since, and dew. */
-export function depositOn(frequencyGHz: number, surface: Surface, wetness: Wetness): Deposit {
+export function depositOn(frequencyGHz: number, surface: Surface, wetness: Wetness, where: string): Deposit {
   const { rainRateMmPerH, windMPerS, temperatureC, driedForMin, dewMm, iceMm, snow } = wetness;
   const windRatio = windMPerS / DROP_FALL_M_PER_S;
   const rain = waterFilm({ ...surface, windRatio, rainRateMmPerH, temperatureC });
@@ -50,10 +53,19 @@ export function depositOn(frequencyGHz: number, surface: Surface, wetness: Wetne
       : exactly(rain.meanMm);
   const larger = (figure: keyof Bounded) => Math.max(left[figure], dewMm[figure]);
   const frozen: Layer[] = [];
+  const warnings: Warning[] = [];
+  if (rain.standing) {
+    const message = "the cover lies too level to drain: water stands on it";
+    warnings.push({ code: "standing_water", message, where });
+  }
   if (iceMm > 0)
     frozen.push(layerOf(icePermittivity({ frequencyGHz, temperatureC: Math.min(0, temperatureC) }), iceMm));
   if (snow !== undefined) {
     const { depthMm, dryDensityGcm3, wetnessPercent } = snow;
+    if (wetnessPercent > 0) {
+      const overreach = outside(wetSnowValidity, { frequencyGHz, dryDensityGcm3, wetnessPercent });
+      warnings.push(...overreach.map(overreachWarning("wet snow on a cover", "weather")));
+    }
     const state = { frequencyGHz, temperatureC: Math.min(0, temperatureC), dryDensityGcm3, wetnessPercent };
     const { real, imaginary } = snowPermittivity(state);
     // Beyond the densities of its measurements the fit falls below that of air.
@@ -63,16 +75,18 @@ export function depositOn(frequencyGHz: number, surface: Surface, wetness: Wetne
   return {
     noun: snow !== undefined ? "snow" : iceMm > 0 ? "ice" : "water",
     filmMm: { low: larger("low"), nominal: larger("nominal"), high: larger("high") },
-    standing: rain.standing,
     layersAt: (thicknessMm) => [
       ...frozen,
       ...(thicknessMm > 0 ? [waterLayer({ thicknessMm, frequencyGHz, temperatureC: waterC })] : []),
     ],
     source:
       snow !== undefined
-        ? "snow layer, Hallikainen, Ulaby, Abdelrazik 1986"
+        ? snow.wetnessPercent > 0
+          ? "wet snow layer, Hallikainen, Ulaby, Abdelrazik 1986"
+          : "dry snow layer, Ulaby & Long 2014"
         : iceMm > 0
           ? "ice layer, Matzler & Wegmuller 1987, Hufford 1991"
           : "water film, Nusselt flow; P.840-9",
+    warnings,
   };
 }

@@ -19,20 +19,21 @@ export function evaluate(link: Link, chosen: Case): Budget {
   const sent = mouthAt(transmitter, chosen.transmitter.cover, chosen.weather);
   const heard = mouthAt(receiver, chosen.receiver.cover, chosen.weather);
 
-  const dishCover = have(receiver.dishCover, chosen.weather, "weather");
+  const overSender = have(transmitter.dishCover, chosen.weather, "weather");
+  const overReceiver = have(receiver.dishCover, chosen.weather, "weather");
   const entries = [
     transmitter.power!,
     transmitter.line,
     ...sent.entries,
     ...transmitter.antenna,
-    ...have(transmitter.dishCover, chosen.weather, "weather").entries,
+    ...overSender.entries,
     ...weather.entries,
-    ...dishCover.entries.toReversed(),
+    ...overReceiver.entries.toReversed(),
     ...receiver.antenna,
     ...heard.entries.toReversed(),
     receiver.line,
   ];
-  const noise = noiseSide(scenario.receiver, mode, weather, heard, dishCover);
+  const noise = noiseSide(scenario.receiver, mode, weather, heard, overReceiver);
   const requiredSnrDb = requiredSnrInBandwidth(mode);
   const heading = {
     id: "mode.required",
@@ -73,6 +74,8 @@ export function evaluate(link: Link, chosen: Case): Budget {
       ...weather.warnings,
       ...sent.warnings,
       ...heard.warnings,
+      ...overSender.warnings,
+      ...overReceiver.warnings,
     ],
   };
 }

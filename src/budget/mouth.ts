@@ -6,6 +6,7 @@ import { equivalentLayer, measuredCover } from "../cover/measuredCover.ts";
 import { type NearMouth, nearMouth } from "../cover/nearMouth.ts";
 import { gammaOfReturnLoss, mismatchLossDb } from "../cover/reflectionFigures.ts";
 import { wavelengthM } from "../numeric/constants.ts";
+import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, CoverLayer, Feed } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
 import { isDry, type Wetness } from "./deposit.ts";
@@ -18,8 +19,6 @@ import { type WaterCost, waterOnCover } from "./waterOnCover.ts";
 const RETURN_LOSS_DOUBT_DB = 2;
 /** Loss tangents and thicknesses scatter: share of the dissipation, common practice, no source. */
 const DISSIPATION_SIGMA_SHARE = 0.4;
-/** A with/without test in free air repeats to about this [dB]: common practice, no source. */
-export const BENCH_REPEATABILITY_DB = 0.05;
 /** Where a change of return loss stops that asks for more than the feed has: it was read on a better feed. */
 const LEAST_RETURN_LOSS_DB = 0.1;
 /** A film's loss is good to a factor of two each way: common practice, no source. */
@@ -166,24 +165,10 @@ function layeredDry(mouth: Mouthpiece, feedMismatchDb: number, where: string): D
 
 /** Where a stack leaves the range in which a plane wave through layers can be trusted. */
 function layerWarnings({ frequencyGHz, cover }: Mouthpiece, near: NearMouth, where: string): Warning[] {
-  const waveMm = 1000 * wavelengthM(frequencyGHz);
-  const warnings: Warning[] = [];
-  const warn = (code: string, message: string) => warnings.push({ code, message, where });
-  for (const { material, thicknessMm } of cover.layers) {
-    if (thicknessMm === 0)
-      warn("zero_thickness", `the layer of ${material} has no thickness and does nothing`);
-    if (thicknessMm > 10 * waveMm) {
-      warn(
-        "thick_layer",
-        `the layer of ${material} is more than ten wavelengths thick (${Math.round(10 * waveMm)} mm)`,
-      );
-    }
-  }
-  if (cover.gapMm > 10 * waveMm) {
-    warn(
-      "gap_beyond_model",
-      `a gap of ${cover.gapMm} mm is more than ten wavelengths: the feed's beam has spread by then`,
-    );
+  const warnings = thicknessWarnings(frequencyGHz, cover, where);
+  if (cover.gapMm > 10_000 * wavelengthM(frequencyGHz)) {
+    const message = `a gap of ${cover.gapMm} mm is more than ten wavelengths: the feed's beam has spread by then`;
+    warnings.push({ code: "gap_beyond_model", message, where });
   }
   if (near.weak) {
     const doubt = "take a cover's loss to 0.1 dB or a third of it, its return loss to 2 dB";
@@ -192,7 +177,24 @@ function layerWarnings({ frequencyGHz, cover }: Mouthpiece, near: NearMouth, whe
   return warnings;
 }
 
-function layerAt({ permittivity, lossTangent, thicknessMm }: CoverLayer, figure: keyof Bounded): Layer {
+/** Layers that do nothing, or that are thicker than any cover. */
+export function thicknessWarnings(frequencyGHz: number, { layers }: Cover, where: string): Warning[] {
+  const mostMm = 10_000 * wavelengthM(frequencyGHz);
+  return layers.flatMap(({ material, thicknessMm }) => {
+    if (thicknessMm === 0) {
+      const message = `the layer of ${material} has no thickness and does nothing`;
+      return { code: "zero_thickness", message, where };
+    }
+    if (thicknessMm <= mostMm) return [];
+    const message = `the layer of ${material} is more than ten wavelengths thick (${Math.round(mostMm)} mm)`;
+    return { code: "thick_layer", message, where };
+  });
+}
+
+export function layerAt(
+  { permittivity, lossTangent, thicknessMm }: CoverLayer,
+  figure: keyof Bounded,
+): Layer {
   return { permittivity: permittivity[figure], lossTangent: lossTangent[figure], thicknessMm };
 }
 
@@ -221,7 +223,7 @@ function measuredDry(mouth: Mouthpiece, feedMismatchDb: number, where: string): 
     dissipationSigmaDb: 0,
     layers,
     covered: { ...covered, returnLossDb: exactly(split.coveredReturnLossDb) },
-    source: "measured, scenario",
+    source: `measured, ${cover.measured!.source ?? "scenario"}`,
     warnings: [...contradictions(feed, cover, where), ...outsideModel(insertionDb, sigma, modelled, where)],
   };
 }

@@ -93,6 +93,7 @@ function prepareEnd(
   const feed = scenario.feeds[feedName]!;
   const { lineLossDb, dish: dishName, dishCover } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
+  const diameterM = dish?.diameterM ?? USUAL_DISH_M;
   const heading = endHeading(end);
   const antenna = antennaEntries(heading, frequencyGHz, feed, dish);
   const lineSigma = lineLossDb.sigma ?? Math.min(LINE_SIGMA_DB, lineLossDb.value / 2);
@@ -109,7 +110,7 @@ function prepareEnd(
     dishCoverOver:
       dishCover === undefined
         ? () => NO_DISH_COVER
-        : dishCoverOver(heading, frequencyGHz, covers[dishCover]!, dish?.diameterM ?? USUAL_DISH_M, gamma),
+        : dishCoverOver(heading, frequencyGHz, covers[dishCover]!, dishCover, diameterM, gamma),
     mouth: mapValues(mouths, () => ({})),
     dishCover: {},
     warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),

@@ -1,16 +1,14 @@
 import { BEAD_HEIGHT_MM, beadedSheet } from "../cover/beads.ts";
-import { type Bounded, bounded, plus } from "../cover/bounded.ts";
+import { type Bounded, bounded, exactly, plus } from "../cover/bounded.ts";
 import type { CoveredFeed } from "../cover/coveredFeed.ts";
 import type { Layer } from "../cover/layeredSheet.ts";
-import type { Wetting } from "../cover/materials.ts";
-import { type SurfaceCare, surfaceState } from "../cover/surfaceState.ts";
+import { surfaceState } from "../cover/surfaceState.ts";
 import { waterLayer } from "../cover/waterFilm.ts";
-import { type WetAntennaInput, wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
-import type { WetModel } from "../cover/wetModels.ts";
 import { abs } from "../numeric/complex.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
 import { type Deposit, depositOn, type Wetness } from "./deposit.ts";
 import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
+import { publishedWater, waterModelOf } from "./publishedWater.ts";
 import type { Warning } from "./types.ts";
 
 /** What water, ice or snow adds to a dry cover. */
@@ -24,18 +22,6 @@ export interface WaterCost {
   readonly filmMm: number;
   readonly source: string;
   readonly warnings: readonly Warning[];
-}
-
-const STEADY_RAIN_MIN = 60;
-
-/** Loss of a film over that of the same rain on a fresh repellent surface: Merceret & Ward 2000. */
-const REPELLENT_GAIN = 2.9;
-
-/** How a kept surface behaves: weather takes it one step towards wetting, a repellent coat makes it bead. */
-function behaviour(surface: Wetting, care: SurfaceCare): Wetting {
-  if (care === "treated") return "beading";
-  if (care === "new") return surface;
-  return surface === "beading" ? "mixed" : "wetting";
 }
 
 /**
@@ -54,61 +40,52 @@ export function waterOnCover(
   where: string,
 ): WaterCost {
   const { frequencyGHz, feed, cover } = mouth;
-  const deposit = depositOn(frequencyGHz, surfaceOf(mouth), wetness);
+  const deposit = depositOn(frequencyGHz, surfaceOf(mouth), wetness, where);
   const { filmMm, noun } = deposit;
   const coveredAt = (thicknessMm: number) => {
     const sheet = sheetBefore(mouth, [...dryLayers, ...deposit.layersAt(thicknessMm)]);
     return { sheet, covered: cascade(mouth, sheet) };
   };
-  const { sheet, covered: wet } = coveredAt(filmMm.nominal);
+  const { covered: wet } = coveredAt(filmMm.nominal);
   const ends = filmMm.low === filmMm.high ? [] : [filmMm.low, filmMm.high].map((mm) => coveredAt(mm).covered);
   const full = difference(dry, wet, ends);
-  const standing: Warning[] = deposit.standing
-    ? [{ code: "standing_water", message: "the cover lies too level to drain: water stands on it", where }]
-    : [];
-  const common = { noun, phaseSpreadDb: wet.phaseSpreadDb, filmMm: filmMm.nominal, warnings: standing };
+  const common = {
+    noun,
+    phaseSpreadDb: wet.phaseSpreadDb,
+    filmMm: filmMm.nominal,
+    warnings: deposit.warnings,
+  };
 
-  const surface = behaviour(cover.surface, cover.state);
-  const model: WetModel = cover.wetModel ?? (surface === "wetting" ? "film" : "merceret2000");
-  const { form, coveredShare } = surfaceState({ wetting: cover.surface, care: cover.state });
-  if (noun !== "water" || model === "film" || (model === "beads" && form === "film")) {
+  const model = waterModelOf(cover);
+  if (noun !== "water" || model === "film") {
     return { ...common, ...full, returnLossDb: wet.returnLossDb, source: deposit.source };
   }
 
   // A published figure knows no phase, so the film that caps it is taken over all phases.
   const dryPass = abs(sheetBefore(mouth, dryLayers).transmission);
-  const filmDb = Math.max(0, amplitudeToDb(dryPass / abs(sheet.transmission)));
+  const filmDb = (thicknessMm: number) =>
+    thicknessMm === 0
+      ? 0
+      : Math.max(0, amplitudeToDb(dryPass / abs(coveredAt(thicknessMm).sheet.transmission)));
   if (model === "beads") {
     return {
       ...common,
-      ...beads(mouth, dryLayers, dry, wetness, coveredShare, filmDb),
+      ...beads(mouth, dryLayers, dry, wetness, filmDb(filmMm.nominal)),
       source: "drops by covered share",
     };
   }
   const whole = full.mismatchDb.high + full.dissipationDb.high;
-  const published = publishedLoss(model, frequencyGHz, wetness, filmDb);
-  const chosen = cover.wetModel !== undefined;
-  const shed = Math.min(published.lossDb, filmDb);
-  const nominal = chosen ? published.lossDb : surface === "mixed" ? (shed + filmDb) / 2 : shed;
+  const published = publishedWater(model, cover, frequencyGHz, wetness, filmMm.nominal, filmDb);
   return {
     ...common,
     // A published figure does not say how much of it is reflection: all of it counts as heat, so as noise too.
-    mismatchDb: { low: 0, nominal: 0, high: 0 },
-    dissipationDb: bounded(0, nominal, whole),
+    mismatchDb: exactly(0),
+    dissipationDb: bounded(0, published.lossDb, whole),
     phaseSpreadDb: dry.phaseSpreadDb,
     returnLossDb: bounded(wet.returnLossDb.low, dry.returnLossDb.nominal, dry.returnLossDb.high),
     filmMm: 0,
-    source: !chosen && surface === "mixed" ? `mean of water film and ${published.source}` : published.source,
-    warnings: published.extrapolated
-      ? [
-          {
-            code: "wet_model_range",
-            message: `water on a cover by the model ${model}, ${published.range}: trust it to a factor of two`,
-            where: "covers",
-          },
-          ...standing,
-        ]
-      : standing,
+    source: published.source,
+    warnings: [...published.warnings, ...deposit.warnings],
   };
 
   function surfaceOf({ cover: { domeRadiusMm, slopeMm } }: Mouthpiece) {
@@ -127,10 +104,10 @@ function beads(
   dryLayers: readonly Layer[],
   dry: CoveredFeed,
   { temperatureC }: Wetness,
-  coveredShare: Bounded,
   filmDb: number,
 ) {
-  const { frequencyGHz } = mouth;
+  const { frequencyGHz, cover } = mouth;
+  const { coveredShare } = surfaceState({ wetting: cover.surface, care: cover.state });
   const drops = waterLayer({
     thicknessMm: BEAD_HEIGHT_MM,
     frequencyGHz,
@@ -163,35 +140,6 @@ function beads(
     phaseSpreadDb: wet.phaseSpreadDb,
     returnLossDb: wet.returnLossDb,
     filmMm: 0,
-  };
-}
-
-function publishedLoss(
-  model: Exclude<WetModel, "film" | "beads">,
-  frequencyGHz: number,
-  { rainRateMmPerH, driedForMin, pathRainDb: attenuationDb }: Wetness,
-  filmDb: number,
-) {
-  const rain = { frequencyGHz, rainRateMmPerH };
-  const input: Record<typeof model, WetAntennaInput> = {
-    leijnse2008: { model: "leijnse2008", ...rain },
-    pastorek2022: { model: "pastorek2022", ...rain },
-    kharadly2001: { model: "kharadly2001", attenuationDb, ...rain },
-    merceret2000: { model: "merceret2000", surface: "hydrophobic", ...rain },
-    // Steady rain: long enough for the antennas to be as wet as they get.
-    schleiss2013: { model: "schleiss2013", attenuationDb, wetMinutes: STEADY_RAIN_MIN, ...rain },
-    constant: { model: "constant", ...rain },
-  };
-  const { lossDb, ends, extrapolated } = wetAntennaLoss(input[model]);
-  const { source, range } = wetAntennaModels.find(({ name }) => name === model)!;
-  const [low, high] = range.frequencyGHz;
-  const oneEnd = ends === "both" ? lossDb / 2 : lossDb;
-  return {
-    // The models know falling rain; dew, or what a shower left, is taken as a film shed by that surface.
-    lossDb: rainRateMmPerH > 0 && driedForMin === 0 ? oneEnd : filmDb / REPELLENT_GAIN,
-    source,
-    extrapolated,
-    range: `fitted at ${low === high ? low : `${low} to ${high}`} GHz, carried on to ${frequencyGHz} GHz`,
   };
 }
 

@@ -7,6 +7,7 @@ import { type Fixing, fixingOf } from "../cover/fixing.ts";
 import { findMaterial, type Material } from "../cover/materials.ts";
 import { collectedShare } from "../cover/nearMouth.ts";
 import { powerToDb } from "../numeric/decibels.ts";
+import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, EndName, Scenario } from "../scenario/types.ts";
 import { type BreakEven, breakEven, rainiest } from "./breakEven.ts";
 
@@ -73,9 +74,6 @@ export interface CoverVerdict {
 
 /** Band of a cover that nobody stated, as a share of the frequency: own choice. */
 const USUAL_BAND_SHARE = 0.02;
-
-/** A with/without test in free air repeats to about this [dB]: common practice, no source. */
-const BENCH_REPEATABILITY_DB = 0.05;
 
 /**
  * Which cover: every cover of the scenario in every asked weather, at one end and at both, against bare mouths.
