@@ -82,7 +82,7 @@ describe("a scenario with a slip", () => {
     );
     const { stderr } = oilskin(["check", file]);
     const lines = stderr.split("\n").map((line) => Number(line.slice(file.length + 1).split(":")[0]));
-    expect(lines.slice(0, 3)).toEqual([6, 29, 49]);
+    expect(lines.slice(0, 3)).toEqual([6, 29, 55]);
     expect(stderr).toContain("3 faults; nothing was computed");
   });
 

@@ -6,8 +6,8 @@ import { oilskin, scenarioFile, scenarioNames } from "./run.ts";
 /** Covers, weathers and modes of each scenario, the mixed ends counted as a cover; read off the files by eye. */
 const shape = {
   "hilltop-contest": { choices: 5, weathers: 4, modes: 2 },
-  "coast-beacon": { choices: 5, weathers: 4, modes: 2 },
-  "town-link": { choices: 4, weathers: 4, modes: 1 },
+  "coast-beacon": { choices: 5, weathers: 6, modes: 2 },
+  "town-link": { choices: 4, weathers: 6, modes: 1 },
 } as const;
 
 const sum = (values: readonly number[]) => values.reduce((a, b) => a + b, 0);

@@ -115,7 +115,8 @@ describe("--require", () => {
   });
 
   it("thin lets a thin case pass, and none that fails", () => {
-    expect(statusOf(demo, ...storm, "--require", "thin")).toBe(0);
+    expect(statusOf(demo, ...storm, "--cover", "film", "--require", "thin")).toBe(0);
+    expect(statusOf(demo, ...storm, "--cover", "sheet", "--require", "thin")).toBe(3);
     expect(statusOf(weak, ...dry, "--require", "thin")).toBe(3);
   });
 

@@ -79,7 +79,7 @@ describe("the table of entries", () => {
 
   it("raises the noise where the receiver adds to it", () => {
     expect(rowOf(table, "thermal")).toEqual(["thermal", "-140.0", "-140.0"]);
-    expect(rowOf(table, "receiver")).toEqual(["receiver", "-2.0", "-138.0", "-2.0", "-138.0"]);
+    expect(rowOf(table, "receiver")).toEqual(["receiver", "2.0", "-138.0", "2.0", "-138.0"]);
   });
 
   it("ends with the results of each weather", () => {

@@ -18,6 +18,7 @@ function written(outcomes: readonly Outcome[]) {
     case: { weather, mode: "cw", transmitter: { feed: "stub", cover }, receiver: { feed: "stub", cover } },
     marginDb,
     marginSigmaDb: 2,
+    holdProbability: marginDb === 1 ? 0.69 : 0.99,
     verdict,
   }));
   const report: MarginReport = { ...rest, budgets };
@@ -30,7 +31,9 @@ describe("the answer", () => {
     return answer(report, link).replace(/\s+/g, " ").trim();
   };
 
-  it("groups the weathers by verdict, the good news first", () => {
+  const granted = "Line of sight is taken: no hill, tree or building in the way.";
+
+  it("groups the weathers by verdict, the bad news first", () => {
     expect(
       answerTo(
         ["film", "storm", -3.21, "fails"],
@@ -39,7 +42,8 @@ describe("the answer", () => {
         ["film", "rain", 1, "thin"],
       ),
     ).toBe(
-      "CW by ear closes in dry (20.0 dB) and drizzle (9.5 dB), is thin in rain (1.0 dB) and fails in storm (-3.2 dB).",
+      "CW by ear fails in storm (-3.2 dB), is thin in rain (1.0 dB, holds with 69 %) and closes in dry (20.0 dB) " +
+        `and drizzle (9.5 dB). ${granted}`,
     );
   });
 
@@ -51,11 +55,11 @@ describe("the answer", () => {
         ["bare", "rain", 7.5, "closes"],
         ["bare", "dry", 20, "closes"],
       ),
-    ).toMatch(/ The cover \(film\) takes 0\.1 dB in dry and 2\.5 dB in rain, both ends together\.$/);
+    ).toMatch(/ The cover \(film\) takes 0\.1 dB in dry and 2\.5 dB in rain, both ends together\. Line/);
   });
 
   it("has no cost to tell of a bare mouth", () => {
-    expect(answerTo(["bare", "dry", 19.9, "closes"])).toBe("CW by ear closes in dry (19.9 dB).");
+    expect(answerTo(["bare", "dry", 19.9, "closes"])).toBe(`CW by ear closes in dry (19.9 dB). ${granted}`);
   });
 
   it("says where nothing was asked", () => {
