@@ -65,13 +65,22 @@ function filled(solid: Pick<CoverLayer, "permittivity" | "lossTangent">, solidSh
 
 const measured = group(
   {
-    insertion_loss: uncertain("levelDb", { about: "measured insertion loss", range: [-10, 60] }),
+    insertion_loss: uncertain("levelDb", { about: "measured insertion loss", range: [-10, 60] }).optional(),
     return_loss_change: uncertain("levelDb", {
       about: "bare return loss less covered return loss, positive where the cover spoils the match",
       range: [-60, 60],
     }).optional(),
+    source: text("where the figures come from, such as the file of the readings").optional(),
+    // `coverReadings.ts` has put figures in its place before this schema sees it.
+    readings: text(
+      "the path of a table of readings, from this file's folder, in place of figures",
+    ).optional(),
   },
-  "a measured cover: insertion_loss, return_loss_change",
+  "a measured cover: insertion_loss, return_loss_change, source, or readings",
+  (has) =>
+    has("insertion_loss") || has("readings")
+      ? undefined
+      : "missing insertion_loss (or readings, a table of them), expected a ratio with a unit, such as 0.25 dB",
 );
 
 /** A cover of a feed's mouth; with neither layers nor readings it is bare. */
@@ -114,9 +123,10 @@ export const coverSchema = group(
     const outermost = layers.at(-1);
     return {
       layers,
-      measured: measured && {
+      measured: measured?.insertion_loss && {
         insertionLossDb: measured.insertion_loss,
         returnLossChangeDb: measured.return_loss_change,
+        source: measured.source,
       },
       surface: surface ?? (outermost && findMaterial(outermost.material)?.wetting) ?? "mixed",
       state,

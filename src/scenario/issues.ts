@@ -1,6 +1,5 @@
 import type * as z from "zod";
 import type { FaultPath } from "./positions.ts";
-import { scenarioSchema } from "./schema.ts";
 import { didYouMean, listed, shown } from "./wording.ts";
 
 /** A fault at a place in the file, before line and column are known. */
@@ -10,11 +9,11 @@ export interface Fault {
   readonly path: FaultPath;
 }
 
-/** A schema's issue in our words; one unknown key, one fault. */
-export function faultsOf(issue: z.core.$ZodIssue): Fault[] {
+/** An issue of a schema in our words; one unknown key, one fault. */
+export function faultsOf(issue: z.core.$ZodIssue, schema: z.core.$ZodType): Fault[] {
   const { path, message } = issue;
   if (issue.code === "unrecognized_keys") {
-    const known = keysAt(path);
+    const known = keysAt(path, schema);
     return issue.keys.map((key) => ({
       code: "unknown_key",
       message: `unknown key ${shown(key)}, expected ${listed(known)}${didYouMean(key, known)}`,
@@ -27,8 +26,8 @@ export function faultsOf(issue: z.core.$ZodIssue): Fault[] {
 }
 
 /** The keys that the group at a path may have: a walk through the schema along the path. */
-function keysAt(path: FaultPath): string[] {
-  let node = scenarioSchema as z.core.$ZodType as z.core.$ZodTypes;
+function keysAt(path: FaultPath, schema: z.core.$ZodType): string[] {
+  let node = schema as z.core.$ZodTypes;
   const into = (schema: z.core.$ZodType) => {
     node = schema as z.core.$ZodTypes;
   };

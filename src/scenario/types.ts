@@ -110,6 +110,8 @@ export interface CoverLayer {
 export interface MeasuredCover {
   readonly insertionLossDb: Uncertain;
   readonly returnLossChangeDb?: Uncertain | undefined;
+  /** Where the figures come from; the scenario where not given. */
+  readonly source?: string | undefined;
 }
 
 export interface Cover {

@@ -30,3 +30,8 @@ export function listed(names: readonly string[]): string {
   const some = names.slice(0, MOST_NAMES).map((name) => (name.length > MOST_CHARACTERS ? shown(name) : name));
   return some.join(", ") + (more > 0 ? ` and ${more} more` : "");
 }
+
+/** A message with nothing in it that a terminal would obey. */
+export function visible(message: string): string {
+  return message.replace(/[\p{Cc}\p{Cf}]/gu, (c) => `\\u{${c.codePointAt(0)!.toString(16)}}`);
+}
