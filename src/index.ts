@@ -65,12 +65,26 @@ export { surfaceState } from "./cover/surfaceState.ts";
 export { waterFilm, waterLayer } from "./cover/waterFilm.ts";
 export { wetAntennaLoss, wetAntennaModels } from "./cover/wetAntennaLoss.ts";
 // Path
+export { clearAirLoss } from "./path/clearAir.ts";
+export { rainCrossPolar, rainCrossPolarOutage } from "./path/crossPolar.ts";
+export { deltaBullingtonLoss } from "./path/deltaBullington.ts";
+export { multipathYear, rainYear, shorterPeriodFactor } from "./path/fadingPeriod.ts";
+export { foliageLoss } from "./path/foliage.ts";
 export { freeSpaceLoss } from "./path/freeSpaceLoss.ts";
 export { fresnelRadius } from "./path/fresnelRadius.ts";
 export { geodesicPath, pointAlong } from "./path/geodesic.ts";
 export { earthBulge, horizonDistance, lineOfSightLimit, rayClearance, takeOffAngle } from "./path/horizon.ts";
+export { knifeEdgeLoss } from "./path/knifeEdge.ts";
 export { locatorToPoint, pointToLocator } from "./path/locator.ts";
+export { enhancementNotExceeded } from "./path/multipathEnhancement.ts";
+export { mappedMultipathFade, multipathFade } from "./path/multipathFade.ts";
+export type { Profile } from "./path/profile.ts";
 export { effectiveRainLength, rainFade, rainFadePercent, scaleRainFade } from "./path/rainFade.ts";
+export { rainScatterLoss } from "./path/rainScatter.ts";
+export { smoothEarthLoss } from "./path/smoothEarth.ts";
+export { troposcatterLoss } from "./path/troposcatter.ts";
+export { wetSnowFade, wetSnowPercent } from "./path/wetSnow.ts";
+
 // Receiver and safety
 export { requiredEbN0Db } from "./receiver/digital.ts";
 export { modes, requiredSnrInBandwidth } from "./receiver/modes.ts";
