@@ -1,10 +1,18 @@
 import type { CoverState, Link, Verdict } from "../budget/types.ts";
 import { reflectionFigures } from "../cover/reflectionFigures.ts";
-import type { CoverJudgement, CoverRow, CoverVerdict, Durability } from "../study/coverVerdict.ts";
-import { cell, columns, RULE } from "./columns.ts";
+import type { Weather } from "../scenario/types.ts";
+import { HEAVIEST_MM_PER_H } from "../study/breakEven.ts";
+import {
+  type CoverJudgement,
+  type CoverRow,
+  type CoverVerdict,
+  type Durability,
+  placings,
+} from "../study/coverVerdict.ts";
+import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { meanings, pathLines } from "./marginText.ts";
-import { warningText } from "./notes.ts";
-import { capital, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { handsOnText, warningText } from "./notes.ts";
+import { abreast, capital, listed, type Paint, paragraph, plain, signed, tenth } from "./words.ts";
 
 /** Which cover: one sentence each, best first, then the figures behind it. */
 export function coversText(verdict: CoverVerdict, link: Link, paint: Paint = plain): string {
@@ -13,17 +21,19 @@ export function coversText(verdict: CoverVerdict, link: Link, paint: Paint = pla
     pathLines(verdict, link, paint),
     paragraph(
       `${capital(link.modes[verdict.mode]!.label)}; ` +
-        `best first by the margin left in ${worstWeather}, cover at both ends.`,
+        `best first by the margin left in ${worstWeather}, cover on the feeds of both ends.`,
     ),
+    dishCoverText(link),
     verdict.covers.map((judged, i) => paragraph(sentence(judged, verdict, link), `${i + 1} `)).join("\n"),
     ...weathers.map(
       (weather) => `${paint("strong", weatherTitle(weather, link))}\n${costTable(verdict, weather, paint)}`,
     ),
     `${paint("strong", "Match at the feed: return loss in dB, change against bare, VSWR")}\n${matchTable(verdict)}`,
     rippleText(verdict, paint),
-    `${paint("strong", `Rain that uses the margin up (path and covers, as in ${verdict.rainWeather})`)}\n${breakEvenTable(verdict, link)}`,
+    `${paint("strong", paragraph(`Rain that uses the margin up (path and covers, as in ${verdict.rainWeather})`))}\n${breakEvenTable(verdict, link)}`,
     `${paint("strong", "Outdoors")}\n${verdict.covers.flatMap(outdoors).join("\n")}`,
     warningText(verdict.warnings, paint),
+    handsOnText(paint),
   ];
   return `${parts.filter((part) => part !== "").join("\n\n")}\n`;
 }
@@ -32,23 +42,52 @@ function bothEnds({ rows }: CoverJudgement, weather: string): CoverRow {
   return rows.find((row) => row.weather === weather && row.placing === "both")!;
 }
 
+/** Covers over a dish are no choice here: they stay as the scenario has them. */
+function dishCoverText({ scenario }: Link): string {
+  const over = (["transmitter", "receiver"] as const).flatMap((end) => {
+    const { dishCover } = scenario[end];
+    return dishCover === undefined ? [] : `${dishCover} (${end})`;
+  });
+  if (over.length === 0) return "";
+  return paragraph(
+    `Over the dish: ${listed(over)}. It stays in every margin below, bare ones too; \`oilskin budget\` shows what it takes.`,
+  );
+}
+
 /** The cover in one sentence: dry, wet at its worst, and what that does to the answer. */
 function sentence(judged: CoverJudgement, { worstWeather }: CoverVerdict, { scenario }: Link): string {
   const worst = bothEnds(judged, worstWeather);
   const left = `${tenth(worst.marginDb)} dB left in ${worstWeather}`;
-  if (judged.cover === "bare")
-    return `bare: ${left}, ${worst.verdict}; rain, dust and insects enter the feed.`;
-  const dry = worst.dryCostDb.nominal;
-  const dryWords =
-    Math.abs(dry) < judged.repeatabilityDb
-      ? `costs ${tenth(Math.abs(dry))} dB dry, indistinguishable from bare at a bench's repeatability`
-      : dry < 0
-        ? `wins ${tenth(-dry)} dB dry, as it tunes the feed`
-        : `costs ${tenth(dry)} dB dry (${tenth(worst.dryCostDb.low)} to ${tenth(worst.dryCostDb.high)})`;
-  const rate =
-    scenario.weather[worstWeather]!.coversWetAsAtMmPerH ?? scenario.weather[worstWeather]!.rainMmPerH.value;
-  const wetWords = rate > 0 ? `; ${tenth(worst.costDb)} dB wet at ${rate} mm/h` : "";
-  return `${judged.cover}: ${dryWords}${wetWords}, and that ${turn(worst.bareVerdict, worst.verdict)}; ${left}.`;
+  if (judged.cover === "bare") {
+    return `bare: ${left}, ${worst.verdict}; rain, dust and insects enter the feed, and nothing is charged for that.`;
+  }
+  return (
+    `${judged.cover}: ${dryWords(judged, worst)}${wetWords(worst, scenario.weather[worstWeather]!)}, ` +
+    `and that ${turn(worst.bareVerdict, worst.verdict)}; ${left}.`
+  );
+}
+
+function dryWords(
+  { repeatabilityDb }: CoverJudgement,
+  { dryCostDb: { low, nominal, high } }: CoverRow,
+): string {
+  const figure = tenth(Math.abs(nominal));
+  if (Math.abs(nominal) < repeatabilityDb) {
+    const verb = nominal < 0 && figure !== "0.0" ? "wins" : "costs";
+    return `${verb} ${figure} dB dry, indistinguishable from bare at a bench's repeatability`;
+  }
+  if (nominal < 0) return `wins ${figure} dB dry, as it tunes the feed`;
+  const bounds = tenth(low) === tenth(high) ? "" : ` (${tenth(low)} to ${tenth(high)})`;
+  return `costs ${figure} dB dry${bounds}`;
+}
+
+/** Everything together in the worst weather, where that puts something on the cover. */
+function wetWords({ weather, costDb }: CoverRow, asked: Weather): string {
+  const rate = asked.coversWetAsAtMmPerH ?? asked.rainMmPerH.value;
+  const lies = asked.dewMm.value > 0 || asked.iceMm > 0 || asked.snow !== undefined;
+  if (asked.wets.length === 0 || (rate === 0 && !lies)) return "";
+  const raining = rate > 0 && asked.driedForMin === 0 && !lies;
+  return `; ${tenth(costDb)} dB ${raining ? `wet at ${rate} mm/h` : `in ${weather}`}`;
 }
 
 function turn(before: Verdict, after: Verdict): string {
@@ -56,75 +95,90 @@ function turn(before: Verdict, after: Verdict): string {
 }
 
 function weatherTitle(weather: string, { scenario }: Link): string {
-  const { rainMmPerH, coversWetAsAtMmPerH, wets } = scenario.weather[weather]!;
+  const { rainMmPerH, coversWetAsAtMmPerH, driedForMin, dewMm, iceMm, snow, wets } =
+    scenario.weather[weather]!;
+  const rate = coversWetAsAtMmPerH ?? rainMmPerH.value;
+  const onCovers = [
+    ...(coversWetAsAtMmPerH === undefined ? [] : [`covers wet as at ${coversWetAsAtMmPerH} mm/h`]),
+    ...(rate > 0 && driedForMin > 0 ? [`dried for ${driedForMin} min`] : []),
+    ...(dewMm.value > 0 ? [`dew ${dewMm.value} mm`] : []),
+    ...(iceMm > 0 ? [`ice ${iceMm} mm`] : []),
+    ...(snow === undefined ? [] : [`snow ${snow.depthMm} mm, ${snow.wetnessPercent} % water`]),
+  ];
+  const lies = rate > 0 || onCovers.length > 0;
   const said = [
     ...(rainMmPerH.value > 0 ? [`rain ${rainMmPerH.value} mm/h`] : []),
-    ...(coversWetAsAtMmPerH === undefined ? [] : [`covers wet as at ${coversWetAsAtMmPerH} mm/h`]),
-    ...(wets.length === 1 && (rainMmPerH.value > 0 || coversWetAsAtMmPerH) ? [`wets the ${wets[0]}`] : []),
+    ...onCovers,
+    ...(lies && wets.length === 1 ? [`wets the ${wets[0]}`] : []),
+    ...(lies && wets.length === 0 ? ["wets no cover"] : []),
   ];
-  return said.length === 0 ? weather : `${weather}: ${said.join(", ")}`;
+  return paragraph(said.length === 0 ? weather : `${weather}: ${said.join(", ")}`);
 }
 
-/** Costs of both ends covered, and the margins with one end covered beside them. */
+/** Costs of both ends covered, and the margins with one end covered beside them, or below where names are long. */
 function costTable({ covers }: CoverVerdict, weather: string, paint: Paint): string {
-  const margin = ({ rows }: CoverJudgement, placing: CoverRow["placing"]) => {
+  const margin = ({ rows }: CoverJudgement, placing: CoverRow["placing"], paint: Paint) => {
     const row = rows.find((one) => one.weather === weather && one.placing === placing)!;
     const verdict = row.verdict.padEnd(6);
     const figure = `${tenth(row.marginDb)} `;
     return cell(figure + verdict, figure + paint(meanings[row.verdict], verdict));
   };
-  return columns([
-    [
-      cell(""),
-      { text: "cost in dB at both ends", across: 4 },
-      ...empty(3),
-      { text: "margin left in dB, covered at", across: 3 },
-      ...empty(2),
-    ],
-    ["cover", "dry", "water", "noise (K)", "all", "both", "transmitter", "receiver"].map((text) =>
-      cell(text),
-    ),
-    RULE,
-    ...covers.map((judged) => {
-      const row = bothEnds(judged, weather);
-      return [
+  const costs = {
+    title: "cost in dB at both ends",
+    heads: ["dry", "water", "noise (K)", "all"],
+    cells: (judged: CoverJudgement) => {
+      const { dryCostDb, waterCostDb, noiseCostDb, noiseAddedK, costDb } = bothEnds(judged, weather);
+      const noise = `${tenth(noiseCostDb)} (${Math.round(noiseAddedK) + 0})`;
+      return [tenth(dryCostDb.nominal), tenth(waterCostDb.nominal), noise, tenth(costDb)].map((text) =>
+        cell(text),
+      );
+    },
+  };
+  const margins = {
+    title: "margin left in dB, covered at",
+    heads: placings,
+    cells: (judged: CoverJudgement, paint: Paint) =>
+      placings.map((placing) => margin(judged, placing, paint)),
+  };
+  return abreast([costs, margins], (some, measured) =>
+    columns([
+      [cell(""), ...some.flatMap(({ title, heads }) => spanning(title, heads.length))],
+      [cell("cover"), ...some.flatMap(({ heads }) => heads.map((text) => cell(text)))],
+      RULE,
+      ...covers.map((judged) => [
         cell(judged.cover),
-        cell(tenth(row.dryCostDb.nominal)),
-        cell(tenth(row.waterCostDb.nominal)),
-        cell(`${tenth(row.noiseCostDb)} (${Math.round(row.noiseAddedK) + 0})`),
-        cell(tenth(row.costDb)),
-        margin(judged, "both"),
-        margin(judged, "transmitter"),
-        margin(judged, "receiver"),
-      ];
-    }),
-  ]);
+        ...some.flatMap(({ cells }) => cells(judged, measured ? plain : paint)),
+      ]),
+    ]),
+  );
 }
 
-const empty = (count: number) => Array.from({ length: count }, () => cell(""));
+/** A heading over some columns: its own cell and the covered ones. */
+function spanning(text: string, across: number): Cell[] {
+  return [{ text, across }, ...Array.from({ length: across - 1 }, () => cell(""))];
+}
 
 /** Return loss of both feeds in the dry and in the worst weather. */
 function matchTable({ covers, weathers, worstWeather }: CoverVerdict): string {
-  const shown = [...new Set([weathers[0]!, worstWeather])];
-  return columns([
-    [cell(""), ...shown.flatMap((weather) => [{ text: weather, across: 2 }, cell("")])],
-    [cell("cover"), ...shown.flatMap(() => [cell("transmitter"), cell("receiver")])],
-    RULE,
-    ...covers.map((judged) => [
-      cell(judged.cover),
-      ...shown.flatMap((weather) => {
-        const { transmitter, receiver } = bothEnds(judged, weather);
-        return [cell(match(transmitter)), cell(match(receiver))];
-      }),
+  return abreast([...new Set([weathers[0]!, worstWeather])], (shown) =>
+    columns([
+      [cell(""), ...shown.flatMap((weather) => spanning(weather, 2))],
+      [cell("cover"), ...shown.flatMap(() => [cell("transmitter"), cell("receiver")])],
+      RULE,
+      ...covers.map((judged) => [
+        cell(judged.cover),
+        ...shown.flatMap((weather) => {
+          const { transmitter, receiver } = bothEnds(judged, weather);
+          return [cell(match(transmitter)), cell(match(receiver))];
+        }),
+      ]),
     ]),
-  ]);
+  );
 }
 
 function match({ bareReturnLossDb, returnLossDb: { nominal } }: CoverState): string {
-  const change = nominal - bareReturnLossDb;
-  const signed =
-    tenth(change).startsWith("-") || tenth(change) === "0.0" ? tenth(change) : `+${tenth(change)}`;
-  return `${tenth(nominal)} ${signed} ${reflectionFigures({ returnLossDb: nominal }).vswr.toFixed(2)}`;
+  const change = signed(nominal - bareReturnLossDb);
+  return `${tenth(nominal)} ${change} ${reflectionFigures({ returnLossDb: nominal }).vswr.toFixed(2)}`;
 }
 
 /** Swing of each cover's loss over the band, where it is worth a line. */
@@ -140,25 +194,24 @@ function rippleText({ covers, bandGHz }: CoverVerdict, paint: Paint): string {
 }
 
 function breakEvenTable({ covers }: CoverVerdict, { scenario }: Link): string {
-  const rate = (value: number | undefined) =>
-    value === undefined
-      ? "none"
-      : value === 0
-        ? "any"
-        : `${value < 10 ? value.toFixed(1) : value.toFixed(0)} mm/h`;
-  return columns([
-    [
-      cell("cover"),
-      cell(`leaves the reserve of ${tenth(scenario.decision.reserveDb)} dB up to`),
-      cell("leaves anything up to"),
-    ],
-    RULE,
-    ...covers.map(({ cover, breakEven }) => [
-      cell(cover),
-      cell(rate(breakEven.reserveMmPerH)),
-      cell(rate(breakEven.zeroMmPerH)),
+  const rate = (value: number | undefined) => {
+    if (value === undefined) return `not by ${HEAVIEST_MM_PER_H} mm/h`;
+    return value === 0 ? "without rain" : `${value < 10 ? value.toFixed(1) : value.toFixed(0)} mm/h`;
+  };
+  const ways = [
+    { head: `down to the reserve of ${tenth(scenario.decision.reserveDb)} dB at`, way: "reserveMmPerH" },
+    { head: "down to nothing at", way: "zeroMmPerH" },
+  ] as const;
+  return abreast(ways, (some) =>
+    columns([
+      [cell("cover"), ...some.map(({ head }) => cell(head))],
+      RULE,
+      ...covers.map(({ cover, breakEven }) => [
+        cell(cover),
+        ...some.map(({ way }) => cell(rate(breakEven[way]))),
+      ]),
     ]),
-  ]);
+  );
 }
 
 /** What the weather does to a cover, how it is fixed and what to mind. */

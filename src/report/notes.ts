@@ -57,3 +57,13 @@ export function safetyText(found: LinkExposure, paint: Paint): string {
     ...brief.map((sentence) => paragraph(sentence, "  - ")),
   ].join("\n");
 }
+
+/** What to mind before going to a feed with a cover in hand. */
+export function handsOnText(paint: Paint): string {
+  const sentences = cautions
+    .flatMap((caution) => caution.sentences)
+    .filter((sentence) =>
+      /^(Switch the transmitter off|Never look into a feed|Keep off masts)/.test(sentence),
+    );
+  return [paint("strong", "Caution"), ...sentences.map((sentence) => paragraph(sentence, "  - "))].join("\n");
+}

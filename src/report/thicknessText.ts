@@ -3,7 +3,7 @@ import type { ThicknessStudy } from "../study/thickness.ts";
 import type { TunedThickness } from "../study/thicknessLimits.ts";
 import { chart } from "./chart.ts";
 import { cell, columns, RULE } from "./columns.ts";
-import { warningText } from "./notes.ts";
+import { handsOnText, warningText } from "./notes.ts";
 import { gapText, pairText } from "./thicknessGapText.ts";
 import { decibels, millimetres, returnLoss } from "./thicknessWords.ts";
 import { hundredth, type Paint, paragraph, plain, tenth } from "./words.ts";
@@ -25,6 +25,7 @@ export function thicknessText(study: ThicknessStudy, paint: Paint = plain): stri
     pairText(study, paint),
     gapText(study, paint),
     warningText(study.warnings, paint),
+    handsOnText(paint),
     paragraph(trustWords(study)),
   ];
   return `${parts.filter((part) => part !== "").join("\n\n")}\n`;

@@ -3,7 +3,7 @@ import { withWeather } from "../budget/prepare.ts";
 import type { Case, Link } from "../budget/types.ts";
 import { bisect } from "../numeric/roots.ts";
 
-/** Rain rates at which a margin is used up; undefined where no rate on Earth does it. */
+/** Rain rates at which a margin is used up; undefined where none up to `HEAVIEST_MM_PER_H` does it. */
 export interface BreakEven {
   /** Margin 0 at this rate [mm/h]; 0 where the path fails in the dry already. */
   readonly zeroMmPerH: number | undefined;
@@ -12,7 +12,7 @@ export interface BreakEven {
 }
 
 /** Rain heavier than any hour's [mm/h]. */
-const HEAVIEST_MM_PER_H = 400;
+export const HEAVIEST_MM_PER_H = 400;
 /** Rates are told to this [mm/h]; the rain is known far worse. */
 const RATE_STEP_MM_PER_H = 0.05;
 

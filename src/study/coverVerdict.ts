@@ -61,7 +61,7 @@ export interface CoverVerdict {
   readonly path: PathGeometry;
   readonly mode: string;
   readonly weathers: readonly string[];
-  /** The asked weather that leaves a bare path the least. */
+  /** The asked weather in which a cover at both ends, or bare, leaves the least. */
   readonly worstWeather: string;
   /** The weather that break-even rates are sought in. */
   readonly rainWeather: string;
@@ -97,7 +97,6 @@ export function coverVerdict(
     return budget;
   };
   const bare = new Map(weathers.map((weather) => [weather, budgetOf(weather, "both", "bare")]));
-  const worstWeather = weathers.reduce((a, b) => (bare.get(b)!.marginDb < bare.get(a)!.marginDb ? b : a));
   const rainWeather = rainiest(link, weathers);
 
   const covers = Object.entries(scenario.covers).map(([name, cover]): CoverJudgement => {
@@ -117,8 +116,10 @@ export function coverVerdict(
       breakEven: breakEven(link, caseOf(link, rainWeather, "both", name, mode)),
     };
   });
-  const left = ({ rows }: CoverJudgement) =>
-    rows.find(({ weather, placing }) => weather === worstWeather && placing === "both")!.marginDb;
+  const left = ({ rows }: CoverJudgement, asked: string) =>
+    rows.find(({ weather, placing }) => weather === asked && placing === "both")!.marginDb;
+  const least = (weather: string) => Math.min(...covers.map((judged) => left(judged, weather)));
+  const worstWeather = weathers.reduce((a, b) => (least(b) < least(a) ? b : a));
   return {
     title: scenario.title,
     frequencyGHz: scenario.frequencyGHz,
@@ -128,7 +129,7 @@ export function coverVerdict(
     worstWeather,
     rainWeather,
     bandGHz,
-    covers: covers.toSorted((a, b) => left(b) - left(a)),
+    covers: covers.toSorted((a, b) => left(b, worstWeather) - left(a, worstWeather)),
     warnings: [...warnings.values()],
   };
 }
