@@ -33,7 +33,7 @@ export function evaluate(link: Link, chosen: Case): Budget {
     ...heard.entries.toReversed(),
     receiver.line,
   ];
-  const noise = noiseSide(scenario.receiver, mode, weather, heard, overReceiver);
+  const noise = noiseSide(scenario, mode, weather, heard, overReceiver);
   const requiredSnrDb = requiredSnrInBandwidth(mode);
   const heading = {
     id: "mode.required",

@@ -1,9 +1,9 @@
 import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
 import { dbToPower, powerToDb } from "../numeric/decibels.ts";
-import { antennaTemperatureInRain, levelBeam } from "../receiver/antennaTemperature.ts";
+import { antennaTemperatureInRain, levelBeamDefault } from "../receiver/antennaTemperature.ts";
 import type { Mode } from "../receiver/modes.ts";
 import { noiseTemperatureK, thermalNoiseDbm } from "../receiver/noise.ts";
-import type { Receiver } from "../scenario/types.ts";
+import type { Scenario } from "../scenario/types.ts";
 import type { DishCoverState } from "./dishCover.ts";
 import { type Entry, gainEntry, type Heading } from "./entry.ts";
 import type { Mouth, PreparedWeather } from "./types.ts";
@@ -27,14 +27,15 @@ export interface NoiseSide {
  * Source: noise waves after Bosma 1967 for the mouth; D. M. Pozar, Microwave Engineering, for the line
  */
 export function noiseSide(
-  receiver: Receiver,
+  { receiver, frequencyGHz }: Scenario,
   mode: Mode,
   weather: PreparedWeather,
   mouth: Mouth,
   over: DishCoverState,
 ): NoiseSide {
   const figureDb = receiver.noiseFigureDb;
-  const clear = receiver.antennaTemperatureK ?? { value: levelBeam.temperatureK, sigma: levelBeam.sigmaK };
+  const usual = levelBeamDefault(frequencyGHz);
+  const clear = receiver.antennaTemperatureK ?? { value: usual.temperatureK };
   const { temperatureK: antennaK } = antennaTemperatureInRain({
     clearK: clear.value,
     attenuationDb: weather.hydrometeorLossDb,
@@ -68,12 +69,12 @@ export function noiseSide(
     temperatureK: REFERENCE_TEMPERATURE_K,
     bandwidthHz: mode.noiseBandwidthHz,
   });
-  const sky = receiver.antennaTemperatureK ? "scenario" : "level beam, common practice";
+  const sky = receiver.antennaTemperatureK ? "scenario" : "level beam: common practice, P.676-13";
   const figureSigma = figureDb.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB;
   // A dB more of noise figure raises the system by its receiver's part only.
   const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
   const dimmed = dbToPower(-weather.hydrometeorLossDb);
-  const antennaSigmaK = (clear.sigma ?? levelBeam.sigmaK) * dimmed * over.passed * passed * linePass;
+  const antennaSigmaK = (clear.sigma ?? usual.sigmaK) * dimmed * over.passed * passed * linePass;
   const entries = [
     gainEntry(heading("thermal", "290 K in the bandwidth", "k T B"), -thermalDbm),
     gainEntry(

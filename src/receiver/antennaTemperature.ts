@@ -1,5 +1,6 @@
 import { requireNotNegative, requirePositive } from "../numeric/check.ts";
 import { dbToPower } from "../numeric/decibels.ts";
+import { interpolateLinear } from "../numeric/interpolate.ts";
 
 /**
  * Noise temperature of a level beam over open ground in clear air, half low sky and half ground, with the
@@ -8,6 +9,35 @@ import { dbToPower } from "../numeric/decibels.ts";
  * Source: common practice, no source; near 10 GHz the balance of sky and ground gives 160 to 205 K
  */
 export const levelBeam = { temperatureK: 200, sigmaK: 40 } as const;
+
+/**
+ * Antenna temperature of a level beam of 3 deg over a flat horizon in clear air [K], by frequency [GHz]: the
+ * reference atmosphere of P.835 seen through P.676, over ground of 288 K and emissivity 0.95. Evaluated from this
+ * library's own `levelBeamTemperature`, which takes too long for a default.
+ */
+const beamGHz = [3.4, 5.76, 8, 10.368, 12, 14, 16, 18, 20, 21, 22.2, 24.048, 26, 28, 30, 34, 40, 47.088, 50];
+const beamK = [
+  173.5, 176.9, 181.5, 188.3, 194.4, 204.5, 218.9, 240.4, 267.5, 277.6, 282.6, 279.3, 270.6, 264.4, 262.6,
+  266.3, 276.8, 285.4, 286.6,
+];
+
+/**
+ * Default for a level beam: the usual 200 K, or what wet air adds to a flat horizon where that is more (near and
+ * above 20 GHz). The spread narrows as the air closes the view, for ground and sky are then equally warm.
+ *
+ * Source: common practice, no source, below some 13 GHz; P.676-13, P.835-6 and P.618-14 section 3 above
+ *
+ * @param frequencyGHz  [GHz], above 0; the table's ends are held beyond it
+ */
+export function levelBeamDefault(frequencyGHz: number): { temperatureK: number; sigmaK: number } {
+  requirePositive("frequencyGHz", frequencyGHz);
+  const temperatureK = Math.max(levelBeam.temperatureK, interpolateLinear(beamGHz, beamK, frequencyGHz));
+  const open = (filledBeamK - temperatureK) / (filledBeamK - levelBeam.temperatureK);
+  return { temperatureK, sigmaK: Math.max(LEAST_SIGMA_K, levelBeam.sigmaK * open) };
+}
+
+/** Air and ground differ from the reference by at least this much [K]: common practice, no source. */
+const LEAST_SIGMA_K = 10;
 
 /** A beam filled by hills, trees, buildings or heavy rain; the cautious choice [K] (common practice, no source). */
 export const filledBeamK = 290;

@@ -1,6 +1,12 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { antennaTemperatureInRain, filledBeamK, levelBeam } from "../../src/receiver/antennaTemperature.ts";
+import { levelBeamTemperature } from "../../src/atmosphere/skyNoise.ts";
+import {
+  antennaTemperatureInRain,
+  filledBeamK,
+  levelBeam,
+  levelBeamDefault,
+} from "../../src/receiver/antennaTemperature.ts";
 import { describeReference, num } from "../reference.ts";
 
 describe("antenna temperature in rain", () => {
@@ -45,4 +51,20 @@ describeReference("atmosphere/checks-noise-simple.csv", (row) => {
     mediumK: num(row, "Tm_K"),
   });
   expect(Math.abs(temperatureK - num(row, "T_K"))).toBeLessThan(1e-4);
+});
+
+describe("the default of a level beam", () => {
+  // Independent of the table: the sky integrated through the whole atmosphere, beam of 3 deg.
+  it.each([14, 20, 22.2, 24.048, 30, 40, 47.088])("follows the air at %d GHz", (frequencyGHz) => {
+    const { antennaK } = levelBeamTemperature({ frequencyGHz, beamwidthDeg: 3 });
+    expect(levelBeamDefault(frequencyGHz).temperatureK).toBeCloseTo(antennaK, 0);
+  });
+
+  it("is the usual 200 K, spread by 40 K, where the air is clear", () => {
+    expect(levelBeamDefault(10.368)).toEqual({ temperatureK: 200, sigmaK: 40 });
+  });
+
+  it("is known better where sky and ground are equally warm", () => {
+    expect(levelBeamDefault(47.088).sigmaK).toBe(10);
+  });
 });
