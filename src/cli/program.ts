@@ -4,6 +4,7 @@ import { checkCommand } from "./check.ts";
 import { coversCommand } from "./covers.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
+import { readingsCommand } from "./readings.ts";
 import { schemaCommand } from "./schema.ts";
 import { UserError } from "./terminal.ts";
 import { thicknessCommand } from "./thickness.ts";
@@ -29,6 +30,7 @@ for (const command of [
   newCommand,
   thicknessCommand,
   materialsCommand,
+  readingsCommand,
   schemaCommand,
 ]) {
   program.addCommand(command.showHelpAfterError(`(oilskin ${command.name()} --help shows what it takes)`));

@@ -2,7 +2,7 @@ import { statSync } from "node:fs";
 import { dirname } from "node:path";
 import type { Progress } from "./readingsCsv.ts";
 import { type FileFault, faultList } from "./readingsFaults.ts";
-import { portsOf, readSweep, type SweepFile, unreadable } from "./readingsSweep.ts";
+import { portsOf, readSweeps, type SweepFile, unreadable } from "./readingsSweep.ts";
 import type { ReadingsTable } from "./readingsTable.ts";
 import { fromFolder, judgeYaml, readText } from "./yamlFile.ts";
 
@@ -48,6 +48,12 @@ export async function loadReadings(file: string, progress?: Progress): Promise<L
   if (/\.ya?ml$/i.test(file)) return loadYaml(file, progress);
   const { table, faults } = await loadTable(file, file, progress);
   return table ? { readings: { file, returnLossesDb: {}, sweeps: {}, table } } : { faults };
+}
+
+/** A pair of sweeps as readings. */
+export function loadSweeps(bare: string, covered: string, cover: string): LoadedReadings {
+  const { sweeps, faults } = readSweeps({ bare, [cover]: covered });
+  return faults.length > 0 ? { faults } : { readings: { file: covered, returnLossesDb: {}, sweeps } };
 }
 
 /** A CSV, and what the user calls it. */
@@ -96,17 +102,32 @@ async function loadYaml(file: string, progress?: Progress): Promise<LoadedReadin
       ? await loadTable(beside(csv), beside(csv), progress)
       : rows && tableOfRows(rows, file, places);
   faults.push(...(read?.faults ?? []));
-  const sweeps: Record<string, SweepFile> = {};
-  for (const [state, path] of Object.entries(named)) {
-    const sweep = readSweep(beside(path), beside(path));
-    if ("message" in sweep) faults.push(sweep);
-    else sweeps[state] = sweep;
-  }
+  const { sweeps, faults: unread } = readSweeps(
+    Object.fromEntries(Object.entries(named).map(([state, path]) => [state, beside(path)])),
+  );
+  faults.push(...unread);
   const names = Object.keys(named);
   if (names.length > 0 && (!names.includes("bare") || names.length < 2)) {
     const message = "sweeps of bare and of one cover or more are needed";
     faults.push({ code: "missing_sweep", message, file, ...places.ofKey(["sweeps"]) });
   }
+  if (read?.table && aboveReference(settings.coupler, read.table)) {
+    const message =
+      "a level reflected is not below that of open and short: nothing reflects more than they do";
+    faults.push({ code: "bad_reference", message, file, ...places.ofKey(["coupler"]) });
+  }
   if (faults.length > 0) return { faults };
   return { readings: { file, ...settings, table: read?.table, sweeps } };
+}
+
+/** Whether bare or a cover seems to reflect as much as the coupler's open and short. */
+function aboveReference(coupler: Coupler | undefined, { series }: ReadingsTable): boolean {
+  const reflected = series.find(({ figure }) => figure === "reflected");
+  const references = [coupler?.openDb, coupler?.shortDb].filter((level) => level !== undefined);
+  if (reflected === undefined || references.length === 0) return false;
+  const referenceDb = references.reduce((sum, level) => sum + level, 0) / references.length;
+  const bareDb = -reflected.bare.meanDb;
+  return [0, ...reflected.running.covers.map(({ lossDb }) => lossDb)].some(
+    (lossDb) => bareDb + lossDb >= referenceDb,
+  );
 }

@@ -24,8 +24,8 @@ export type TypedRow = z.output<typeof row>;
 
 const coupler = group(
   {
-    directivity: quantity("levelDb", { about: "directivity of the coupler", range: [1, 100] }),
-    source_match: returnLoss("return loss of its test port").optional(),
+    directivity: quantity("levelDb", { about: "directivity of the coupler", range: [7, 100] }),
+    source_match: quantity("levelDb", { about: "return loss of its test port", range: [7, 100] }).optional(),
     open: level("level reflected by an open"),
     short: level("level reflected by a short"),
     pad_mismatch: quantity("levelDb", {

@@ -22,8 +22,8 @@ export interface TableSeries {
   /** Every reading, where they are few enough to be kept; states as the models have them. */
   readonly readings: readonly LinedReading[] | undefined;
   readonly running: RunningSeriesResult;
-  /** First and last bare reading. */
-  readonly bare: { readonly first: LinedReading; readonly last: LinedReading };
+  /** First and last bare reading, and the mean of all. */
+  readonly bare: { readonly first: LinedReading; readonly last: LinedReading; readonly meanDb: number };
 }
 
 export interface Collector {
@@ -42,6 +42,8 @@ export function collector(figure: FigureColumn, headerUnit: LevelUnit | undefine
   let unitLine = 0;
   let first: LinedReading | undefined;
   let last: LinedReading | undefined;
+  let bareCount = 0;
+  let bareSumDb = 0;
   return {
     read: (text, line, faults) => {
       const refuse = (code: string, message: string) => {
@@ -82,6 +84,8 @@ export function collector(figure: FigureColumn, headerUnit: LevelUnit | undefine
       if (taken.state !== OPEN) return;
       first ??= taken;
       last = taken;
+      bareCount++;
+      bareSumDb += taken.levelDb;
     },
     end: () => {
       if (count === 0) return undefined;
@@ -92,7 +96,7 @@ export function collector(figure: FigureColumn, headerUnit: LevelUnit | undefine
         count,
         readings: held,
         running: result,
-        bare: { first: first!, last: last! },
+        bare: { first: first!, last: last!, meanDb: bareSumDb / bareCount },
       };
     },
   };

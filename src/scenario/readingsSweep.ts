@@ -16,7 +16,7 @@ export interface SweepFile {
 }
 
 /** Reads a Touchstone file, .s1p or .s2p; never throws. */
-export function readSweep(path: string, file: string): SweepFile | FileFault {
+function readSweep(path: string, file: string): SweepFile | FileFault {
   const fault = (code: string, message: string, line = 1): FileFault => {
     return { code, message: visible(message), file, line };
   };
@@ -47,6 +47,32 @@ export function readSweep(path: string, file: string): SweepFile | FileFault {
     if (error instanceof TouchstoneFault) return fault("bad_sweep", error.message, error.line);
     return fault("unreadable", unreadable(error));
   }
+}
+
+/** Sweeps of bare and of covers, by file; every fault of them. */
+export function readSweeps(files: Readonly<Record<string, string>>): {
+  readonly sweeps: Readonly<Record<string, SweepFile>>;
+  readonly faults: readonly FileFault[];
+} {
+  const faults: FileFault[] = [];
+  const sweeps: Record<string, SweepFile> = {};
+  for (const [state, path] of Object.entries(files)) {
+    const sweep = readSweep(path, path);
+    if ("message" in sweep) faults.push(sweep);
+    else sweeps[state] = sweep;
+  }
+  const { bare, ...covered } = sweeps;
+  if (bare) faults.push(...Object.values(covered).flatMap((sweep) => apart(bare, sweep)));
+  return { sweeps, faults };
+}
+
+/** A covered sweep that holds none of the frequencies of the bare one. */
+function apart(bare: SweepFile, covered: SweepFile): FileFault[] {
+  const [low, high] = [covered.points[0]!.frequencyHz, covered.points.at(-1)!.frequencyHz];
+  if (bare.points.some(({ frequencyHz }) => frequencyHz >= low && frequencyHz <= high)) return [];
+  const band = ({ points }: SweepFile) => `${points[0]!.frequencyHz} to ${points.at(-1)!.frequencyHz} Hz`;
+  const message = `${band(covered)} holds no frequency of ${bare.file}, ${band(bare)}`;
+  return [{ code: "no_overlap", message, file: covered.file, line: 1 }];
 }
 
 export function portsOf(path: string): 1 | 2 | undefined {
