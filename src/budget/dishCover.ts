@@ -56,12 +56,10 @@ export function dishCoverOver(
   heading: EndHeading,
   frequencyGHz: number,
   cover: Cover,
-  coverName: string,
+  where: string,
   diameterM: number,
   gamma: number,
 ): (wetness: Wetness | undefined) => DishCoverState {
-  if (cover.layers.length === 0 && cover.measured === undefined) return () => NO_DISH_COVER;
-  const where = `covers.${coverName}`;
   const stack = (figure: keyof Bounded) => cover.layers.map((layer) => layerAt(layer, figure));
   const layers = stack("nominal");
   const through = (some: readonly Layer[]) => lossOf(sheetOf(frequencyGHz, some));

@@ -75,7 +75,7 @@ export function mouthUnder(
     dissipationDb: 0,
     warnings: [],
   };
-  if (cover.layers.length === 0 && cover.measured === undefined) {
+  if (isNothing(cover)) {
     return (wetness) =>
       wetness === undefined || isDry(wetness) ? bare : { ...bare, warnings: [BARE_IN_RAIN] };
   }
@@ -120,6 +120,11 @@ export function mouthUnder(
       warnings: [...dry.warnings, ...water.warnings],
     };
   };
+}
+
+/** An open mouth under another name. */
+export function isNothing({ layers, measured }: Cover): boolean {
+  return layers.length === 0 && measured === undefined;
 }
 
 /** Half of what the doubt of a return loss leaves the mismatch loss to range over [dB]. */

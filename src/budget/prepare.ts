@@ -6,7 +6,7 @@ import type { Wetness } from "./deposit.ts";
 import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
-import { mouthUnder } from "./mouth.ts";
+import { isNothing, mouthUnder } from "./mouth.ts";
 import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning } from "./types.ts";
 
 /** 1-sigma of a power read with coupler and diode, and of a line's loss out of a table [dB]: common practice, no source. */
@@ -51,14 +51,15 @@ export function withWeather(link: Link, name: string, weather: Weather): Link {
   };
 }
 
-/** An end made ready for one weather more. */
+/** An end made ready for one weather more. A cover over the dish keeps the weather off the feed behind it. */
 function inWeather(ready: PreparedEnd, end: EndName, name: string, weather: PreparedWeather): PreparedEnd {
   const wetness = wetnessAt(end, weather);
+  const onMouth = ready.isSheltered ? undefined : wetness;
   return {
     ...ready,
     mouth: mapValues(ready.mouth, (byWeather, cover) => ({
       ...byWeather,
-      [name]: ready.mouthUnder[cover]!(wetness),
+      [name]: ready.mouthUnder[cover]!(onMouth),
     })),
     dishCover: { ...ready.dishCover, [name]: ready.dishCoverOver(wetness) },
   };
@@ -94,6 +95,7 @@ function prepareEnd(
   const { lineLossDb, dish: dishName, dishCover } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
   const diameterM = dish?.diameterM ?? USUAL_DISH_M;
+  const overDish = dishCover === undefined || isNothing(covers[dishCover]!) ? undefined : covers[dishCover];
   const heading = endHeading(end);
   const antenna = antennaEntries(heading, frequencyGHz, feed, dish);
   const lineSigma = lineLossDb.sigma ?? Math.min(LINE_SIGMA_DB, lineLossDb.value / 2);
@@ -107,10 +109,11 @@ function prepareEnd(
     antenna: antenna.entries,
     beamwidthDeg: antenna.beamwidthDeg,
     mouthUnder: mouths,
+    isSheltered: overDish !== undefined,
     dishCoverOver:
-      dishCover === undefined
+      overDish === undefined
         ? () => NO_DISH_COVER
-        : dishCoverOver(heading, frequencyGHz, covers[dishCover]!, dishCover, diameterM, gamma),
+        : dishCoverOver(heading, frequencyGHz, overDish, `covers.${dishCover}`, diameterM, gamma),
     mouth: mapValues(mouths, () => ({})),
     dishCover: {},
     warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),

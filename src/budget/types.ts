@@ -92,6 +92,8 @@ export interface PreparedEnd {
   readonly beamwidthDeg: number | undefined;
   /** Each cover by what a weather puts on it, for weathers that come later. */
   readonly mouthUnder: Readonly<Record<string, (wetness: Wetness | undefined) => Mouth>>;
+  /** Behind a cover over the dish, which keeps the feed dry. */
+  readonly isSheltered: boolean;
   readonly dishCoverOver: (wetness: Wetness | undefined) => DishCoverState;
   /** By weather name. */
   readonly dishCover: Readonly<Record<string, DishCoverState>>;

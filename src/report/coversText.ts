@@ -43,14 +43,15 @@ function bothEnds({ rows }: CoverJudgement, weather: string): CoverRow {
 }
 
 /** Covers over a dish are no choice here: they stay as the scenario has them. */
-function dishCoverText({ scenario }: Link): string {
+function dishCoverText({ scenario, ends }: Link): string {
   const over = (["transmitter", "receiver"] as const).flatMap((end) => {
-    const { dishCover } = scenario[end];
-    return dishCover === undefined ? [] : `${dishCover} (${end})`;
+    const { dishCover, feed } = scenario[end];
+    return ends[end][feed]!.isSheltered ? `${dishCover} (${end})` : [];
   });
   if (over.length === 0) return "";
   return paragraph(
-    `Over the dish: ${listed(over)}. It stays in every margin below, bare ones too; \`oilskin budget\` shows what it takes.`,
+    `Over the dish: ${listed(over)}. It stays in every margin below, bare ones too, and keeps the feed behind ` +
+      "it dry; `oilskin budget` shows what it takes.",
   );
 }
 
