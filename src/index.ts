@@ -104,6 +104,8 @@ export {
 // Studies and reports
 export { coversCsv, coversJson } from "./report/coversData.ts";
 export { coversText } from "./report/coversText.ts";
+export { inferCsv, inferJson } from "./report/inferData.ts";
+export { inferText } from "./report/inferText.ts";
 export { marginCsv, marginJson } from "./report/marginData.ts";
 export { marginReportText } from "./report/marginReportText.ts";
 export { materialsText } from "./report/materialsText.ts";
@@ -117,6 +119,7 @@ export { averagePower } from "./safety/averagePower.ts";
 export { cautions } from "./safety/cautions.ts";
 export { exposure, exposureByGain } from "./safety/exposure.ts";
 export { exposureLimits } from "./safety/exposureLimits.ts";
+export { type InferReadings, loadInferReadings } from "./scenario/infer.ts";
 export { judgeScenario, loadScenario } from "./scenario/load.ts";
 export { nearest } from "./scenario/nearest.ts";
 export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/quantity.ts";
@@ -128,6 +131,7 @@ export { withMeasuredCover } from "./scenario/writeCover.ts";
 export { breakEven } from "./study/breakEven.ts";
 export { coverVerdict } from "./study/coverVerdict.ts";
 export { exposureOfLink } from "./study/exposureOfLink.ts";
+export { inferReport } from "./study/inferReadings.ts";
 export { marginReport } from "./study/marginReport.ts";
 export { materialThickness } from "./study/materialThickness.ts";
 export { type BenchReport, benchReport } from "./study/readings.ts";

@@ -2,6 +2,7 @@ import { Command } from "commander";
 import { budgetCommand } from "./budget.ts";
 import { checkCommand } from "./check.ts";
 import { coversCommand } from "./covers.ts";
+import { inferCommand } from "./infer.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
 import { readingsCommand } from "./readings.ts";
@@ -31,6 +32,7 @@ for (const command of [
   thicknessCommand,
   materialsCommand,
   readingsCommand,
+  inferCommand,
   schemaCommand,
 ]) {
   program.addCommand(command.showHelpAfterError(`(oilskin ${command.name()} --help shows what it takes)`));

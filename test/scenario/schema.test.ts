@@ -7,7 +7,7 @@ import { scenarioJsonSchema } from "../../src/scenario/schema.ts";
 
 const folder = new URL("../../scenarios/", import.meta.url);
 const file = new URL("oilskin.schema.json", folder);
-const scenarios = readdirSync(folder).filter((name) => name.endsWith(".yaml"));
+const scenarios = readdirSync(folder).filter((name) => name.endsWith(".yaml") && !name.startsWith("bench-"));
 const schema = scenarioJsonSchema() as Part;
 
 interface Part {
