@@ -5,23 +5,8 @@ import { type Layer, layerOf } from "../cover/layeredSheet.ts";
 import { snowPermittivity, wetSnowValidity } from "../cover/snowPermittivity.ts";
 import { type WaterFilmInput, waterFilm, waterLayer } from "../cover/waterFilm.ts";
 import { outside } from "../numeric/check.ts";
-import type { Snow } from "../scenario/types.ts";
 import { overreachWarning } from "./overreach.ts";
-import type { Warning } from "./types.ts";
-
-/** What the weather has put on the covers of an end. */
-export interface Wetness {
-  /** Rain that keeps a cover wet, or did until `driedForMin` ago. */
-  readonly rainRateMmPerH: number;
-  /** What that rain takes on the path [dB]: some wet-antenna models start from it. */
-  readonly pathRainDb: number;
-  readonly windMPerS: number;
-  readonly temperatureC: number;
-  readonly driedForMin: number;
-  readonly dewMm: Bounded;
-  readonly iceMm: number;
-  readonly snow: Snow | undefined;
-}
+import type { Warning, Wetness } from "./types.ts";
 
 /** Where the water runs: shape, size and tilt of a cover. */
 export type Surface = Pick<WaterFilmInput, "shape" | "sizeM" | "tiltDeg">;

@@ -10,21 +10,12 @@ import { amplitudeToDb, dbToPower } from "../numeric/decibels.ts";
 import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
-import { depositOn, isDry, type Surface, type Wetness } from "./deposit.ts";
+import { depositOn, isDry, type Surface } from "./deposit.ts";
 import { type Entry, lossEntry } from "./entry.ts";
 import { layerAt, thicknessWarnings } from "./mouth.ts";
 import { sheetOf } from "./mouthpiece.ts";
 import { publishedWater, waterModelOf } from "./publishedWater.ts";
-import type { Warning } from "./types.ts";
-
-/** A cover over the whole dish in one weather. */
-export interface DishCoverState {
-  readonly entries: readonly Entry[];
-  /** Shares of the power that come through, and that heat cover and water; the rest is sent back. */
-  readonly passed: number;
-  readonly heated: number;
-  readonly warnings: readonly Warning[];
-}
+import type { DishCoverState, Warning, Wetness } from "./types.ts";
 
 export const NO_DISH_COVER: DishCoverState = { entries: [], passed: 1, heated: 0, warnings: [] };
 

@@ -9,10 +9,10 @@ import { wavelengthM } from "../numeric/constants.ts";
 import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, CoverLayer, Feed } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
-import { isDry, type Wetness } from "./deposit.ts";
+import { isDry } from "./deposit.ts";
 import { type Entry, lossEntry } from "./entry.ts";
 import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
-import type { Mouth, Warning } from "./types.ts";
+import type { Mouth, Warning, Wetness } from "./types.ts";
 import { type WaterCost, waterOnCover } from "./waterOnCover.ts";
 
 /** A return loss read with a coupler is good to 2 dB or so: common practice, no source. */

@@ -4,9 +4,8 @@ import { antennaTemperatureInRain, levelBeamDefault } from "../receiver/antennaT
 import type { Mode } from "../receiver/modes.ts";
 import { noiseTemperatureK, thermalNoiseDbm } from "../receiver/noise.ts";
 import type { Scenario } from "../scenario/types.ts";
-import type { DishCoverState } from "./dishCover.ts";
 import { type Entry, gainEntry, type Heading } from "./entry.ts";
-import type { Mouth, PreparedWeather } from "./types.ts";
+import type { DishCoverState, Mouth, PreparedWeather } from "./types.ts";
 
 /** Noise figure off a label [dB]: common practice, no source. */
 const LABEL_NOISE_FIGURE_SIGMA_DB = 0.5;

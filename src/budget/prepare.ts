@@ -2,12 +2,11 @@ import { gammaOfReturnLoss } from "../cover/reflectionFigures.ts";
 import type { EndName, Scenario, Weather } from "../scenario/types.ts";
 import { prepareWeather } from "./air.ts";
 import { antennaEntries, type EndHeading, endHeading } from "./antennaEntries.ts";
-import type { Wetness } from "./deposit.ts";
 import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
 import { isNothing, mouthUnder } from "./mouth.ts";
-import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning } from "./types.ts";
+import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning, Wetness } from "./types.ts";
 
 /** 1-sigma of a power read with coupler and diode, and of a line's loss out of a table [dB]: common practice, no source. */
 const POWER_SIGMA_DB = 0.7;

@@ -4,8 +4,7 @@ import { type SurfaceCare, surfaceState } from "../cover/surfaceState.ts";
 import { type WetAntennaInput, wetAntennaLoss, wetAntennaModels } from "../cover/wetAntennaLoss.ts";
 import type { WetModel } from "../cover/wetModels.ts";
 import type { Cover } from "../scenario/types.ts";
-import type { Wetness } from "./deposit.ts";
-import type { Warning } from "./types.ts";
+import type { Warning, Wetness } from "./types.ts";
 
 /** A cover's water by a published figure. */
 export interface PublishedWater {

@@ -1,8 +1,6 @@
 import type { Bounded } from "../cover/bounded.ts";
 import type { Mode } from "../receiver/modes.ts";
-import type { EndName, Scenario, Site, Weather } from "../scenario/types.ts";
-import type { Wetness } from "./deposit.ts";
-import type { DishCoverState } from "./dishCover.ts";
+import type { EndName, Scenario, Site, Snow, Weather } from "../scenario/types.ts";
 import type { Entry } from "./entry.ts";
 
 /** A doubt that the user should know of; `where` names the part of the scenario. */
@@ -82,6 +80,29 @@ export interface PathGeometry {
   readonly radioHorizonKm: number;
   readonly from: Site;
   readonly to: Site;
+}
+
+/** What the weather has put on the covers of an end. */
+export interface Wetness {
+  /** Rain that keeps a cover wet, or did until `driedForMin` ago. */
+  readonly rainRateMmPerH: number;
+  /** What that rain takes on the path [dB]: some wet-antenna models start from it. */
+  readonly pathRainDb: number;
+  readonly windMPerS: number;
+  readonly temperatureC: number;
+  readonly driedForMin: number;
+  readonly dewMm: Bounded;
+  readonly iceMm: number;
+  readonly snow: Snow | undefined;
+}
+
+/** A cover over the whole dish in one weather. */
+export interface DishCoverState {
+  readonly entries: readonly Entry[];
+  /** Shares of the power that come through, and that heat cover and water; the rest is sent back. */
+  readonly passed: number;
+  readonly heated: number;
+  readonly warnings: readonly Warning[];
 }
 
 /** Everything of an end that a case needs: entries of the antenna, and of the mouth by cover and weather. */

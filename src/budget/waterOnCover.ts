@@ -6,10 +6,10 @@ import { surfaceState } from "../cover/surfaceState.ts";
 import { waterLayer } from "../cover/waterFilm.ts";
 import { abs } from "../numeric/complex.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
-import { type Deposit, depositOn, type Wetness } from "./deposit.ts";
+import { type Deposit, depositOn } from "./deposit.ts";
 import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
 import { publishedWater, waterModelOf } from "./publishedWater.ts";
-import type { Warning } from "./types.ts";
+import type { Warning, Wetness } from "./types.ts";
 
 /** What water, ice or snow adds to a dry cover. */
 export interface WaterCost {
