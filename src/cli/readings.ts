@@ -13,7 +13,7 @@ import {
 } from "../index.ts";
 import { faultsError, progressOf } from "./benchFile.ts";
 import { knownName } from "./knownName.ts";
-import { quantityOption } from "./quantityOption.ts";
+import { quantityOption } from "./optionQuantity.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { paintFor, print, UserError } from "./terminal.ts";
 import { writeCover } from "./writeCover.ts";
