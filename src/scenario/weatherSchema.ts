@@ -69,7 +69,11 @@ export const weatherSchema = group(
   "a weather: rain, fog, temperature, what it wets; {} is dry",
   (has) => {
     const ways = (["humidity", "dew_point", "vapour_density"] as const).filter(has);
-    return ways.length > 1 ? "more than one of humidity, dew_point and vapour_density; write one" : undefined;
+    if (ways.length > 1) return "more than one of humidity, dew_point and vapour_density; write one";
+    const falling = has("rain") && !has("covers_wet_as_at");
+    return has("dried_for") && falling
+      ? "dried_for while it rains; write covers_wet_as_at in place of rain"
+      : undefined;
   },
 ).transform((weather): Weather => {
   return {

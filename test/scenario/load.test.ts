@@ -147,6 +147,7 @@ const keysAndNames: Row[] = [
     "missing focal_ratio",
   ],
   ["a dish with two", "tripod: {", "¶tripod: { efficiency: 55 %,", "bad_value", "more than one"],
+  ["covers that dry in the rain", "shower: {", "¶shower: { dried_for: 5 min,", "bad_value", "while it rains"],
   ["a place without one", "from: { locator: IO83jd07, ", "¶from: { ", "bad_value", "missing locator"],
   ["half a place", "to: { latitude: 54.27, ", "¶to: { ", "bad_value", "missing latitude"],
   ["a place twice over", "to: {", "¶to: { locator: IO84jd07,", "bad_value", "both a locator"],
