@@ -6,8 +6,9 @@ import { equivalentLayer, measuredCover } from "../cover/measuredCover.ts";
 import { type NearMouth, nearMouth } from "../cover/nearMouth.ts";
 import { gammaOfReturnLoss, mismatchLossDb } from "../cover/reflectionFigures.ts";
 import { wavelengthM } from "../numeric/constants.ts";
+import { energyContradiction } from "../readings/energyContradiction.ts";
 import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
-import type { Cover, CoverLayer, Feed } from "../scenario/types.ts";
+import type { Cover, CoverLayer, Feed, Uncertain } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
 import { isDry } from "./deposit.ts";
 import { type Entry, lossEntry } from "./entry.ts";
@@ -243,9 +244,11 @@ function coveredReturnLoss({ returnLossDb }: Feed, { measured }: Cover): number 
 function contradictions(feed: Feed, cover: Cover, where: string): Warning[] {
   const { insertionLossDb } = cover.measured!;
   const repeatabilityDb = 2 * (insertionLossDb.sigma ?? BENCH_REPEATABILITY_DB);
+  const bareReturnLossDb = feed.returnLossDb;
+  const coveredReturnLossDb = coveredReturnLoss(feed, cover);
   const { leastDb, contradiction } = energyCheck({
-    bareReturnLossDb: feed.returnLossDb,
-    coveredReturnLossDb: coveredReturnLoss(feed, cover),
+    bareReturnLossDb,
+    coveredReturnLossDb,
     insertionLossDb: insertionLossDb.value,
     repeatabilityDb,
   });
@@ -253,9 +256,21 @@ function contradictions(feed: Feed, cover: Cover, where: string): Warning[] {
   const message =
     contradiction === "below_energy_floor"
       ? `an insertion loss of ${insertionLossDb.value} dB cannot go with this change of return loss: energy ` +
-        `balance asks for at least ${leastDb.toFixed(2)} dB; one of the two readings is wrong`
+        `balance asks for at least ${leastDb.toFixed(2)} dB; the likelier culprit is the ` +
+        likelierCulprit(insertionLossDb, bareReturnLossDb, coveredReturnLossDb!)
       : `a gain of ${-insertionLossDb.value} dB is more than any cover can give this feed (${(-leastDb).toFixed(2)} dB)`;
   return [{ code: contradiction, message, where: `${where}.measured` }];
+}
+
+/** Of a loss and the return losses that contradict it, the reading that its own uncertainty would soonest mend. */
+function likelierCulprit(loss: Uncertain, bareReturnLossDb: number, coveredReturnLossDb: number): string {
+  const { suspects } = energyContradiction({
+    lossDb: loss.value,
+    lossStandardDb: loss.sigma || BENCH_REPEATABILITY_DB, // 0 is no uncertainty of a reading
+    bareReturnLossDb,
+    coveredReturnLossDb,
+  });
+  return suspects[0]!.reading.replaceAll("_", " ");
 }
 
 /** A reading that the layers beside it cannot explain. */

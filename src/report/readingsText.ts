@@ -128,7 +128,7 @@ function uncertaintyTable({ covers }: BenchReport): string {
       figure.expandedDb.toFixed(3),
     ].map((text) => cell(text));
   const table = columns([
-    ["", "pairs", "mean", "type A", "with type B", "k", "freedom", "expanded"].map((text) => cell(text)),
+    ["", "pairs", "mean", "type A", "A and B", "k", "freedom", "expanded"].map((text) => cell(text)),
     RULE,
     ...covers.flatMap(({ cover, loss, change }) => [
       ...(loss ? [row(shortened(cover), loss)] : []),
@@ -141,7 +141,7 @@ function uncertaintyTable({ covers }: BenchReport): string {
 /** Names are the user's own; the table keeps its columns on the line. */
 function shortened(name: string): string {
   const characters = [...name];
-  return characters.length > 16 ? `${characters.slice(0, 13).join("")}...` : name;
+  return characters.length > 14 ? `${characters.slice(0, 11).join("")}...` : name;
 }
 
 function morePairs({ covers }: BenchReport, paint: Paint): string {
