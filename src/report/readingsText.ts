@@ -1,3 +1,4 @@
+import { visible } from "../scenario/wording.ts";
 import type {
   BenchReport,
   BoundedReturnLoss,
@@ -38,7 +39,7 @@ export function readingsText(report: BenchReport, paint: Paint = plain): string 
     ),
     lines(
       "Notes",
-      notes.map(({ line, text }) => `line ${line}: ${text}`),
+      notes.map(({ line, text }) => `line ${line}: ${visible(text.replace(/\s+/g, " "))}`),
       paint,
     ),
     covers.length === 0 ? "" : paragraph(trustWords(report)),

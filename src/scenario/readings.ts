@@ -4,6 +4,7 @@ import type { Progress } from "./readingsCsv.ts";
 import { type FileFault, faultList } from "./readingsFaults.ts";
 import { portsOf, readSweeps, type SweepFile, unreadable } from "./readingsSweep.ts";
 import type { ReadingsTable } from "./readingsTable.ts";
+import { didYouMean, listed, shown } from "./wording.ts";
 import { fromFolder, judgeYaml, readText } from "./yamlFile.ts";
 
 /** What a coupler adds to a return loss. */
@@ -110,6 +111,12 @@ async function loadYaml(file: string, progress?: Progress): Promise<LoadedReadin
   if (names.length > 0 && (!names.includes("bare") || names.length < 2)) {
     const message = "sweeps of bare and of one cover or more are needed";
     faults.push({ code: "missing_sweep", message, file, ...places.ofKey(["sweeps"]) });
+  }
+  const known = ["bare", ...(read?.table?.covers ?? []), ...names];
+  for (const state of Object.keys(settings.returnLossesDb)) {
+    if (known.includes(state) || read?.faults.length) continue;
+    const message = `no reading of ${shown(state)}, expected ${listed([...new Set(known)])}${didYouMean(state, known)}`;
+    faults.push({ code: "unknown_state", message, file, ...places.ofKey(["return_losses", state]) });
   }
   if (read?.table && aboveReference(settings.coupler, read.table)) {
     const message =

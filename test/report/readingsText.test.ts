@@ -121,6 +121,11 @@ describe("readingsText", () => {
     expect(text).toContain("(line 20, 21, 22, 23, 24, 25, 26, 27 and 12 more): not used");
   });
 
+  it("shows of a note nothing that a terminal would obey", () => {
+    const text = readingsText(report({ loss }, { notes: [{ line: 3, text: "wind\nand \u001b[2J rain" }] }));
+    expect(text).toContain("line 3: wind and \\u{1b}[2J rain");
+  });
+
   it("keeps to 80 columns with a long name, and has a row of data for each figure", () => {
     const long = report(
       {},

@@ -242,6 +242,11 @@ describe("a YAML of readings", () => {
     ["a reading that is no number", yaml.replace("-40.23 dBm", "loud"), '13: level: read "loud"'],
     ["units mixed", yaml.replace("-40.23 dBm", "-40.23 dB"), "13: level", "line 10 has dBm"],
     ["an unsorted order", yaml.replace("order: 3", "order: 1"), "12: time: read"],
+    [
+      "a return loss of a state that never occurs",
+      yaml.replace("film: 14 dB", "flim: 14 dB"),
+      '7: no reading of "flim", expected bare, film (did you mean film?)',
+    ],
     ["nothing to reduce", "frequency: 10 GHz\n", "1: missing readings (or table, sweeps)"],
     ["both kinds of table", `${yaml}table: bench.csv\n`, "both table and readings"],
     ["a table that is not there", "table: none.csv\n", "1: no such file"],
