@@ -72,7 +72,7 @@ export { multipathYear, rainYear, shorterPeriodFactor } from "./path/fadingPerio
 export { foliageLoss } from "./path/foliage.ts";
 export { freeSpaceLoss } from "./path/freeSpaceLoss.ts";
 export { fresnelRadius } from "./path/fresnelRadius.ts";
-export { geodesicPath, pointAlong } from "./path/geodesic.ts";
+export { geodesicPath, pointAlong, pointsTowards } from "./path/geodesic.ts";
 export { earthBulge, horizonDistance, lineOfSightLimit, rayClearance, takeOffAngle } from "./path/horizon.ts";
 export { knifeEdgeLoss } from "./path/knifeEdge.ts";
 export { locatorToPoint, pointToLocator } from "./path/locator.ts";
@@ -98,6 +98,8 @@ export {
 // Studies and reports
 export { coversCsv, coversJson } from "./report/coversData.ts";
 export { coversText } from "./report/coversText.ts";
+export { horizonCsv, horizonJson } from "./report/horizonData.ts";
+export { horizonText } from "./report/horizonText.ts";
 export { marginCsv, marginJson } from "./report/marginData.ts";
 export { marginReportText } from "./report/marginReportText.ts";
 export { materialsText } from "./report/materialsText.ts";
@@ -109,14 +111,19 @@ export { averagePower } from "./safety/averagePower.ts";
 export { cautions } from "./safety/cautions.ts";
 export { exposure, exposureByGain } from "./safety/exposure.ts";
 export { exposureLimits } from "./safety/exposureLimits.ts";
+export { readCoordinate } from "./scenario/coordinates.ts";
 export { loadScenario } from "./scenario/load.ts";
 export { nearest } from "./scenario/nearest.ts";
 export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/quantity.ts";
 export { scenarioJsonSchema } from "./scenario/schema.ts";
+export { TerrainError } from "./scenario/terrain/faults.ts";
+export { openTerrain } from "./scenario/terrain/openTerrain.ts";
+export type { ElevationSource, Terrain } from "./scenario/terrain/types.ts";
 export type { Diagnostic, Scenario } from "./scenario/types.ts";
 export { breakEven } from "./study/breakEven.ts";
 export { coverVerdict } from "./study/coverVerdict.ts";
 export { exposureOfLink } from "./study/exposureOfLink.ts";
+export { type HorizonPlace, horizonRound } from "./study/horizonRound.ts";
 export { marginReport } from "./study/marginReport.ts";
 export { materialThickness } from "./study/materialThickness.ts";
 export { thickness } from "./study/thickness.ts";

@@ -2,6 +2,7 @@ import { Command } from "commander";
 import { budgetCommand } from "./budget.ts";
 import { checkCommand } from "./check.ts";
 import { coversCommand } from "./covers.ts";
+import { horizonCommand } from "./horizon.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
 import { schemaCommand } from "./schema.ts";
@@ -25,6 +26,7 @@ const program = new Command("oilskin")
 for (const command of [
   budgetCommand,
   coversCommand,
+  horizonCommand,
   checkCommand,
   newCommand,
   thicknessCommand,
