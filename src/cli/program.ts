@@ -5,6 +5,7 @@ import { coversCommand } from "./covers.ts";
 import { horizonCommand } from "./horizon.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
+import { pathCommand } from "./path.ts";
 import { schemaCommand } from "./schema.ts";
 import { UserError } from "./terminal.ts";
 import { thicknessCommand } from "./thickness.ts";
@@ -26,6 +27,7 @@ const program = new Command("oilskin")
 for (const command of [
   budgetCommand,
   coversCommand,
+  pathCommand,
   horizonCommand,
   checkCommand,
   newCommand,

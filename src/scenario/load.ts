@@ -1,5 +1,6 @@
 import { dirname } from "node:path";
 import { withReadings } from "./coverReadings.ts";
+import { withTerrain } from "./pathTerrain.ts";
 import { danglingNames } from "./references.ts";
 import { scenarioSchema } from "./schema.ts";
 import type { Diagnostic, Scenario } from "./types.ts";
@@ -10,7 +11,8 @@ export type Loaded =
   | { readonly scenario?: undefined; readonly diagnostics: readonly Diagnostic[] };
 
 /**
- * Reads a scenario and checks all of it, and the tables of readings that its covers name.
+ * Reads a scenario and checks all of it, the tables of readings that its covers name and the terrain of its
+ * path.
  *
  * @param pathOrText  path of a YAML file, or the YAML itself (anything with a line break or ": " in it); the paths in
  *                    a text start from the working directory, those in a file from its folder
@@ -26,7 +28,7 @@ export async function loadScenario(pathOrText: string): Promise<Loaded> {
 
 /** The same for a text whose paths start from `folder`. */
 export async function judgeScenario(text: string, folder: string): Promise<Loaded> {
-  const { value, diagnostics } = await judgeYaml(text, {
+  const { value, places, diagnostics } = await judgeYaml(text, {
     schema: scenarioSchema,
     noun: "scenario",
     starter: "`oilskin new FILE` writes a starter",
@@ -35,5 +37,9 @@ export async function judgeScenario(text: string, folder: string): Promise<Loade
       return { raw, faults: [...danglingNames(raw), ...faults] };
     },
   });
-  return value === undefined ? { diagnostics } : { scenario: value };
+  if (value === undefined) return { diagnostics };
+  const { path, messages } = await withTerrain(value.path, folder);
+  if (messages.length === 0) return { scenario: { ...value, path } };
+  const place = places.ofValue(["path", "terrain"]);
+  return { diagnostics: messages.map((message) => ({ code: "bad_terrain", message, ...place })) };
 }
