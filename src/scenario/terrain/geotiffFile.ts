@@ -8,6 +8,9 @@ import type { ElevationSource } from "./types.ts";
 /** Steps along one side of a block; it shares its edge samples with its neighbours. */
 const BLOCK = 1024;
 
+/** A place this far beyond the last sample lies on it, rounded [steps]. */
+const EDGE = 1e-6;
+
 /** Blocks kept in memory, 4.2 MB each, 101 MB together. */
 const MOST_BLOCKS = 24;
 
@@ -47,8 +50,9 @@ export async function geotiffSource(path: string, name: string): Promise<Elevati
     keyAt: (latitude, longitude) => {
       const row = (north - latitude) / degreesPerRow;
       const column = degreesEast(west, longitude) / degreesPerColumn;
-      if (!(row >= 0 && row <= rows - 1 && column <= columns - 1)) return -1;
-      const blockOf = (index: number, last: number) => Math.floor(Math.min(index, last - 1) / BLOCK);
+      if (!(row > -EDGE && row < rows - 1 + EDGE && column < columns - 1 + EDGE)) return -1;
+      const blockOf = (index: number, last: number) =>
+        Math.floor(Math.min(Math.max(index, 0), last - 1) / BLOCK);
       return blockOf(row, rows - 1) * blocksAcross + blockOf(column, columns - 1);
     },
     nameOf: () => name,

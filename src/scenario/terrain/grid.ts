@@ -29,8 +29,8 @@ export function heightIn(grid: Grid, latitude: number, longitude: number): numbe
   const { heightsM, columns, voidM } = grid;
   const row = (grid.north - latitude) * grid.rowsPerDegree;
   const column = degreesEast(grid.west, longitude) * grid.columnsPerDegree;
-  const r = Math.min(Math.floor(row), grid.rows - 2);
-  const c = Math.min(Math.floor(column), columns - 2);
+  const r = cellOf(row, grid.rows);
+  const c = cellOf(column, columns);
   const [u, w] = [row - r, column - c];
   const first = r * columns + c;
   let sum = 0;
@@ -48,8 +48,17 @@ export function heightIn(grid: Grid, latitude: number, longitude: number): numbe
   return weights > LEAST_WEIGHT ? sum / weights : Number.NaN;
 }
 
+/** Number of the cell between two samples; rounding at an edge must not leave the grid. */
+function cellOf(position: number, samples: number): number {
+  return Math.min(Math.max(Math.floor(position), 0), samples - 2);
+}
+
+/** A place this little west of a meridian lies on it, rounded [deg]. */
+const ROUNDING_DEG = 1e-9;
+
 /** How far east of a meridian a longitude lies, 0 up to 360 [deg]. */
 export function degreesEast(of: number, longitude: number): number {
   const turned = (longitude - of) % 360;
-  return turned < 0 ? turned + 360 : turned;
+  const east = turned < 0 ? turned + 360 : turned;
+  return east > 360 - ROUNDING_DEG ? 0 : east;
 }

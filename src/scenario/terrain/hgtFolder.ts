@@ -12,11 +12,6 @@ const MOST_TILES = 6;
 /** N46E007.hgt, n46e007.hgt.zip, N46E007.SRTMGL1.hgt.zip */
 const tileFile = /^([NS]\d{2}[EW]\d{3})(?:\.[A-Z0-9]+)?\.hgt(\.zip)?$/i;
 
-/** Whether a file's name is that of a tile. */
-export function isTileFile(path: string): boolean {
-  return tileFile.test(basename(path));
-}
-
 /**
  * Elevation from a folder of SRTM tiles, plain or zipped, or from a single tile.
  *
@@ -25,10 +20,10 @@ export function isTileFile(path: string): boolean {
  *
  * @param path  of the folder or tile
  * @param name  as the user named it
- * @throws TerrainError on a folder that cannot be read or that holds no tile
+ * @throws TerrainError on a folder that cannot be read or holds no tile, and on a tile that is not named as one
  */
 export function hgtSource(path: string, name: string): ElevationSource {
-  const files = isTileFile(path) ? new Map([[tileOf(path)!, path]]) : tilesIn(path, name);
+  const files = /\.hgt(\.zip)?$/i.test(path) ? oneTile(path, name) : tilesIn(path, name);
   return gridSource({
     name,
     stepM: finestStep([...files.values()]),
@@ -51,6 +46,13 @@ function cornerOf(key: number): [south: number, west: number] {
 
 function tileOf(path: string): string | undefined {
   return tileFile.exec(basename(path))?.[1]?.toUpperCase();
+}
+
+function oneTile(path: string, name: string): Map<string, string> {
+  const tile = tileOf(path);
+  if (tile !== undefined) return new Map([[tile, path]]);
+  const message = "is not named by its south-west corner, expected a name such as N53W004.hgt";
+  throw new TerrainError(name, "bad_tile_name", message);
 }
 
 /** Files of tiles by the tile's name; a plain one goes before a zipped one. */

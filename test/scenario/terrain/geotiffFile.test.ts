@@ -64,6 +64,20 @@ describe("a GeoTIFF file", () => {
     expect(heightsM[0]).toBeCloseTo(120, 6);
   });
 
+  it("is one surface over the borders of the blocks in which it is read", async () => {
+    const side = 1100; // a block and a bit
+    const values = Float32Array.from({ length: side * side }, (_, i) => Math.floor(i / side) + (i % side));
+    const metadata = { ...wgs84, width: side, height: side, ModelPixelScale: [0.001, 0.001, 0] };
+    writeFileSync(join(folder, file), Buffer.from(writeArrayBuffer(values, metadata)));
+    const rows = [0, 1023.5, 1024, 1024.5, 1099];
+    const places = rows.flatMap((row) => rows.map((column) => ({ row, column })));
+    const { heightsM } = await heights(
+      places.map(({ row }) => 47 - 0.001 * row),
+      places.map(({ column }) => 7 + 0.001 * column),
+    );
+    for (const [i, { row, column }] of places.entries()) expect(heightsM[i]).toBeCloseTo(row + column, 4);
+  });
+
   it.each([
     ["its own no-data value", 1234, { GDAL_NODATA: "1234\0" }],
     ["a height that no place has", -9999, {}],

@@ -159,6 +159,8 @@ describe("a folder of tiles", () => {
       const opened = await openTerrain(path, folder);
       return opened.ok ? [] : opened.faults.map(({ code, file }) => `${file} ${code}`);
     };
+    writeFileSync(join(folder, "hills.hgt"), "");
+    expect(await codes("hills.hgt")).toEqual(["hills.hgt bad_tile_name"]);
     expect(await codes("bare")).toEqual(["bare no_tiles"]);
     expect(await codes("nowhere")).toEqual(["nowhere no_file"]);
     expect(await codes("N10E010.hgt")).toEqual(["N10E010.hgt no_file"]);
