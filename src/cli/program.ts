@@ -9,6 +9,7 @@ import { pathCommand } from "./path.ts";
 import { schemaCommand } from "./schema.ts";
 import { UserError } from "./terminal.ts";
 import { thicknessCommand } from "./thickness.ts";
+import { yearCommand } from "./year.ts";
 
 /** Exit status of bad input and of a command line that makes no sense. */
 const BAD_INPUT = 2;
@@ -27,6 +28,7 @@ const program = new Command("oilskin")
 for (const command of [
   budgetCommand,
   coversCommand,
+  yearCommand,
   pathCommand,
   horizonCommand,
   checkCommand,

@@ -1,6 +1,8 @@
 import { dirname } from "node:path";
+import { withRainMap } from "./climateMap.ts";
 import { withReadings } from "./coverReadings.ts";
 import { withTerrain } from "./pathTerrain.ts";
+import type { FaultPath } from "./positions.ts";
 import { danglingNames } from "./references.ts";
 import { scenarioSchema } from "./schema.ts";
 import type { Diagnostic, Scenario } from "./types.ts";
@@ -11,8 +13,8 @@ export type Loaded =
   | { readonly scenario?: undefined; readonly diagnostics: readonly Diagnostic[] };
 
 /**
- * Reads a scenario and checks all of it, the tables of readings that its covers name and the terrain of its
- * path.
+ * Reads a scenario and checks all of it, the tables of readings that its covers name, the terrain of its
+ * path and the rain map of its climate.
  *
  * @param pathOrText  path of a YAML file, or the YAML itself (anything with a line break or ": " in it); the paths in
  *                    a text start from the working directory, those in a file from its folder
@@ -39,7 +41,14 @@ export async function judgeScenario(text: string, folder: string): Promise<Loade
   });
   if (value === undefined) return { diagnostics };
   const { path, messages } = await withTerrain(value.path, folder);
-  if (messages.length === 0) return { scenario: { ...value, path } };
-  const place = places.ofValue(["path", "terrain"]);
-  return { diagnostics: messages.map((message) => ({ code: "bad_terrain", message, ...place })) };
+  const { climate, mapMessages } = withRainMap(value, folder);
+  if (messages.length + mapMessages.length === 0) return { scenario: { ...value, path, climate } };
+  const faults = (code: string, found: readonly string[], at: FaultPath) =>
+    found.map((message) => ({ code, message, ...places.ofValue(at) }));
+  return {
+    diagnostics: [
+      ...faults("bad_terrain", messages, ["path", "terrain"]),
+      ...faults("bad_map", mapMessages, ["climate", "map"]),
+    ],
+  };
 }

@@ -1,6 +1,7 @@
 import * as z from "zod";
 import { modes as builtInModes, type Mode } from "../receiver/modes.ts";
 import { dishSchema, feedSchema } from "./antennaSchema.ts";
+import { climateSchema } from "./climateSchema.ts";
 import { coverSchema } from "./coverSchema.ts";
 import { group, named, oneOf, text } from "./fields.ts";
 import { pathSchema } from "./pathSchema.ts";
@@ -120,6 +121,7 @@ export const scenarioSchema = group(
     modes: named(mode, "modes of your own").optional(),
     path: pathSchema,
     weather: named(weatherSchema, "the weathers").optional(),
+    climate: climateSchema.optional(),
     decision: decision.optional(),
   },
   "a scenario: title, frequency, transmitter, receiver, feeds, path and more",

@@ -1,3 +1,5 @@
+import type { MonthlyClimate } from "../atmosphere/rainRate.ts";
+import type { RainZone } from "../atmosphere/rainZones.ts";
 import type { Bounded } from "../cover/bounded.ts";
 import type { Wetting } from "../cover/materials.ts";
 import type { SurfaceCare } from "../cover/surfaceState.ts";
@@ -134,6 +136,8 @@ export interface Cover {
 
 export interface Weather {
   readonly rainMmPerH: Uncertain;
+  /** What that rain takes on the path [dB], where the statistics of a year tell it and not the rate. */
+  readonly rainFadeDb?: number | undefined;
   /** Length of path in the rain [km]; undefined takes the effective length of P.530. */
   readonly extentKm?: number | undefined;
   /** Liquid water of fog on the path [g/m3]. */
@@ -196,6 +200,24 @@ export interface ScenarioPath {
   readonly coastKm?: { readonly from?: number | undefined; readonly to?: number | undefined } | undefined;
 }
 
+/** How the rain of an average year was given. */
+export type RainOfTheYear =
+  | { readonly kind: "rate"; readonly rainRate001MmPerH: number }
+  | { readonly kind: "zone"; readonly zone: RainZone }
+  | ({ readonly kind: "monthly" } & MonthlyClimate)
+  /** The rate is that of the map half-way; `loadScenario` reads it. */
+  | { readonly kind: "map"; readonly folder: string; readonly rainRate001MmPerH: number | undefined };
+
+/** Rain and air of an average year. */
+export interface Climate {
+  readonly rain: RainOfTheYear;
+  /** Refractivity gradient of the lowest 65 m not exceeded for 1 % of the year [N-units/km]. */
+  readonly dN1?: number | undefined;
+  readonly terrainRoughnessM?: number | undefined;
+  /** Above mean sea level [m]; undefined leaves wet snow out. */
+  readonly meanRainHeightM?: number | undefined;
+}
+
 export interface Scenario {
   readonly title: string;
   readonly frequencyGHz: number;
@@ -208,6 +230,7 @@ export interface Scenario {
   readonly modes: Readonly<Record<string, Mode>>;
   readonly path: ScenarioPath;
   readonly weather: Readonly<Record<string, Weather>>;
+  readonly climate?: Climate | undefined;
   readonly decision: Decision;
 }
 
