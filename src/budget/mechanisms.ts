@@ -150,7 +150,7 @@ function troposcatter(
   ];
 }
 
-/** A cell with the weather's rain over the middle of the path, both beams raised to it. */
+/** A cell with the weather's rain over the middle of the path, both beams raised to it; none where only ice is seen. */
 function rainScatter(
   { path: { from, to } }: Scenario,
   { analysis, sight, profile, polarization }: GroundPath,
@@ -170,7 +170,8 @@ function rainScatter(
     visible2AmslM: seenFrom(sight.rxHeightAmslM, analysis.rxHorizonMrad),
   };
   const { heightKm } = rainHeight({ latitudeDeg: pointAlong({ from, to, share: 0.5 }).latitude });
-  const { overRainM } = scatterHeight({ ...visible, rainHeightAmslM: 1000 * heightKm });
+  const { overRainM, iceOnly } = scatterHeight({ ...visible, rainHeightAmslM: 1000 * heightKm });
+  if (iceOnly) return [];
   const openKm = heightKm - Math.max(visible.visible1AmslM, visible.visible2AmslM) / 1000;
   const { lossDb } = rainScatterLoss({
     frequencyGHz,

@@ -157,7 +157,7 @@ function waysTable({ verdict, ways }: WeatherWays, study: PathStudy, paint: Pain
     ? []
     : [[cell("  line of sight"), cell(`cut by ${height(-worst)}`), cell(""), cell(""), cell("")]];
   return columns([
-    ["way", "loss dB", "beyond free space", "sigma", "margin dB"].map((text) => cell(text)),
+    ["way", "loss dB", "excess dB", "sigma", "margin dB"].map((text) => cell(text)),
     RULE,
     ...cut,
     ...ways.map(({ label, lossDb, excessDb, sigmaDb, marginDb, carries }) => {
@@ -194,7 +194,7 @@ function airText({ settings: { k, kLow, N0, dN }, weathers }: PathStudy): string
   const scattered = weathers.some(({ ways }) => ways.some(({ name }) => name === "rain_scatter"));
   const raised = scattered ? "Rain scatter takes a cell half-way and both beams raised to it. " : "";
   return paragraph(
-    `*: carries the path. ${raised}Air: k = ${k.toFixed(2)} usually and ${kLow.toFixed(2)} at its lowest, N0 = ` +
+    `*: carries the path; excess: beyond free space. ${raised}Air: k = ${k.toFixed(2)} usually and ${kLow.toFixed(2)} at its lowest, N0 = ` +
       `${Math.round(N0)}, dN = ${Math.round(dN)} N-units a km; the scenario's path may state them.`,
   );
 }

@@ -1,7 +1,9 @@
 import * as z from "zod";
+import { geodesicPath } from "../path/geodesic.ts";
 import { group, text } from "./fields.ts";
 import { quantity } from "./quantityField.ts";
 import { samePlace, siteSchema } from "./siteSchema.ts";
+import { LONGEST_PATH_KM } from "./terrain/sampleProfile.ts";
 import type { ScenarioPath } from "./types.ts";
 
 const trees = (end: string) =>
@@ -48,6 +50,14 @@ export const pathSchema = group(
   ({ from, to, terrain, k, k_low: kLow, refractivity = {}, foliage, coast }, context): ScenarioPath => {
     if (samePlace(from, to)) {
       const message = "the same place as from, expected another one";
+      context.addIssue({ code: "custom", message, path: ["to"], input: to });
+      return z.NEVER;
+    }
+    const { distanceKm } = geodesicPath(from, to);
+    if (distanceKm > LONGEST_PATH_KM) {
+      const message =
+        `a path of ${distanceKm.toFixed(0)} km, expected at most ${LONGEST_PATH_KM} km ` +
+        "(check the sign of the longitudes)";
       context.addIssue({ code: "custom", message, path: ["to"], input: to });
       return z.NEVER;
     }
