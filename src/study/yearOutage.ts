@@ -1,7 +1,7 @@
 import { evaluate } from "../budget/evaluate.ts";
 import { overreachWarning } from "../budget/overreach.ts";
 import { withWeather } from "../budget/prepare.ts";
-import type { Case, EndChoice, Link, PathGeometry, Warning } from "../budget/types.ts";
+import type { Budget, Case, EndChoice, Link, PathGeometry, Warning } from "../budget/types.ts";
 import { outside } from "../numeric/check.ts";
 import { bisect } from "../numeric/roots.ts";
 import { rainWorstMonth } from "../path/fadingPeriod.ts";
@@ -98,7 +98,8 @@ export function yearOutage(link: Link, mode: string): YearOutage {
     };
     const inRain = (rateMmPerH: number, rainFadeDb: number, wets: readonly EndName[]) =>
       budgetIn({ ...clear, rainMmPerH: { value: rateMmPerH }, rainFadeDb, wets });
-    const clearMarginDb = budgetIn(clear).marginDb;
+    const { marginDb: clearMarginDb, mechanisms } = budgetIn(clear);
+    for (const warning of sightWarnings(mechanisms[0]!)) warnings.set(warning.code, warning);
     const outage = (keepDb: number, wets: readonly EndName[]): Outage => {
       const left = (rateMmPerH: number, fadeDb: number) => inRain(rateMmPerH, fadeDb, wets).marginDb - keepDb;
       return outageOf(rainBelow(rain, clearMarginDb - keepDb, left), sharesBelow(clearMarginDb - keepDb));
@@ -164,6 +165,13 @@ function endsWith(
     transmitter: { feed: transmitter.feed, cover: sent },
     receiver: { feed: receiver.feed, cover: heard },
   };
+}
+
+/** P.530 is for lines of sight; over an obstacle the hours are a guess, and in rain another way may carry the path. */
+function sightWarnings({ name, label }: Budget["mechanisms"][number]): Warning[] {
+  if (name === "line_of_sight") return [];
+  const message = `P.530 holds for lines of sight, and ${label} carries this path in clear air: take the hours for a guess`;
+  return [{ code: "no_line_of_sight", message, where: "path" }];
 }
 
 /** The scenario's first weather without rain, fog, water, ice or snow, or its first one freed of them. */

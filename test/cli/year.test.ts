@@ -100,6 +100,18 @@ describe("oilskin year", () => {
     );
   });
 
+  it("warns where no line of sight carries the path, and not where one does", () => {
+    const doubt = "P.530 holds for lines of sight, and diffraction over terrain carries this path";
+    const ridge = join(folder, "ridge.csv");
+    // A hill of 200 m half-way over the roofs.
+    writeFileSync(ridge, "distance_km,height_m\n0,21\n0.9,200\n1.79,33\n");
+    const text = readFileSync(town, "utf8").replace(/^path:/m, `path:\n  terrain: ${ridge}`);
+    writeFileSync(join(folder, "hill.yaml"), text);
+    const { stdout, stderr } = oilskin(["year", join(folder, "hill.yaml")]);
+    expect(flowing(stderr + stdout)).toContain(doubt);
+    expect(flowing(year())).not.toContain("lines of sight");
+  });
+
   it("refuses a scenario without a climate, a climate with a fault, and a mode that is none", () => {
     const bare = oilskin(["year", demo]);
     expect(bare).toMatchObject({ status: 2, stdout: "" });
