@@ -67,6 +67,7 @@ describe("the floors of the house", () => {
   it("keeps packages and the system out of models and arithmetic", () => {
     const onLibrary = [
       "path/geodesic.ts", // geodesics on WGS84
+      "path/declination.ts", // World Magnetic Model
       "readings/leastSquares.ts", // Levenberg-Marquardt
     ];
     const offenders = files

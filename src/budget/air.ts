@@ -133,10 +133,14 @@ function gasLossPerKm(frequencyGHz: number, weather: Weather, [from, to]: readon
 function rainLoss(
   { frequencyGHz, polarization }: Scenario,
   { distanceKm, elevationDeg, backElevationDeg }: PathGeometry,
-  { rainMmPerH, extentKm }: Weather,
+  { rainMmPerH, rainFadeDb, extentKm }: Weather,
   where: string,
   warnings: Warning[],
 ): Entry[] {
+  if (rainFadeDb !== undefined) {
+    const heading = { id: "path.rain", stage: "path", label: "rain of a year", source: "P.530-18" } as const;
+    return [lossEntry(heading, rainFadeDb, RAIN_SIGMA_SHARE * rainFadeDb)];
+  }
   const { value: rainRateMmPerH, sigma: rateSigma = 0 } = rainMmPerH;
   if (rainRateMmPerH === 0) return [];
   const { alpha, dbPerKm } = specificRainAttenuation({

@@ -1,5 +1,6 @@
 import { requiredSnrInBandwidth } from "../receiver/modes.ts";
 import { lossEntry, sumOf } from "./entry.ts";
+import { mechanismEntries, mechanismsOf } from "./mechanisms.ts";
 import { noiseSide } from "./noiseSide.ts";
 import type { Budget, Case, Link, PreparedEnd } from "./types.ts";
 import { combinedSigma, probabilityAboveZero, verdictOf } from "./verdict.ts";
@@ -21,6 +22,7 @@ export function evaluate(link: Link, chosen: Case): Budget {
 
   const overSender = have(transmitter.dishCover, chosen.weather, "weather");
   const overReceiver = have(receiver.dishCover, chosen.weather, "weather");
+  const mechanisms = mechanismsOf(link, weather, transmitter, receiver);
   const entries = [
     transmitter.power!,
     transmitter.line,
@@ -28,6 +30,8 @@ export function evaluate(link: Link, chosen: Case): Budget {
     ...transmitter.antenna,
     ...overSender.entries,
     ...weather.entries,
+    ...mechanismEntries(mechanisms[0]!),
+    ...link.foliage,
     ...overReceiver.entries.toReversed(),
     ...receiver.antenna,
     ...heard.entries.toReversed(),
@@ -65,6 +69,7 @@ export function evaluate(link: Link, chosen: Case): Budget {
     marginSigmaDb,
     holdProbability,
     verdict: verdictOf(marginDb, holdProbability, scenario.decision),
+    mechanisms: mechanisms.map(({ warnings, ...mechanism }) => mechanism),
     transmitterCover: stateOf(sent),
     receiverCover: stateOf(heard),
     warnings: [
@@ -72,6 +77,7 @@ export function evaluate(link: Link, chosen: Case): Budget {
       ...transmitter.warnings,
       ...receiver.warnings,
       ...weather.warnings,
+      ...mechanisms[0]!.warnings,
       ...sent.warnings,
       ...heard.warnings,
       ...overSender.warnings,

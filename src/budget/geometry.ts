@@ -1,17 +1,19 @@
 import { geodesicPath, headingUncertaintyDeg } from "../path/geodesic.ts";
 import { effectiveRadiusKm, lineOfSightLimit, takeOffAngle } from "../path/horizon.ts";
-import type { Scenario, Site } from "../scenario/types.ts";
+import type { Scenario, ScenarioPath, Site } from "../scenario/types.ts";
+import { pathSettings } from "./pathSettings.ts";
 import type { PathGeometry, Warning } from "./types.ts";
 
-/** Usual bending of the ray near the ground. */
-const MEDIAN_K = 4 / 3;
+/** A profile's ground may differ from a site's by this [m]: elevation data are no better (common practice, no source). */
+const GROUND_DIFFERS_M = 30;
 
 const DEG_PER_MRAD = 180 / Math.PI / 1000;
 
 /** Length, headings and horizons of the path between the two sites. */
-export function geometryOf({ path: { from, to } }: Scenario): PathGeometry {
+export function geometryOf({ path }: Scenario): PathGeometry {
+  const { from, to } = path;
   const { distanceKm, headingDeg, backHeadingDeg } = geodesicPath(from, to);
-  const radius = effectiveRadiusKm(MEDIAN_K);
+  const radius = effectiveRadiusKm(pathSettings(path).k);
   const radiusKm = from.positionErrorKm + to.positionErrorKm;
   const antenna = ({ groundM, heightM }: Site) => groundM + heightM;
   const elevation = (own: Site, other: Site) =>
@@ -40,15 +42,15 @@ export function geometryOf({ path: { from, to } }: Scenario): PathGeometry {
 }
 
 /** Doubts about the path itself. */
-export function geometryWarnings(path: PathGeometry, terrainGiven: boolean): Warning[] {
+export function geometryWarnings(path: PathGeometry, scenarioPath: ScenarioPath): Warning[] {
   const warnings: Warning[] = [];
   const { distanceKm, radioHorizonKm } = path;
-  if (distanceKm > radioHorizonKm) {
+  if (distanceKm > radioHorizonKm && scenarioPath.profile === undefined) {
     warnings.push({
       code: "beyond_horizon",
       message:
         `the path of ${distanceKm.toFixed(1)} km reaches past the smooth-Earth horizon of ` +
-        `${radioHorizonKm.toFixed(1)} km; the report takes line of sight, which it has not`,
+        `${radioHorizonKm.toFixed(1)} km; a smooth Earth at sea level is taken, no terrain being given`,
       where: "path",
     });
   }
@@ -59,12 +61,33 @@ export function geometryWarnings(path: PathGeometry, terrainGiven: boolean): War
       where: "path",
     });
   }
-  if (terrainGiven) {
-    warnings.push({
-      code: "terrain_not_used",
-      message: "the terrain file is not read by this version; nothing stands in the way in this report",
+  return [...warnings, ...terrainWarnings(scenarioPath)];
+}
+
+/** Where the terrain has no heights, and where it contradicts the sites. */
+function terrainWarnings({ from, to, profile, gaps = [] }: ScenarioPath): Warning[] {
+  if (profile === undefined) return [];
+  const last = profile.heightsM[profile.heightsM.length - 1]!;
+  const ends = [
+    { end: "from", siteM: from.groundM, groundM: profile.heightsM[0]! },
+    { end: "to", siteM: to.groundM, groundM: last },
+  ];
+  return [
+    ...gaps.map(({ reason, source, fromKm, toKm }) => ({
+      code: "terrain_gap",
+      message:
+        `no height from ${fromKm.toFixed(1)} to ${toKm.toFixed(1)} km (${reason}, ${source}); ` +
+        "the ground is taken to run straight over it",
       where: "path.terrain",
-    });
-  }
-  return warnings;
+    })),
+    ...ends
+      .filter(({ siteM, groundM }) => Math.abs(siteM - groundM) > GROUND_DIFFERS_M)
+      .map(({ end, siteM, groundM }) => ({
+        code: "ground_differs",
+        message:
+          `the terrain has ${Math.round(groundM)} m where the site says ${Math.round(siteM)} m; ` +
+          "the antenna stands as high above sea level as the site says",
+        where: `path.${end}.ground`,
+      })),
+  ];
 }

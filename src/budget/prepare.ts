@@ -5,6 +5,8 @@ import { antennaEntries, type EndHeading, endHeading } from "./antennaEntries.ts
 import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
+import { countedGround } from "./groundPath.ts";
+import { foliageEntries, foliageWarnings } from "./mechanisms.ts";
 import { isNothing, mouthUnder } from "./mouth.ts";
 import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning, Wetness } from "./types.ts";
 
@@ -33,8 +35,10 @@ export function prepare(scenario: Scenario): Link {
     transmitter: prepareEnds(scenario, "transmitter", path, weathers),
     receiver: prepareEnds(scenario, "receiver", path, weathers),
   };
-  const warnings = geometryWarnings(path, scenario.path.terrain !== undefined);
-  return { scenario, path, ends, weathers, modes: scenario.modes, warnings };
+  const ground = countedGround(scenario, path);
+  const warnings = [...geometryWarnings(path, scenario.path), ...foliageWarnings(scenario)];
+  const foliage = foliageEntries(scenario);
+  return { scenario, path, ground, foliage, ends, weathers, modes: scenario.modes, warnings };
 }
 
 /** The same link with one weather more, or another one under the same name: what a sweep of the rain rate needs. */

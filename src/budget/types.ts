@@ -2,6 +2,7 @@ import type { Bounded } from "../cover/bounded.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { EndName, Scenario, Site, Snow, Weather } from "../scenario/types.ts";
 import type { Entry } from "./entry.ts";
+import type { GroundPath } from "./groundPath.ts";
 
 /** A doubt that the user should know of; `where` names the part of the scenario. */
 export interface Warning {
@@ -21,6 +22,22 @@ export interface Case {
 export interface EndChoice {
   readonly feed: string;
   readonly cover: string;
+}
+
+export type MechanismName = "line_of_sight" | "diffraction" | "troposcatter" | "rain_scatter";
+
+/** One way that the signal may take between the antennas. */
+export interface Mechanism {
+  readonly name: MechanismName;
+  readonly label: string;
+  /** Free space and excess [dB], without gas and rain. */
+  readonly lossDb: number;
+  /** What it costs beyond free space [dB]. */
+  readonly excessDb: number;
+  readonly sigmaDb: number;
+  readonly source: string;
+  /** Doubts that count where this way carries the path. */
+  readonly warnings: readonly Warning[];
 }
 
 export type Verdict = "closes" | "thin" | "fails";
@@ -47,6 +64,8 @@ export interface Budget {
   /** Probability that the margin is above 0, normal distribution. */
   readonly holdProbability: number;
   readonly verdict: Verdict;
+  /** The ways that the signal may take, the one that this budget uses first. */
+  readonly mechanisms: readonly Omit<Mechanism, "warnings">[];
   readonly transmitterCover: CoverState;
   readonly receiverCover: CoverState;
   readonly warnings: readonly Warning[];
@@ -73,10 +92,10 @@ export interface PathGeometry {
   readonly backHeadingDeg: number;
   /** Largest error of a heading that the locators leave [deg]. */
   readonly headingErrorDeg: number;
-  /** Elevation at which the transmitter sees the receiver, k = 4/3 [deg], and back. */
+  /** Elevation at which the transmitter sees the receiver, usual bending of the ray [deg], and back. */
   readonly elevationDeg: number;
   readonly backElevationDeg: number;
-  /** Distance at which the two antennas meet the smooth horizon, k = 4/3 [km]. */
+  /** Distance at which the two antennas meet the smooth horizon, usual bending of the ray [km]. */
   readonly radioHorizonKm: number;
   readonly from: Site;
   readonly to: Site;
@@ -148,6 +167,10 @@ export interface PreparedWeather {
 export interface Link {
   readonly scenario: Scenario;
   readonly path: PathGeometry;
+  /** The ground between the ends; undefined where nothing is known to stand in the way. */
+  readonly ground: GroundPath | undefined;
+  /** Trees near the ends. */
+  readonly foliage: readonly Entry[];
   /** By feed name. */
   readonly ends: Readonly<Record<EndName, Readonly<Record<string, PreparedEnd>>>>;
   readonly weathers: Readonly<Record<string, PreparedWeather>>;

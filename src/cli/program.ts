@@ -2,13 +2,16 @@ import { Command } from "commander";
 import { budgetCommand } from "./budget.ts";
 import { checkCommand } from "./check.ts";
 import { coversCommand } from "./covers.ts";
+import { horizonCommand } from "./horizon.ts";
 import { inferCommand } from "./infer.ts";
 import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
+import { pathCommand } from "./path.ts";
 import { readingsCommand } from "./readings.ts";
 import { schemaCommand } from "./schema.ts";
 import { UserError } from "./terminal.ts";
 import { thicknessCommand } from "./thickness.ts";
+import { yearCommand } from "./year.ts";
 
 /** Exit status of bad input and of a command line that makes no sense. */
 const BAD_INPUT = 2;
@@ -27,6 +30,9 @@ const program = new Command("oilskin")
 for (const command of [
   budgetCommand,
   coversCommand,
+  yearCommand,
+  pathCommand,
+  horizonCommand,
   checkCommand,
   newCommand,
   thicknessCommand,

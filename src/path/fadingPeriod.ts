@@ -56,6 +56,19 @@ export function rainYear({ worstMonthPercent }: { readonly worstMonthPercent: nu
   return { yearPercent: 0.3 * worstMonthPercent ** 1.15 };
 }
 
+/**
+ * Share of the average worst month from that of an average year, for rain: inverse of `rainYear`.
+ *
+ * @param yearPercent  [%], at least 0
+ * @returns share of the worst month [%], at most 100
+ */
+export function rainWorstMonth({ yearPercent }: { readonly yearPercent: number }): {
+  readonly worstMonthPercent: number;
+} {
+  requireNotNegative("yearPercent", yearPercent);
+  return { worstMonthPercent: Math.min(100, (yearPercent / 0.3) ** (1 / 1.15)) };
+}
+
 /** Ground under a path: `hilly-land` is hilly with no water near. */
 export type FadingTerrain = "flat" | "hilly" | "hilly-land";
 

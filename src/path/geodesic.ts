@@ -61,6 +61,32 @@ export function pointAlong({ from, to, share }: { from: Point; to: Point; share:
 }
 
 /**
+ * Points of the shortest line that leaves a place at a heading.
+ *
+ * Source: as `geodesicPath`
+ *
+ * @param headingDeg   true heading at `from` [deg]
+ * @param distancesKm  from `from`, any order [km]
+ */
+export function pointsTowards({
+  from,
+  headingDeg,
+  distancesKm,
+}: {
+  from: Point;
+  headingDeg: number;
+  distancesKm: readonly number[];
+}): Point[] {
+  requirePoint("from", from);
+  requireFinite("headingDeg", headingDeg);
+  const line = wgs84.DirectLine(from.latitude, from.longitude, headingDeg, 0);
+  return distancesKm.map((distanceKm) => {
+    const { lat2, lon2 } = line.Position(1000 * distanceKm);
+    return { latitude: lat2!, longitude: lon2! };
+  });
+}
+
+/**
  * Largest error of a heading [deg] when the far station is only known to lie within a circle.
  *
  *     asin(radius / distance); 180 where the circle holds the near station, as any heading may be right

@@ -1,6 +1,7 @@
 import type { Link, Verdict } from "../budget/types.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { cell, columns, RULE } from "./columns.ts";
+import { carriedText } from "./mechanismText.ts";
 import {
   abreast,
   capital,
@@ -57,9 +58,11 @@ export function answer(report: MarginReport, link: Link): string {
   );
   const first = own.filter(({ case: { mode } }) => mode === modes[0]);
   const costs = coverCosts(report, first);
-  return [...sentences, ...costs, "Line of sight is taken: no hill, tree or building in the way."]
-    .map((sentence) => paragraph(sentence))
-    .join("\n");
+  const way =
+    link.ground === undefined
+      ? ["Line of sight is taken: no hill, tree or building in the way."]
+      : carriedText(first);
+  return [...sentences, ...costs, ...way].map((sentence) => paragraph(sentence)).join("\n");
 }
 
 /** One mode in all weathers, the worst first. */

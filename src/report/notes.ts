@@ -11,10 +11,17 @@ export function warningText(warnings: readonly Warning[], paint: Paint): string 
 }
 
 /** What no figure of the report holds, so that silence is not taken for nothing. */
-export function leftOutText({ scenario }: Link): string {
+export function leftOutText({ scenario, ground }: Link): string {
   const left = [
-    "hills, trees and buildings in the way",
-    "troposcatter, ducting, aircraft and rain scatter, which can carry a path that this report fails",
+    ...(ground === undefined
+      ? [
+          "hills, trees and buildings in the way",
+          "troposcatter, ducting, aircraft and rain scatter, which can carry a path that this report fails",
+        ]
+      : [
+          ...(ground.fromTerrain ? [] : ["hills, trees and buildings in the way"]),
+          "ducting (`oilskin path` shows the lift) and aircraft scatter, which can carry a path that this report fails",
+        ]),
     "multipath fading",
     "crossed or tilted polarization",
     "a transmitter or receiver off frequency",
@@ -30,6 +37,22 @@ const brief = ["radio-frequency exposure", "masts and height", "lightning"].map(
   const { sentences } = cautions.find((caution) => caution.hazard === hazard)!;
   return sentences.slice(...(hazard === "radio-frequency exposure" ? [1, 4] : [0, 2])).join(" ");
 });
+
+/** For those who go up to an antenna or put it up. */
+export function heightCautions(paint: Paint): string {
+  const sentences = ["masts and height", "power lines and supplies", "lightning"].map((hazard) =>
+    cautions
+      .find((caution) => caution.hazard === hazard)!
+      .sentences.slice(0, hazard === "power lines and supplies" ? 1 : 2)
+      .join(" "),
+  );
+  return [paint("strong", "Caution"), ...sentences.map((text) => paragraph(text, "  - "))].join("\n");
+}
+
+/** The usual cautions, for whoever goes to the antennas. */
+export function cautionLines(): string {
+  return brief.map((sentence) => paragraph(sentence, "  - ")).join("\n");
+}
 
 /** Where published exposure limits are exceeded, and the usual cautions. */
 export function safetyText(found: LinkExposure, paint: Paint): string {
@@ -54,7 +77,7 @@ export function safetyText(found: LinkExposure, paint: Paint): string {
   return [
     paint("strong", "Caution"),
     paragraph(`${distance} An estimate for carrier all the time; local exposure rules decide.`, "  - "),
-    ...brief.map((sentence) => paragraph(sentence, "  - ")),
+    cautionLines(),
   ].join("\n");
 }
 

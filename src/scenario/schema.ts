@@ -1,10 +1,11 @@
 import * as z from "zod";
 import { modes as builtInModes, type Mode } from "../receiver/modes.ts";
 import { dishSchema, feedSchema } from "./antennaSchema.ts";
+import { climateSchema } from "./climateSchema.ts";
 import { coverSchema } from "./coverSchema.ts";
 import { group, named, oneOf, text } from "./fields.ts";
+import { pathSchema } from "./pathSchema.ts";
 import { quantity, uncertain } from "./quantityField.ts";
-import { samePlace, siteSchema } from "./siteSchema.ts";
 import type { Scenario } from "./types.ts";
 import { weatherSchema } from "./weatherSchema.ts";
 import { instead } from "./wording.ts";
@@ -106,16 +107,6 @@ const decision = group(
   "the decision: reserve and confidence",
 ).transform(({ reserve = 3, confidence = 90 }) => ({ reserveDb: reserve, confidence: confidence / 100 }));
 
-const path = group(
-  { from: siteSchema, to: siteSchema, terrain: text("the path of a terrain file").optional() },
-  "the path: from (the transmitter) and to (the receiver)",
-).transform(({ from, to, terrain }, context) => {
-  if (!samePlace(from, to)) return { from, to, terrain };
-  const message = "the same place as from, expected another one";
-  context.addIssue({ code: "custom", message, path: ["to"], input: to });
-  return z.NEVER;
-});
-
 /** The whole scenario file. Names that refer to each other are checked by `references.ts`. */
 export const scenarioSchema = group(
   {
@@ -128,8 +119,9 @@ export const scenarioSchema = group(
     covers: named(coverSchema, "the covers").optional(),
     dish: named(dishSchema, "the dishes").optional(),
     modes: named(mode, "modes of your own").optional(),
-    path,
+    path: pathSchema,
     weather: named(weatherSchema, "the weathers").optional(),
+    climate: climateSchema.optional(),
     decision: decision.optional(),
   },
   "a scenario: title, frequency, transmitter, receiver, feeds, path and more",

@@ -1,8 +1,12 @@
+import type { MonthlyClimate } from "../atmosphere/rainRate.ts";
+import type { RainZone } from "../atmosphere/rainZones.ts";
 import type { Bounded } from "../cover/bounded.ts";
 import type { Wetting } from "../cover/materials.ts";
 import type { SurfaceCare } from "../cover/surfaceState.ts";
 import type { WetModel } from "../cover/wetModels.ts";
+import type { Profile } from "../path/profile.ts";
 import type { Mode } from "../receiver/modes.ts";
+import type { TerrainGap } from "./terrain/types.ts";
 
 /**
  * A scenario after reading: every quantity in one canonical unit, named in the field.
@@ -132,6 +136,8 @@ export interface Cover {
 
 export interface Weather {
   readonly rainMmPerH: Uncertain;
+  /** What that rain takes on the path [dB], where the statistics of a year tell it and not the rate. */
+  readonly rainFadeDb?: number | undefined;
   /** Length of path in the rain [km]; undefined takes the effective length of P.530. */
   readonly extentKm?: number | undefined;
   /** Liquid water of fog on the path [g/m3]. */
@@ -170,6 +176,48 @@ export interface Decision {
   readonly confidence: number;
 }
 
+/** The two ends and what lies between; `budget/pathSettings.ts` stands in for what is not given. */
+export interface ScenarioPath {
+  readonly from: Site;
+  readonly to: Site;
+  /** File or folder of the ground's heights, as typed. */
+  readonly terrain?: string | undefined;
+  /** Ground from `from` to `to`, read from `terrain`. */
+  readonly profile?: Profile | undefined;
+  /** Stretches of the path where the terrain knows no height. */
+  readonly gaps?: readonly TerrainGap[] | undefined;
+  /** Effective Earth radius over the true one, on the usual day. */
+  readonly k?: number | undefined;
+  /** The same on a day when rays bend least. */
+  readonly kLow?: number | undefined;
+  /** Median refractivity at sea level [N-units]. */
+  readonly N0?: number | undefined;
+  /** Median fall of refractivity over the lowest kilometre [N-units/km]. */
+  readonly dN?: number | undefined;
+  /** Length of the ray within trees near each end [m]. */
+  readonly foliageM?: { readonly from: number; readonly to: number } | undefined;
+  /** Distance over land to the coast along the path, from each end [km]. */
+  readonly coastKm?: { readonly from?: number | undefined; readonly to?: number | undefined } | undefined;
+}
+
+/** How the rain of an average year was given. */
+export type RainOfTheYear =
+  | { readonly kind: "rate"; readonly rainRate001MmPerH: number }
+  | { readonly kind: "zone"; readonly zone: RainZone }
+  | ({ readonly kind: "monthly" } & MonthlyClimate)
+  /** The rate is that of the map half-way; `loadScenario` reads it. */
+  | { readonly kind: "map"; readonly folder: string; readonly rainRate001MmPerH: number | undefined };
+
+/** Rain and air of an average year. */
+export interface Climate {
+  readonly rain: RainOfTheYear;
+  /** Refractivity gradient of the lowest 65 m not exceeded for 1 % of the year [N-units/km]. */
+  readonly dN1?: number | undefined;
+  readonly terrainRoughnessM?: number | undefined;
+  /** Above mean sea level [m]; undefined leaves wet snow out. */
+  readonly meanRainHeightM?: number | undefined;
+}
+
 export interface Scenario {
   readonly title: string;
   readonly frequencyGHz: number;
@@ -180,8 +228,9 @@ export interface Scenario {
   readonly covers: Readonly<Record<string, Cover>>;
   readonly dish: Readonly<Record<string, Dish>>;
   readonly modes: Readonly<Record<string, Mode>>;
-  readonly path: { readonly from: Site; readonly to: Site; readonly terrain?: string | undefined };
+  readonly path: ScenarioPath;
   readonly weather: Readonly<Record<string, Weather>>;
+  readonly climate?: Climate | undefined;
   readonly decision: Decision;
 }
 

@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import {
   type FadingTerrain,
   multipathYear,
+  rainWorstMonth,
   rainYear,
   shorterPeriodFactor,
 } from "../../src/path/fadingPeriod.ts";
@@ -77,6 +78,21 @@ describe("the worst hours of the worst month", () => {
   it("refuse a year and an unknown terrain", () => {
     expect(() => shorterPeriodFactor({ terrain: "flat", periodHours: 8760 })).toThrow("periodHours");
     expect(() => shorterPeriodFactor({ terrain: "sea" as "flat", periodHours: 5 })).toThrow("terrain");
+  });
+});
+
+describe("the worst month of rain", () => {
+  it("has 0.0519 % where the year has 0.01 %", () => {
+    // ITU-R P.841, Q1 = 2.85 and beta = 0.13 (from memory): 2.85 x 0.01^0.87
+    expect(rainWorstMonth({ yearPercent: 0.01 }).worstMonthPercent).toBeCloseTo(0.0519, 4);
+  });
+  it("is the inverse of the year's", () => {
+    for (const worstMonthPercent of [0.001, 0.3, 5, 100]) {
+      const { yearPercent } = rainYear({ worstMonthPercent });
+      expect(rainWorstMonth({ yearPercent }).worstMonthPercent).toBeCloseTo(worstMonthPercent, 9);
+    }
+    expect(rainWorstMonth({ yearPercent: 100 }).worstMonthPercent).toBe(100);
+    expect(rainWorstMonth({ yearPercent: 0 }).worstMonthPercent).toBe(0);
   });
 });
 

@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { geodesicPath, headingUncertaintyDeg, pointAlong } from "../../src/path/geodesic.ts";
+import { geodesicPath, headingUncertaintyDeg, pointAlong, pointsTowards } from "../../src/path/geodesic.ts";
 import { describeReference, num } from "../reference.ts";
 
 const place = fc.record({
@@ -63,6 +63,22 @@ describe("geodesic", () => {
         expect(geodesicPath(middle, to).distanceKm).toBeCloseTo((1 - share) * whole, 6);
       }),
     );
+  });
+
+  it("goes the same way by heading as towards a place", () => {
+    const from = { latitude: 54.2, longitude: -3.1 };
+    const to = { latitude: 51.9, longitude: 4.4 };
+    const { distanceKm, headingDeg } = geodesicPath(from, to);
+    const [start, half, end] = pointsTowards({
+      from,
+      headingDeg,
+      distancesKm: [0, distanceKm / 2, distanceKm],
+    });
+    const expected = [from, pointAlong({ from, to, share: 0.5 }), to];
+    for (const [i, point] of [start, half, end].entries()) {
+      expect(point!.latitude).toBeCloseTo(expected[i]!.latitude, 9);
+      expect(point!.longitude).toBeCloseTo(expected[i]!.longitude, 9);
+    }
   });
 
   it("refuses one place given twice, and a latitude beyond the pole", () => {

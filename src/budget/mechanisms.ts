@@ -1,0 +1,214 @@
+import { outside } from "../numeric/check.ts";
+import { dbToPower } from "../numeric/decibels.ts";
+import { foliageLoss, foliageValidity } from "../path/foliage.ts";
+import { freeSpaceLoss } from "../path/freeSpaceLoss.ts";
+import { pointAlong } from "../path/geodesic.ts";
+import { pathLengthKm } from "../path/profile.ts";
+import { rainHeight } from "../path/rainHeight.ts";
+import { rainScatterLoss } from "../path/rainScatter.ts";
+import { rainCellWidth, scatterHeight, visibleHeight } from "../path/scatterCell.ts";
+import { smoothEarthValidity } from "../path/smoothEarth.ts";
+import {
+  interferenceTroposcatterLoss,
+  troposcatterLoss,
+  troposcatterValidity,
+} from "../path/troposcatter.ts";
+import type { Scenario } from "../scenario/types.ts";
+import { type Entry, lossEntry, sumOf } from "./entry.ts";
+import { diffractionSigma, type GroundPath } from "./groundPath.ts";
+import { overreachWarning } from "./overreach.ts";
+import type { Link, Mechanism, PreparedEnd, PreparedWeather, Warning } from "./types.ts";
+
+/** Less than this is no diffraction [dB]. */
+const NOTHING_DB = 0.005;
+/** 1-sigma by season and hour, and of the rain in a cell [dB]: common practice, no source. */
+const TROPOSCATTER_SIGMA_DB = 7;
+const RAIN_SCATTER_SIGMA_DB = 5;
+/** Rain cells of the model begin here [mm/h]. */
+const LEAST_CELL_MM_PER_H = 0.4;
+/** A cell is taken no flatter than this [km]. */
+const LEAST_CELL_HEIGHT_KM = 1;
+/** Gain times the square of a beam's width [deg^2]: from memory. */
+const GAIN_BEAMWIDTH2 = 30_000;
+
+const lineOfSight: Omit<Mechanism, "lossDb"> = {
+  name: "line_of_sight",
+  label: "line of sight",
+  excessDb: 0,
+  sigmaDb: 0,
+  source: "P.525-4",
+  warnings: [],
+};
+
+/**
+ * The ways that a signal may take in one weather, the one of least loss first; each is an alternative to the
+ * others. Gas, rain and fog come on top of all of them alike: rain on both legs of rain scatter is that of the path.
+ *
+ * @param transmitter  end with the feed of the case: narrow beams lose gain to scatter
+ */
+export function mechanismsOf(
+  { scenario, path, ground }: Pick<Link, "scenario" | "path" | "ground">,
+  weather: PreparedWeather,
+  transmitter: PreparedEnd,
+  receiver: PreparedEnd,
+): Mechanism[] {
+  const { frequencyGHz } = scenario;
+  const freeSpaceDb = freeSpaceLoss({ frequencyGHz, distanceKm: path.distanceKm }).lossDb;
+  const overAll = (mechanism: Omit<Mechanism, "lossDb">) => ({
+    ...mechanism,
+    lossDb: freeSpaceDb + mechanism.excessDb,
+  });
+  if (ground === undefined) return [overAll(lineOfSight)];
+  return [
+    alongGround(ground),
+    ...troposcatter(ground, freeSpaceDb, transmitter, receiver),
+    ...rainScatter(scenario, ground, freeSpaceDb, weather, transmitter, receiver),
+  ]
+    .map(overAll)
+    .sort((a, b) => a.excessDb - b.excessDb);
+}
+
+/** What the way costs beyond free space, as entries: none on a line of sight. */
+export function mechanismEntries({ name, label, excessDb, sigmaDb, source }: Mechanism): Entry[] {
+  if (name === "line_of_sight") return [];
+  return [lossEntry({ id: `path.${name}`, stage: "path", label, source }, excessDb, sigmaDb)];
+}
+
+/** Trees near either end, whatever way the signal takes. */
+export function foliageEntries({ frequencyGHz, path: { foliageM } }: Scenario): Entry[] {
+  if (foliageM === undefined || foliageM.from + foliageM.to === 0) return [];
+  const near = foliageLoss({ frequencyGHz, depthM: foliageM.from });
+  const far = foliageLoss({ frequencyGHz, depthM: foliageM.to });
+  const bounded = {
+    nominal: near.lossDb + far.lossDb,
+    low: near.lowDb + far.lowDb,
+    high: near.highDb + far.highDb,
+  };
+  const label = `trees, ${Math.round(foliageM.from + foliageM.to)} m of them`;
+  const source = "CCIR Rep. 236-2, Weissberger 1982";
+  const heading = { id: "path.foliage", stage: "path", label, source } as const;
+  return [lossEntry(heading, bounded, Math.hypot(near.sigmaDb, far.sigmaDb))];
+}
+
+export function foliageWarnings({ frequencyGHz, path: { foliageM } }: Scenario): Warning[] {
+  if (foliageM === undefined) return [];
+  return outside(foliageValidity, { frequencyGHz }).map(overreachWarning("trees", "path.foliage"));
+}
+
+/** Line of sight where the first Fresnel zone is clear enough, diffraction elsewhere. */
+function alongGround(ground: GroundPath): Omit<Mechanism, "lossDb"> {
+  const { lossDb } = ground.diffraction;
+  if (lossDb < NOTHING_DB) return lineOfSight;
+  const { frequencyGHz } = ground.sight;
+  return {
+    name: "diffraction",
+    label: ground.fromTerrain ? "diffraction over terrain" : "diffraction over a smooth Earth",
+    excessDb: lossDb,
+    sigmaDb: diffractionSigma(ground),
+    source: "P.526-15 4.5.3",
+    warnings: outside(smoothEarthValidity, { frequencyGHz }).map(
+      overreachWarning("diffraction by P.526", "path"),
+    ),
+  };
+}
+
+/**
+ * By the Recommendation for a wanted signal, or by the term of P.452 where that is less hopeful: as the angle between
+ * the horizons vanishes the former falls below free space.
+ */
+function troposcatter(
+  { analysis, sight, settings, profile }: GroundPath,
+  freeSpaceDb: number,
+  transmitter: PreparedEnd,
+  receiver: PreparedEnd,
+): Omit<Mechanism, "lossDb">[] {
+  if (analysis.pathType === "los" || analysis.angularDistanceMrad <= 0) return [];
+  const { frequencyGHz } = sight;
+  const distanceKm = pathLengthKm(profile);
+  const common = {
+    ...sight,
+    ...settings,
+    ...analysis,
+    distanceKm,
+    txGainDbi: sumOf(transmitter.antenna, "db"),
+    rxGainDbi: sumOf(receiver.antenna, "db"),
+    percent: 50,
+  };
+  const wantedDb = troposcatterLoss({ ...common, groundHeightKm: middleGroundM(profile) / 1000 }).lossDb;
+  const cautiousDb = interferenceTroposcatterLoss({ ...common, gasDb: 0 });
+  const wanted = wantedDb >= cautiousDb;
+  const overreaches = wanted ? outside(troposcatterValidity, { frequencyGHz, distanceKm }) : [];
+  return [
+    {
+      name: "troposcatter",
+      label: "troposcatter",
+      excessDb: Math.max(wantedDb, cautiousDb) - freeSpaceDb,
+      sigmaDb: TROPOSCATTER_SIGMA_DB,
+      source: wanted ? "P.617-5, median" : "P.452-18 4.3, median",
+      warnings: overreaches.map(overreachWarning("troposcatter by P.617", "path")),
+    },
+  ];
+}
+
+/** A cell with the weather's rain over the middle of the path, both beams raised to it; none where only ice is seen. */
+function rainScatter(
+  { path: { from, to } }: Scenario,
+  { analysis, sight, profile, polarization }: GroundPath,
+  freeSpaceDb: number,
+  { weather: { rainMmPerH, extentKm = Infinity } }: PreparedWeather,
+  transmitter: PreparedEnd,
+  receiver: PreparedEnd,
+): Omit<Mechanism, "lossDb">[] {
+  const rainRateMmPerH = rainMmPerH.value;
+  if (rainRateMmPerH <= LEAST_CELL_MM_PER_H) return [];
+  const { frequencyGHz, effectiveRadiusKm } = sight;
+  const halfKm = pathLengthKm(profile) / 2;
+  const seenFrom = (stationAmslM: number, horizonMrad: number) =>
+    visibleHeight({ stationAmslM, horizonMrad, distanceKm: halfKm, effectiveRadiusKm }).heightAmslM;
+  const visible = {
+    visible1AmslM: seenFrom(sight.txHeightAmslM, analysis.txHorizonMrad),
+    visible2AmslM: seenFrom(sight.rxHeightAmslM, analysis.rxHorizonMrad),
+  };
+  const { heightKm } = rainHeight({ latitudeDeg: pointAlong({ from, to, share: 0.5 }).latitude });
+  const { overRainM, iceOnly } = scatterHeight({ ...visible, rainHeightAmslM: 1000 * heightKm });
+  if (iceOnly) return [];
+  const openKm = heightKm - Math.max(visible.visible1AmslM, visible.visible2AmslM) / 1000;
+  const { lossDb } = rainScatterLoss({
+    frequencyGHz,
+    rainRateMmPerH,
+    polarization,
+    r1Km: halfKm,
+    r2Km: halfKm,
+    scatterDeg: 0,
+    g1Dbi: 0,
+    g2Dbi: 0,
+    beamwidth1Deg: beamwidthDeg(transmitter),
+    beamwidth2Deg: beamwidthDeg(receiver),
+    cellWidthKm: Math.min(extentKm, rainCellWidth({ rainRateMmPerH }).widthKm),
+    cellHeightKm: Math.max(LEAST_CELL_HEIGHT_KM, openKm),
+    heightOverRainKm: overRainM / 1000,
+  });
+  return [
+    {
+      name: "rain_scatter",
+      label: "rain scatter at mid-path",
+      excessDb: lossDb - freeSpaceDb,
+      sigmaDb: RAIN_SCATTER_SIGMA_DB,
+      source: "bistatic radar equation, Z = 200 R^1.6",
+      warnings: [],
+    },
+  ];
+}
+
+/** Of an antenna whose width is not known, by its gain. */
+function beamwidthDeg({ beamwidthDeg, antenna }: PreparedEnd): number {
+  return beamwidthDeg ?? Math.sqrt(GAIN_BEAMWIDTH2 / dbToPower(sumOf(antenna, "db")));
+}
+
+/** Ground half-way above mean sea level [m]: of the point next to it. */
+function middleGroundM({ distancesKm, heightsM }: GroundPath["profile"]): number {
+  const half = distancesKm[distancesKm.length - 1]! / 2;
+  let i = 0;
+  while (distancesKm[i]! < half) i++;
+  return heightsM[i]!;
+}

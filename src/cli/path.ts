@@ -1,0 +1,46 @@
+import { Command, Option } from "commander";
+import { pathCsv, pathJson, pathStudy, pathText, prepare } from "../index.ts";
+import { knownName } from "./knownName.ts";
+import { scenarioIn } from "./scenarioFile.ts";
+import { paintFor, print, UserError } from "./terminal.ts";
+
+interface PathOptions {
+  readonly weather?: readonly string[];
+  readonly mode?: string;
+  readonly date?: string;
+  readonly json?: true;
+  readonly csv?: true;
+}
+
+export const pathCommand = new Command("path")
+  .description("what carries the path: headings, horizons, obstacles, every mechanism, the lift, a drawing")
+  .argument("<file>", "scenario file")
+  .option("--weather <names...>", "only these weathers")
+  .option("--mode <name>", "this mode in place of the scenario's first")
+  .option("--date <day>", "day of the magnetic headings, such as 2026-07-01 (default: today)")
+  .addOption(new Option("--json", "everything as JSON").conflicts("csv"))
+  .option("--csv", "profile, ray and clearance as a flat table")
+  .action(async (file: string, options: PathOptions) => {
+    const link = prepare(await scenarioIn(file));
+    const { weather: names = Object.keys(link.weathers), mode = link.scenario.receiver.modes[0]! } = options;
+    for (const name of names) knownName("weather", name, Object.keys(link.weathers));
+    knownName("mode", mode, Object.keys(link.modes));
+    const study = await pathStudy(
+      link,
+      mode,
+      names,
+      options.date === undefined ? new Date() : day(options.date),
+    );
+    if (options.json) print(pathJson(study));
+    else if (options.csv) print(pathCsv(study));
+    else print(pathText(study, link, paintFor(process.stdout)));
+  });
+
+/** A calendar day at noon, UTC. */
+function day(text: string): Date {
+  const date = new Date(`${text}T12:00:00Z`);
+  // A day that no month has (31 June) is carried into the next one.
+  if (/^\d{4}-\d\d-\d\d$/.test(text) && date.getTime() > 0 && date.toISOString().startsWith(text))
+    return date;
+  throw new UserError(`--date: read "${text}", expected a day such as 2026-07-01`);
+}
