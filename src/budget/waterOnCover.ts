@@ -1,7 +1,7 @@
 import { BEAD_HEIGHT_MM, beadedSheet } from "../cover/beads.ts";
 import { type Bounded, bounded, exactly, plus } from "../cover/bounded.ts";
 import type { CoveredFeed } from "../cover/coveredFeed.ts";
-import type { Layer } from "../cover/layeredSheet.ts";
+import type { Layer, SheetScattering } from "../cover/layeredSheet.ts";
 import { surfaceState } from "../cover/surfaceState.ts";
 import { waterLayer } from "../cover/waterFilm.ts";
 import { abs } from "../numeric/complex.ts";
@@ -42,9 +42,14 @@ export function waterOnCover(
   const { frequencyGHz, feed, cover } = mouth;
   const deposit = depositOn(frequencyGHz, surfaceOf(mouth), wetness, where);
   const { filmMm, noun } = deposit;
+  const known = new Map<number, { sheet: SheetScattering; covered: CoveredFeed }>();
   const coveredAt = (thicknessMm: number) => {
+    const seen = known.get(thicknessMm);
+    if (seen !== undefined) return seen;
     const sheet = sheetBefore(mouth, [...dryLayers, ...deposit.layersAt(thicknessMm)]);
-    return { sheet, covered: cascade(mouth, sheet) };
+    const found = { sheet, covered: cascade(mouth, sheet) };
+    known.set(thicknessMm, found);
+    return found;
   };
   const { covered: wet } = coveredAt(filmMm.nominal);
   const ends = filmMm.low === filmMm.high ? [] : [filmMm.low, filmMm.high].map((mm) => coveredAt(mm).covered);

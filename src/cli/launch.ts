@@ -1,5 +1,5 @@
 #!/usr/bin/env node
-import { runProgram } from "./codeCache.ts";
+import { bundleFor, runBundle } from "./codeCache.ts";
 
 // Bundled to CommonJS, so that starting does not wait for the loader of modules.
-runProgram(__dirname);
+runBundle(__dirname, bundleFor(process.argv[2]));

@@ -1,5 +1,5 @@
 import { requireNotNegative, requirePositive, requireWithin } from "../numeric/check.ts";
-import { abs, abs2, add, multiply, polar, scale, ZERO } from "../numeric/complex.ts";
+import { abs, abs2, multiply, polar } from "../numeric/complex.ts";
 import { RADIANS_PER_DEGREE, wavelengthM } from "../numeric/constants.ts";
 import { amplitudeToDb } from "../numeric/decibels.ts";
 import { gaussRule } from "../numeric/quadrature.ts";
@@ -65,28 +65,35 @@ export function sheetOverBeam({
 
   const { nodes, weights } = gaussRule(NODES);
   const half = (halfAngleDeg * RADIANS_PER_DEGREE) / 2;
+  // Sums of real and imaginary parts, not of complex objects: this runs for every cover at every start.
   let whole = 0;
-  let reflection = ZERO;
-  let shifted = ZERO;
+  let reflectedRe = 0;
+  let reflectedIm = 0;
+  let passedRe = 0;
+  let passedIm = 0;
   let power = 0;
   let absorbed = 0;
   for (let i = 0; i < NODES; i++) {
     const theta = half * (1 + nodes[i]!);
     const weight = weights[i]! * Math.cos(theta) ** exponent * Math.sin(theta);
     const incidence = Math.asin(bend * Math.sin(theta));
-    const wave = { frequencyGHz, layers, incidenceDeg: incidence / RADIANS_PER_DEGREE };
-    const te = layeredSheet({ ...wave, polarization: "te" });
-    const tm = layeredSheet({ ...wave, polarization: "tm" });
+    const incidenceDeg = incidence / RADIANS_PER_DEGREE;
+    const te = layeredSheet({ frequencyGHz, layers, incidenceDeg, polarization: "te" });
+    const tm = layeredSheet({ frequencyGHz, layers, incidenceDeg, polarization: "tm" });
     // TE and TM in equal shares; the transmission against the air that the sheet replaces.
-    reflection = add(reflection, scale(add(te.reflection, tm.reflection), weight / 2));
-    const passed = scale(add(te.transmission, tm.transmission), weight / 2);
-    shifted = add(shifted, multiply(passed, polar(1, airPhase * Math.cos(incidence))));
-    power += (weight * (abs2(te.transmission) + abs2(tm.transmission))) / 2;
-    absorbed += (weight * (te.absorbedFraction + tm.absorbedFraction)) / 2;
-    whole += weight;
+    reflectedRe += weight * (te.reflection.re + tm.reflection.re);
+    reflectedIm += weight * (te.reflection.im + tm.reflection.im);
+    const air = airPhase * Math.cos(incidence);
+    const re = te.transmission.re + tm.transmission.re;
+    const im = te.transmission.im + tm.transmission.im;
+    passedRe += weight * (re * Math.cos(air) - im * Math.sin(air));
+    passedIm += weight * (re * Math.sin(air) + im * Math.cos(air));
+    power += weight * (abs2(te.transmission) + abs2(tm.transmission));
+    absorbed += weight * (te.absorbedFraction + tm.absorbedFraction);
+    whole += 2 * weight;
   }
-  reflection = scale(reflection, 1 / whole);
-  const transmission = multiply(scale(shifted, 1 / whole), polar(1, -airPhase));
+  const reflection = { re: reflectedRe / whole, im: reflectedIm / whole };
+  const transmission = multiply({ re: passedRe / whole, im: passedIm / whole }, polar(1, -airPhase));
   const transmissionLossDb = 0 - amplitudeToDb(abs(transmission));
   const straightOn = layeredSheet({ frequencyGHz, incidenceDeg: 0, polarization: "te", layers });
   return {
