@@ -80,21 +80,20 @@ export interface WetAntennaModel {
   readonly source: string;
 }
 
-/** The models by name; "open library" is an open library on rain from microwave links that cites the papers. */
+/** The models by name; "second-hand" figures were taken from open code that cites the paper, not from the paper. */
 export const wetAntennaModels: readonly WetAntennaModel[] = [
   {
     name: "leijnse2008",
     ends: "one",
     range: { frequencyGHz: [27, 27] },
-    source:
-      "Leijnse, Uijlenhoet, Stricker 2008, Adv. Water Resour. 31, 1481; coefficients by an open library",
+    source: "Leijnse, Uijlenhoet, Stricker 2008, Adv. Water Resour. 31, 1481; coefficients second-hand",
   },
   {
     name: "pastorek2022",
     ends: "both",
     range: { frequencyGHz: [25, 39] },
     source:
-      "Pastorek et al. 2022, IEEE TGRS, doi 10.1109/TGRS.2021.3110004, KR-alt; coefficients by an open library",
+      "Pastorek et al. 2022, IEEE TGRS, doi 10.1109/TGRS.2021.3110004, KR-alt; coefficients second-hand",
   },
   {
     name: "kharadly2001",
@@ -106,8 +105,7 @@ export const wetAntennaModels: readonly WetAntennaModel[] = [
     name: "merceret2000",
     ends: "one",
     range: { frequencyGHz: [2, 8] },
-    source:
-      "Merceret & Ward 2000, fitted to S and C band radar radomes; form by an open weather-radar library",
+    source: "Merceret & Ward 2000, fitted to S and C band radar radomes; form second-hand",
   },
   {
     name: "constant",

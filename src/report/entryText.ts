@@ -56,7 +56,7 @@ function entriesAbreast(shown: readonly Column[]): string {
     result("  margin", ({ marginDb }) => marginDb),
     result("  one standard deviation", ({ marginSigmaDb }) => marginSigmaDb),
     [
-      cell("  range, phase unknown"),
+      cell("  bounds, phase and water"),
       ...across(({ marginLowDb, marginHighDb }) => `${tenth(marginLowDb)} to ${tenth(marginHighDb)}`),
     ],
     [cell("  holds with"), ...across(({ holdProbability }) => percent(holdProbability))],

@@ -36,7 +36,7 @@ export async function marginReportText(
         `closes: ${tenth(reserveDb)} dB or more left, and holds with ${percent(confidence)}; ` +
           "thin: something left, but less or less sure; fails: nothing left",
       ),
-      "±: one standard deviation; *: as the scenario has it",
+      "±: one standard deviation; *: as the scenario has it; figures rounded to 0.1 dB",
     ].join("\n"),
     `${heading(`How it comes about: ${link.modes[modes[0]!]?.label}, cover ${cover}`)}\n${entryTable(own)}`,
     ...own.slice(0, details.length).map((budget, i) => {

@@ -226,7 +226,8 @@ function stockText({ stock, phaseKnown, fromMm, toMm }: ThicknessStudy, paint: P
 function trustWords({ trust }: ThicknessStudy): string {
   const rough =
     "A plane wave straight on a flat dry sheet without end: take no cost for truer than 0.1 dB or 30 %, whichever is more, " +
-    "and no return loss for truer than 2 dB (common practice, no source).";
+    "and no return loss for truer than 2 dB (common practice, no source). `oilskin budget` and `covers` average over the " +
+    "feed's beam where the dish's focal_ratio tells it: a thick sheet then costs somewhat more than here.";
   return trust.reason === undefined ? rough : `${rough} Here even that is a guess: ${trust.reason}.`;
 }
 
