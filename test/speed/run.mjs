@@ -4,6 +4,7 @@
  *     npm run build && npm run speed
  */
 import { coldStart } from "./coldStart.mjs";
+import { diffraction } from "./diffraction.mjs";
 import { sheetRate } from "./sheets.mjs";
 
-for (const measure of [coldStart, sheetRate]) process.stdout.write(`${measure()}\n`);
+for (const measure of [coldStart, sheetRate, diffraction]) process.stdout.write(`${measure()}\n`);
