@@ -8,6 +8,7 @@ export default defineConfig({
   test: {
     root,
     include: ["test/**/*.test.ts"],
+    setupFiles: ["test/setup/seed.ts"],
     globalSetup: "test/setup/build.ts",
     testTimeout: 60_000,
   },

@@ -35,8 +35,8 @@ function edit(text: string, name: string, measured: string): string | undefined 
         body,
         document.contents,
         "covers",
-        `\n  ${flow(name)}:\n    measured: ${measured}`,
-        `{ ${flow(name)}: { measured: ${measured} } }`,
+        `\n  ${keyOf(name)}:\n    measured: ${measured}`,
+        `{ ${keyOf(name)}: { measured: ${measured} } }`,
       );
     }
     if (!isMap(covers.value)) return undefined;
@@ -67,8 +67,16 @@ function pairOf(map: YAMLMap, key: string): Pair | undefined {
   return map.items.find((pair) => isScalar(pair.key) && String(pair.key.value) === key);
 }
 
+/** A name as a key: plain where it is made of words, else between quotes, which YAML takes from JSON as they are. */
+function keyOf(name: string): string {
+  const plain =
+    /^\p{L}[\p{L}\p{N}_-]*( [\p{L}\p{N}_-]+)*$/u.test(name) &&
+    !/^(null|true|false|yes|no|on|off)$/i.test(name);
+  return plain ? name : JSON.stringify(name);
+}
+
 /** One line of YAML. */
-function flow(value: string | MeasuredEntry): string {
+function flow(value: MeasuredEntry): string {
   return stringify(value, { collectionStyle: "flow", lineWidth: 0 }).trimEnd();
 }
 
@@ -89,15 +97,15 @@ function insert(
   const last = map.items.at(-1);
   const [start, end] = map.range!;
   if (map.flow) {
-    if (last === undefined) return `${text.slice(0, start)}{ ${flow(key)}: ${inBraces} }${text.slice(end)}`;
+    if (last === undefined) return `${text.slice(0, start)}{ ${keyOf(key)}: ${inBraces} }${text.slice(end)}`;
     const behind = endOf(last);
     return behind === undefined
       ? undefined
-      : `${text.slice(0, behind)}, ${flow(key)}: ${inBraces}${text.slice(behind)}`;
+      : `${text.slice(0, behind)}, ${keyOf(key)}: ${inBraces}${text.slice(behind)}`;
   }
   const behind = last && endOf(last);
   if (behind === undefined) return undefined;
-  const line = `${" ".repeat(indentOf(text, map))}${flow(key)}:${inLines}\n`;
+  const line = `${" ".repeat(indentOf(text, map))}${keyOf(key)}:${inLines}\n`;
   const ended = text[behind - 1] === "\n" ? behind : text.indexOf("\n", behind) + 1;
   return ended === 0 ? `${text}\n${line}` : text.slice(0, ended) + line + text.slice(ended);
 }
