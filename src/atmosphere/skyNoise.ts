@@ -9,9 +9,6 @@ const COSMIC_K = 2.7;
 /** Above 2 GHz the galaxy may be left out (P.372, from memory). */
 export const skyValidity = { frequencyGHz: [2, 1000] } as const satisfies Validity;
 
-/** Noise of a beam filled by hills, trees or buildings [K] (common practice, no source). */
-export const FILLED_BEAM_K = 290;
-
 /** Emissivity of dry land in the example of P.676-13 Annex 1 section 4.2. */
 export const LAND_EMISSIVITY = 0.95;
 

@@ -4,7 +4,7 @@ export interface Complex {
   readonly im: number;
 }
 
-export const ZERO: Complex = { re: 0, im: 0 };
+const ZERO: Complex = { re: 0, im: 0 };
 export const ONE: Complex = { re: 1, im: 0 };
 
 export function complex(re: number, im = 0): Complex {

@@ -10,6 +10,7 @@ import { powerToDb } from "../numeric/decibels.ts";
 import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, EndName, Scenario } from "../scenario/types.ts";
 import { type BreakEven, breakEven, rainiest } from "./breakEven.ts";
+import { USUAL_BAND_SHARE } from "./thickness.ts";
 
 /** Where a cover sits while it is judged. */
 export type Placing = "both" | "transmitter" | "receiver";
@@ -71,9 +72,6 @@ export interface CoverVerdict {
   readonly covers: readonly CoverJudgement[];
   readonly warnings: readonly Warning[];
 }
-
-/** Band of a cover that nobody stated, as a share of the frequency: own choice. */
-const USUAL_BAND_SHARE = 0.02;
 
 /**
  * Which cover: every cover of the scenario in every asked weather, at one end and at both, against bare mouths.

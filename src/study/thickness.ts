@@ -64,7 +64,7 @@ export interface ThicknessStudy {
   readonly warnings: readonly Warning[];
 }
 
-const USUAL_BAND_SHARE = 0.02;
+export const USUAL_BAND_SHARE = 0.02;
 
 /** How thick one layer of a cover should be, and where to put the cover. */
 export function thickness(scenario: Scenario, question: ThicknessQuestion): ThicknessStudy {
