@@ -13,16 +13,11 @@ import { ZERO_CELSIUS_K } from "../numeric/constants.ts";
 import { freeSpaceLoss } from "../path/freeSpaceLoss.ts";
 import { effectiveRainLength, rainFadeValidity } from "../path/rainFade.ts";
 import type { Scenario, Weather } from "../scenario/types.ts";
+import { type Doubts, doubtsOf } from "./doubts.ts";
 import { type Entry, lossEntry, sumOf } from "./entry.ts";
 import { overreachWarning } from "./overreach.ts";
 import type { PathGeometry, PreparedWeather, Warning } from "./types.ts";
 
-/** Humidity guesses dominate the error of P.676: common practice, no source. */
-const GAS_SIGMA_SHARE = 0.05;
-/** Error of a path reduction, P.530's in its own tests (from memory); taken for a stated extent too. */
-const RAIN_SIGMA_SHARE = 0.25;
-/** Liquid water of a fog is a guess by its visibility: common practice, no source. */
-const FOG_SIGMA_SHARE = 0.5;
 /** Ends further apart in height than this are averaged over three heights [m]: common practice, no source. */
 const LEVEL_PATH_M = 500;
 
@@ -56,14 +51,15 @@ export function prepareWeather(
     });
   }
 
+  const doubts = doubtsOf(scenario);
   const gas = gasLossPerKm(frequencyGHz, weather, heightsKm) * slantKm;
   warnings.push(...outside(gasValidity, { frequencyGHz }).map(overreachWarning("gases by P.676", where)));
-  const rain = rainLoss(scenario, path, weather, where, warnings);
-  const fog = fogLoss(frequencyGHz, path.distanceKm, weather, ambient.temperatureK, where, warnings);
+  const rain = rainLoss(scenario, doubts, path, weather, where, warnings);
+  const fog = fogLoss(scenario, doubts, path, weather, ambient.temperatureK, where, warnings);
 
   return {
     weather,
-    entries: [freeSpaceEntry(frequencyGHz, slantKm, path), gasEntry(gas), ...rain, ...fog],
+    entries: [freeSpaceEntry(frequencyGHz, slantKm, path), gasEntry(gas, doubts.gasShare), ...rain, ...fog],
     rainLossDb: 0 - sumOf(rain, "db"),
     hydrometeorLossDb: 0 - sumOf([...rain, ...fog], "db"),
     ambientK: ambient.temperatureK,
@@ -80,10 +76,10 @@ function freeSpaceEntry(frequencyGHz: number, distanceKm: number, { from, to }: 
   return lossEntry(heading, lossDb, sigma);
 }
 
-function gasEntry(loss: number): Entry {
+function gasEntry(loss: number, share: number): Entry {
   const source = "P.676-13 Annex 1, P.835-6";
   const heading = { id: "path.gas", stage: "path", label: "oxygen and water vapour", source } as const;
-  return lossEntry(heading, loss, GAS_SIGMA_SHARE * loss);
+  return lossEntry(heading, loss, share * loss);
 }
 
 /** Air at a height: the reference atmosphere, with what the scenario states in its place. */
@@ -132,6 +128,7 @@ function gasLossPerKm(frequencyGHz: number, weather: Weather, [from, to]: readon
 
 function rainLoss(
   { frequencyGHz, polarization }: Scenario,
+  { rainLengthShare }: Doubts,
   { distanceKm, elevationDeg, backElevationDeg }: PathGeometry,
   { rainMmPerH, rainFadeDb, extentKm }: Weather,
   where: string,
@@ -139,7 +136,7 @@ function rainLoss(
 ): Entry[] {
   if (rainFadeDb !== undefined) {
     const heading = { id: "path.rain", stage: "path", label: "rain of a year", source: "P.530-18" } as const;
-    return [lossEntry(heading, rainFadeDb, RAIN_SIGMA_SHARE * rainFadeDb)];
+    return [lossEntry(heading, rainFadeDb, rainLengthShare * rainFadeDb)];
   }
   const { value: rainRateMmPerH, sigma: rateSigma = 0 } = rainMmPerH;
   if (rainRateMmPerH === 0) return [];
@@ -166,13 +163,14 @@ function rainLoss(
   const source =
     extentKm === undefined ? "P.838-3 over P.530's effective length" : "P.838-3 over the stated extent";
   const label = `rain, ${lengthKm.toFixed(1)} km of it`;
-  const sigma = Math.hypot(RAIN_SIGMA_SHARE * loss, ((alpha * rateSigma) / rainRateMmPerH) * loss);
+  const sigma = Math.hypot(rainLengthShare * loss, ((alpha * rateSigma) / rainRateMmPerH) * loss);
   return [lossEntry({ id: "path.rain", stage: "path", label, source }, loss, sigma)];
 }
 
 function fogLoss(
-  frequencyGHz: number,
-  distanceKm: number,
+  { frequencyGHz }: Scenario,
+  { fogShare }: Doubts,
+  { distanceKm }: PathGeometry,
   { fogGPerM3, fogExtentKm = distanceKm }: Weather,
   temperatureK: number,
   where: string,
@@ -183,5 +181,5 @@ function fogLoss(
   const { dbPerKmPerGm3 } = cloudLiquidCoefficient({ frequencyGHz, temperatureK });
   const loss = dbPerKmPerGm3 * fogGPerM3 * Math.min(distanceKm, fogExtentKm);
   const heading = { id: "path.fog", stage: "path", label: "fog", source: "P.840-9" } as const;
-  return [lossEntry(heading, loss, FOG_SIGMA_SHARE * loss)];
+  return [lossEntry(heading, loss, fogShare * loss)];
 }

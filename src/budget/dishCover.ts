@@ -11,8 +11,9 @@ import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
 import { depositOn, isDry, type Surface } from "./deposit.ts";
+import type { Doubts } from "./doubts.ts";
+import { layerAt, thicknessWarnings } from "./dryCover.ts";
 import { type Entry, lossEntry } from "./entry.ts";
-import { layerAt, thicknessWarnings } from "./mouth.ts";
 import { sheetOf } from "./mouthpiece.ts";
 import { publishedWater, waterModelOf } from "./publishedWater.ts";
 import type { DishCoverState, Warning, Wetness } from "./types.ts";
@@ -24,10 +25,6 @@ export const NO_DISH_COVER: DishCoverState = { entries: [], passed: 1, heated: 0
  * tilted or bulges by a wavelength, a fifth at the most (own estimate, no source).
  */
 const GATHERED_SHARE = 0.2;
-/** Loss tangents and thicknesses scatter: share of the heat, common practice, no source. */
-const HEAT_SIGMA_SHARE = 0.4;
-/** A film's loss is good to a factor of two each way: common practice, no source. */
-const WATER_SIGMA_SHARE = 0.5;
 /** Loss of an opaque sheet [dB]: finite, so that entries can be added up. */
 const OPAQUE_DB = 400;
 
@@ -50,6 +47,7 @@ export function dishCoverOver(
   where: string,
   diameterM: number,
   gamma: number,
+  doubts: Doubts,
 ): (wetness: Wetness | undefined) => DishCoverState {
   const stack = (figure: keyof Bounded) => cover.layers.map((layer) => layerAt(layer, figure));
   const layers = stack("nominal");
@@ -60,6 +58,7 @@ export function dishCoverOver(
     : layeredEntries(heading, dry, [through(stack("low")), through(stack("high"))], {
         gamma,
         reflection: abs(sheetOf(frequencyGHz, layers).reflection),
+        heatShare: doubts.coverLossShare,
       });
   const warnings = [...thicknessWarnings(frequencyGHz, cover, where), ...gainWarnings(cover, where)];
   return (wetness) => {
@@ -70,7 +69,7 @@ export function dishCoverOver(
     const entry = lossEntry(
       heading("dish_cover_water", label, water.source),
       { low, nominal, high },
-      WATER_SIGMA_SHARE * Math.abs(nominal),
+      doubts.waterShare * Math.abs(nominal),
     );
     const wet = {
       reflectedDb: dry.reflectedDb + water.reflectedDb,
@@ -84,7 +83,10 @@ function layeredEntries(
   heading: EndHeading,
   dry: Loss,
   spread: readonly Loss[],
-  beating: { readonly gamma: number; readonly reflection: number },
+  {
+    heatShare,
+    ...beating
+  }: { readonly gamma: number; readonly reflection: number; readonly heatShare: number },
 ): Entry[] {
   const source = "plane wave through the layers, Born & Wolf 1.6";
   const range = (part: keyof Loss): Bounded => {
@@ -99,7 +101,7 @@ function layeredEntries(
     lossEntry(
       heading("dish_cover_heat", "dish cover, heat", source),
       range("heatDb"),
-      HEAT_SIGMA_SHARE * dry.heatDb,
+      heatShare * dry.heatDb,
     ),
   ];
 }

@@ -95,9 +95,13 @@ const RIDGE_SHARE = 0.1;
 
 /**
  * 1-sigma of a diffraction loss [dB], never more than the loss: 3 behind a single bare ridge, 8 behind trees or
- * several obstacles, else 5: common practice, no source.
+ * several obstacles, else 5 (common practice, no source); or as the scenario states it.
  */
-export function diffractionSigma({ obstacles, profile, fromTerrain, diffraction }: GroundPath): number {
+export function diffractionSigma(
+  { obstacles, profile, fromTerrain, diffraction }: GroundPath,
+  statedDb: number | undefined,
+): number {
+  if (statedDb !== undefined) return Math.min(statedDb, diffraction.lossDb);
   const [first, ...more] = obstacles.filter(({ clearanceM }) => clearanceM < 0);
   const wooded = (first?.coverM ?? 0) > 0;
   const ridge = first !== undefined && first.widthKm <= RIDGE_SHARE * pathLengthKm(profile);

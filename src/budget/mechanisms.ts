@@ -14,6 +14,7 @@ import {
   troposcatterValidity,
 } from "../path/troposcatter.ts";
 import type { Scenario } from "../scenario/types.ts";
+import { type Doubts, doubtsOf } from "./doubts.ts";
 import { type Entry, lossEntry, sumOf } from "./entry.ts";
 import { diffractionSigma, type GroundPath } from "./groundPath.ts";
 import { overreachWarning } from "./overreach.ts";
@@ -21,9 +22,6 @@ import type { Link, Mechanism, PreparedEnd, PreparedWeather, Warning } from "./t
 
 /** Less than this is no diffraction [dB]. */
 const NOTHING_DB = 0.005;
-/** 1-sigma by season and hour, and of the rain in a cell [dB]: common practice, no source. */
-const TROPOSCATTER_SIGMA_DB = 7;
-const RAIN_SCATTER_SIGMA_DB = 5;
 /** Rain cells of the model begin here [mm/h]. */
 const LEAST_CELL_MM_PER_H = 0.4;
 /** A cell is taken no flatter than this [km]. */
@@ -59,10 +57,11 @@ export function mechanismsOf(
     lossDb: freeSpaceDb + mechanism.excessDb,
   });
   if (ground === undefined) return [overAll(lineOfSight)];
+  const doubts = doubtsOf(scenario);
   return [
-    alongGround(ground),
-    ...troposcatter(ground, freeSpaceDb, transmitter, receiver),
-    ...rainScatter(scenario, ground, freeSpaceDb, weather, transmitter, receiver),
+    alongGround(ground, doubts),
+    ...troposcatter(ground, doubts, freeSpaceDb, transmitter, receiver),
+    ...rainScatter(scenario, ground, doubts, freeSpaceDb, weather, transmitter, receiver),
   ]
     .map(overAll)
     .sort((a, b) => a.excessDb - b.excessDb);
@@ -75,7 +74,11 @@ export function mechanismEntries({ name, label, excessDb, sigmaDb, source }: Mec
 }
 
 /** Trees near either end, whatever way the signal takes. */
-export function foliageEntries({ frequencyGHz, path: { foliageM } }: Scenario): Entry[] {
+export function foliageEntries(scenario: Scenario): Entry[] {
+  const {
+    frequencyGHz,
+    path: { foliageM },
+  } = scenario;
   if (foliageM === undefined || foliageM.from + foliageM.to === 0) return [];
   const near = foliageLoss({ frequencyGHz, depthM: foliageM.from });
   const far = foliageLoss({ frequencyGHz, depthM: foliageM.to });
@@ -87,7 +90,7 @@ export function foliageEntries({ frequencyGHz, path: { foliageM } }: Scenario): 
   const label = `trees, ${Math.round(foliageM.from + foliageM.to)} m of them`;
   const source = "CCIR Rep. 236-2, Weissberger 1982";
   const heading = { id: "path.foliage", stage: "path", label, source } as const;
-  return [lossEntry(heading, bounded, Math.hypot(near.sigmaDb, far.sigmaDb))];
+  return [lossEntry(heading, bounded, doubtsOf(scenario).foliageDb ?? Math.hypot(near.sigmaDb, far.sigmaDb))];
 }
 
 export function foliageWarnings({ frequencyGHz, path: { foliageM } }: Scenario): Warning[] {
@@ -96,7 +99,7 @@ export function foliageWarnings({ frequencyGHz, path: { foliageM } }: Scenario):
 }
 
 /** Line of sight where the first Fresnel zone is clear enough, diffraction elsewhere. */
-function alongGround(ground: GroundPath): Omit<Mechanism, "lossDb"> {
+function alongGround(ground: GroundPath, { diffractionDb }: Doubts): Omit<Mechanism, "lossDb"> {
   const { lossDb } = ground.diffraction;
   if (lossDb < NOTHING_DB) return lineOfSight;
   const { frequencyGHz } = ground.sight;
@@ -104,7 +107,7 @@ function alongGround(ground: GroundPath): Omit<Mechanism, "lossDb"> {
     name: "diffraction",
     label: ground.fromTerrain ? "diffraction over terrain" : "diffraction over a smooth Earth",
     excessDb: lossDb,
-    sigmaDb: diffractionSigma(ground),
+    sigmaDb: diffractionSigma(ground, diffractionDb),
     source: "P.526-15 4.5.3",
     warnings: outside(smoothEarthValidity, { frequencyGHz }).map(
       overreachWarning("diffraction by P.526", "path"),
@@ -118,6 +121,7 @@ function alongGround(ground: GroundPath): Omit<Mechanism, "lossDb"> {
  */
 function troposcatter(
   { analysis, sight, settings, profile }: GroundPath,
+  doubts: Doubts,
   freeSpaceDb: number,
   transmitter: PreparedEnd,
   receiver: PreparedEnd,
@@ -143,7 +147,7 @@ function troposcatter(
       name: "troposcatter",
       label: "troposcatter",
       excessDb: Math.max(wantedDb, cautiousDb) - freeSpaceDb,
-      sigmaDb: TROPOSCATTER_SIGMA_DB,
+      sigmaDb: doubts.troposcatterDb,
       source: wanted ? "P.617-5, median" : "P.452-18 4.3, median",
       warnings: overreaches.map(overreachWarning("troposcatter by P.617", "path")),
     },
@@ -154,6 +158,7 @@ function troposcatter(
 function rainScatter(
   { path: { from, to } }: Scenario,
   { analysis, sight, profile, polarization }: GroundPath,
+  doubts: Doubts,
   freeSpaceDb: number,
   { weather: { rainMmPerH, extentKm = Infinity } }: PreparedWeather,
   transmitter: PreparedEnd,
@@ -193,7 +198,7 @@ function rainScatter(
       name: "rain_scatter",
       label: "rain scatter at mid-path",
       excessDb: lossDb - freeSpaceDb,
-      sigmaDb: RAIN_SCATTER_SIGMA_DB,
+      sigmaDb: doubts.rainScatterDb,
       source: "bistatic radar equation, Z = 200 R^1.6",
       warnings: [],
     },

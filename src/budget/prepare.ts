@@ -3,6 +3,7 @@ import type { EndName, Scenario, Weather } from "../scenario/types.ts";
 import { prepareWeather } from "./air.ts";
 import { antennaEntries, type EndHeading, endHeading } from "./antennaEntries.ts";
 import { dishCoverOver, NO_DISH_COVER } from "./dishCover.ts";
+import { doubtsOf } from "./doubts.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
 import { countedGround } from "./groundPath.ts";
@@ -94,6 +95,7 @@ function prepareEnd(
   weathers: Link["weathers"],
 ): PreparedEnd {
   const { frequencyGHz, covers } = scenario;
+  const doubts = doubtsOf(scenario);
   const feed = scenario.feeds[feedName]!;
   const { lineLossDb, dish: dishName, dishCover } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
@@ -103,7 +105,7 @@ function prepareEnd(
   const antenna = antennaEntries(heading, frequencyGHz, feed, dish);
   const lineSigma = lineLossDb.sigma ?? Math.min(LINE_SIGMA_DB, lineLossDb.value / 2);
   const mouths = mapValues(covers, (cover, name) =>
-    mouthUnder(heading, { frequencyGHz, feed, cover, beam: antenna.beam }, name),
+    mouthUnder(heading, { frequencyGHz, feed, cover, beam: antenna.beam }, doubts, name),
   );
   const gamma = gammaOfReturnLoss("returnLossDb", feed.returnLossDb);
   const ready: PreparedEnd = {
@@ -116,7 +118,7 @@ function prepareEnd(
     dishCoverOver:
       overDish === undefined
         ? () => NO_DISH_COVER
-        : dishCoverOver(heading, frequencyGHz, overDish, `covers.${dishCover}`, diameterM, gamma),
+        : dishCoverOver(heading, frequencyGHz, overDish, `covers.${dishCover}`, diameterM, gamma, doubts),
     mouth: mapValues(mouths, () => ({})),
     dishCover: {},
     warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),

@@ -4,6 +4,7 @@ import type { Bounded } from "../cover/bounded.ts";
 import type { Wetting } from "../cover/materials.ts";
 import type { SurfaceCare } from "../cover/surfaceState.ts";
 import type { WetModel } from "../cover/wetModels.ts";
+import type { Scatter } from "../numeric/scatter.ts";
 import type { Profile } from "../path/profile.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { TerrainGap } from "./terrain/types.ts";
@@ -18,6 +19,7 @@ import type { TerrainGap } from "./terrain/types.ts";
 export interface Uncertain {
   readonly value: number;
   readonly sigma?: number | undefined;
+  readonly scatter?: Scatter | undefined;
 }
 
 export type Polarization = "horizontal" | "vertical" | "circular";
@@ -61,6 +63,7 @@ export interface Receiver extends End {
 
 export interface Feed {
   readonly returnLossDb: number;
+  readonly returnLossSpread?: Uncertain | undefined;
   /** Phase of the feed's own reflection seen from outside, at the plane of its mouth [deg]; seldom known. */
   readonly phaseDeg?: number | undefined;
   /** How far the feed's pattern is down at the rim of its dish [dB]. */
@@ -106,6 +109,8 @@ export interface CoverLayer {
   /** Name in the list of materials, or "air", or what the user calls a material of their own. */
   readonly material: string;
   readonly thicknessMm: number;
+  readonly thicknessSigmaMm?: number | undefined;
+  readonly statedSpread?: boolean | undefined;
   /** With the spread in which the material is published. */
   readonly permittivity: Bounded;
   readonly lossTangent: Bounded;
@@ -170,6 +175,32 @@ export interface Snow {
   readonly wetnessPercent: number;
 }
 
+export interface SpreadSettings {
+  readonly feedReturnLossDb?: number | undefined;
+  readonly coverLossShare?: number | undefined;
+  readonly waterShare?: number | undefined;
+  readonly rainRateFactor?: number | undefined;
+  readonly rainLengthShare?: number | undefined;
+  readonly gasShare?: number | undefined;
+  readonly fogShare?: number | undefined;
+  readonly diffractionDb?: number | undefined;
+  readonly troposcatterDb?: number | undefined;
+  readonly rainScatterDb?: number | undefined;
+  readonly foliageDb?: number | undefined;
+  readonly tiltLossDb?: Uncertain | undefined;
+  readonly blunder?: { readonly chance: number; readonly lossDb: Uncertain } | undefined;
+  readonly correlation?:
+    | {
+        readonly water?: number | undefined;
+        readonly cover?: number | undefined;
+        readonly aim?: number | undefined;
+        readonly gain?: number | undefined;
+        readonly returnLoss?: number | undefined;
+        readonly line?: number | undefined;
+      }
+    | undefined;
+}
+
 export interface Decision {
   readonly reserveDb: number;
   /** 0 to 1. */
@@ -231,6 +262,7 @@ export interface Scenario {
   readonly path: ScenarioPath;
   readonly weather: Readonly<Record<string, Weather>>;
   readonly climate?: Climate | undefined;
+  readonly spread?: SpreadSettings | undefined;
   readonly decision: Decision;
 }
 
