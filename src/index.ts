@@ -38,6 +38,7 @@ export { clearSkyTemperature, slantGasAttenuation } from "./atmosphere/slantPath
 export { waterPermittivity } from "./atmosphere/waterPermittivity.ts";
 // Scenario and engine
 export { cases } from "./budget/cases.ts";
+export { type Drawing, drawingOf } from "./budget/drawing.ts";
 export type { Entry } from "./budget/entry.ts";
 export { evaluate } from "./budget/evaluate.ts";
 export { prepare, withWeather } from "./budget/prepare.ts";
@@ -119,6 +120,8 @@ export { pathCsv, pathJson } from "./report/pathData.ts";
 export { pathText } from "./report/pathText.ts";
 export { readingsCsv, readingsJson } from "./report/readingsData.ts";
 export { readingsText } from "./report/readingsText.ts";
+export { spreadCsv, spreadJson } from "./report/spreadData.ts";
+export { spreadText } from "./report/spreadText.ts";
 export { thicknessCsv, thicknessJson } from "./report/thicknessData.ts";
 export { thicknessText } from "./report/thicknessText.ts";
 export type { Meaning, Paint } from "./report/words.ts";
@@ -151,5 +154,6 @@ export { materialThickness } from "./study/materialThickness.ts";
 export { pathStudy } from "./study/pathStudy.ts";
 export { type BenchReport, benchReport } from "./study/readings.ts";
 export { coversRead, entryOfCover } from "./study/readingsEntry.ts";
+export { spreadOf } from "./study/spread.ts";
 export { thickness } from "./study/thickness.ts";
 export { yearOutage } from "./study/yearOutage.ts";

@@ -10,24 +10,19 @@ import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, CoverLayer, Feed, Uncertain } from "../scenario/types.ts";
 import type { Doubts } from "./doubts.ts";
 import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
-import type { Warning } from "./types.ts";
+import type { CoverScatter, Warning } from "./types.ts";
 
 /** Where a change of return loss stops that asks for more than the feed has: it was read on a better feed. */
 const LEAST_RETURN_LOSS_DB = 0.1;
 
-/** How a dry cover may differ from its nominal self [dB]. */
-export interface CoverScatter {
-  /** Change of the mismatch with the materials at the low and the high end of their spread, over all phases. */
-  readonly batchLowDb: number;
-  readonly batchHighDb: number;
-  /** True where those ends are one standard deviation away, false where they end a published range. */
-  readonly batchIsSigma: boolean;
-  /** Of the heat, as a share of it. */
-  readonly heatShare: number;
-  /** Of a plane wave before a mouth that is none. */
-  readonly planeWaveDb: number;
-  readonly readingDb: number;
-}
+export const NO_SCATTER: CoverScatter = {
+  batchLowDb: 0,
+  batchHighDb: 0,
+  batchIsSigma: false,
+  heatShare: 0,
+  planeWaveDb: 0,
+  readingDb: 0,
+};
 
 /** A dry cover: its share of the loss, and the stack that water comes to lie upon. */
 export interface DryCover {
@@ -37,20 +32,13 @@ export interface DryCover {
   readonly dissipationSigmaDb: number;
   /** What a draw needs: how each part may differ. */
   readonly scatter: CoverScatter;
+  /** As `MouthParts` has it. */
+  readonly beat: number;
   readonly layers: readonly Layer[];
   readonly covered: CoveredFeed;
   readonly source: string;
   readonly warnings: readonly Warning[];
 }
-
-const NO_SCATTER: CoverScatter = {
-  batchLowDb: 0,
-  batchHighDb: 0,
-  batchIsSigma: false,
-  heatShare: 0,
-  planeWaveDb: 0,
-  readingDb: 0,
-};
 
 /** A cover by its readings where it has some, else by its layers. */
 export function dryCover(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, where: string): DryCover {
@@ -93,6 +81,7 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
       planeWaveDb: planeWaveSigmaDb,
       readingDb: 0,
     },
+    beat: covered.beat,
     layers: stack("nominal"),
     covered,
     source: "plane wave through the layers, Born & Wolf 1.6",
@@ -166,6 +155,7 @@ function measuredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, 
     dissipationDb: exactly(split.dissipationDb),
     dissipationSigmaDb: 0,
     scatter: { ...NO_SCATTER, readingDb: sigma },
+    beat: 0, // it was read at the phase that there is
     layers,
     covered: { ...covered, returnLossDb: exactly(split.coveredReturnLossDb) },
     source: `measured, ${cover.measured!.source ?? "scenario"}`,

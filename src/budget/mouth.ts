@@ -4,11 +4,13 @@ import type { Cover, Feed } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
 import { isDry } from "./deposit.ts";
 import type { Doubts } from "./doubts.ts";
-import { dryCover } from "./dryCover.ts";
+import { type DryCover, dryCover, NO_SCATTER } from "./dryCover.ts";
 import { type Entry, lossEntry } from "./entry.ts";
 import type { Mouthpiece } from "./mouthpiece.ts";
 import type { Mouth, Warning, Wetness } from "./types.ts";
 import { type WaterCost, waterOnCover } from "./waterOnCover.ts";
+
+const NOTHING_ON_IT = { waterMismatchDb: 0, waterHeatDb: 0 };
 
 const BARE_IN_RAIN: Warning = {
   code: "bare_in_rain",
@@ -46,6 +48,7 @@ export function mouthUnder(
     returnLossDb: exactly(feed.returnLossDb),
     filmMm: 0,
     entries: [feedEntry],
+    parts: { ...NOTHING_ON_IT, coverMismatchDb: 0, coverHeatDb: 0, beat: 0, scatter: NO_SCATTER },
     mismatchLossDb: feedMismatchDb,
     dissipationDb: 0,
     warnings: [],
@@ -75,6 +78,13 @@ export function mouthUnder(
         dry.dissipationSigmaDb,
       ),
     ],
+    parts: {
+      ...NOTHING_ON_IT,
+      coverMismatchDb: dry.mismatchDb.nominal,
+      coverHeatDb: dry.dissipationDb.nominal,
+      beat: dry.beat,
+      scatter: dry.scatter,
+    },
     mismatchLossDb: feedMismatchDb + dry.mismatchDb.nominal,
     dissipationDb: dry.dissipationDb.nominal,
     warnings: dry.warnings,
@@ -91,6 +101,12 @@ export function mouthUnder(
         ...dryMouth.entries,
         ...waterEntries(heading, water, dry.covered.phaseSpreadDb, doubts.waterShare),
       ],
+      parts: {
+        ...dryMouth.parts,
+        waterMismatchDb: water.mismatchDb.nominal,
+        waterHeatDb: water.dissipationDb.nominal,
+        beat: wetBeat(dry, water),
+      },
       mismatchLossDb: dryMouth.mismatchLossDb + water.mismatchDb.nominal,
       dissipationDb: dryMouth.dissipationDb + water.dissipationDb.nominal,
       warnings: [...dry.warnings, ...water.warnings],
@@ -108,6 +124,11 @@ function mismatchDoubt({ returnLossDb, returnLossSpread }: Feed, usualDb: number
   const doubtDb = returnLossSpread?.sigma ?? usualDb;
   const at = (db: number) => mismatchLossDb(gammaOfReturnLoss("returnLossDb", db));
   return (at(Math.max(0.1, returnLossDb - doubtDb)) - at(returnLossDb + doubtDb)) / 2;
+}
+
+/** A reading holds the dry cover's beat already: what is left is that of the water, their squares adding up. */
+function wetBeat({ beat, covered }: DryCover, water: WaterCost): number {
+  return beat === covered.beat ? water.beat : Math.sqrt(Math.max(0, water.beat ** 2 - covered.beat ** 2));
 }
 
 function waterEntries(

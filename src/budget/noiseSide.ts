@@ -8,7 +8,7 @@ import { type Entry, gainEntry, type Heading } from "./entry.ts";
 import type { DishCoverState, Mouth, PreparedWeather } from "./types.ts";
 
 /** Noise figure off a label [dB]: common practice, no source. */
-const LABEL_NOISE_FIGURE_SIGMA_DB = 0.5;
+export const LABEL_NOISE_FIGURE_SIGMA_DB = 0.5;
 
 export interface NoiseSide {
   readonly entries: readonly Entry[];

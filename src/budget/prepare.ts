@@ -39,7 +39,8 @@ export function prepare(scenario: Scenario): Link {
   const ground = countedGround(scenario, path);
   const warnings = [...geometryWarnings(path, scenario.path), ...foliageWarnings(scenario)];
   const foliage = foliageEntries(scenario);
-  return { scenario, path, ground, foliage, ends, weathers, modes: scenario.modes, warnings };
+  const doubts = doubtsOf(scenario);
+  return { scenario, path, ground, foliage, ends, weathers, modes: scenario.modes, doubts, warnings };
 }
 
 /** The same link with one weather more, or another one under the same name: what a sweep of the rain rate needs. */

@@ -1,6 +1,7 @@
 import type { Bounded } from "../cover/bounded.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { EndName, Scenario, Site, Snow, Weather } from "../scenario/types.ts";
+import type { Doubts } from "./doubts.ts";
 import type { Entry } from "./entry.ts";
 import type { GroundPath } from "./groundPath.ts";
 
@@ -142,9 +143,35 @@ export interface PreparedEnd {
   readonly warnings: readonly Warning[];
 }
 
+/** How a dry cover may differ from its nominal self [dB]. */
+export interface CoverScatter {
+  /** Change of the mismatch with the materials at the low and the high end of their spread, over all phases. */
+  readonly batchLowDb: number;
+  readonly batchHighDb: number;
+  /** True where those ends are one standard deviation away, false where they end a published range. */
+  readonly batchIsSigma: boolean;
+  /** Of the heat, as a share of it. */
+  readonly heatShare: number;
+  /** Of a plane wave before a mouth that is none. */
+  readonly planeWaveDb: number;
+  readonly readingDb: number;
+}
+
+/** A mouth taken apart for drawing: what its entries hold, and how each part may differ. */
+export interface MouthParts {
+  readonly coverMismatchDb: number;
+  readonly coverHeatDb: number;
+  readonly waterMismatchDb: number;
+  readonly waterHeatDb: number;
+  /** x of the loss 20 log10|1 - x e^(j psi)| that an unknown phase adds, 0 where it is known or has been read. */
+  readonly beat: number;
+  readonly scatter: CoverScatter;
+}
+
 /** A feed's mouth under one cover in one weather. */
 export interface Mouth extends CoverState {
   readonly entries: readonly Entry[];
+  readonly parts: MouthParts;
   /** Whole mismatch and whole dissipation, nominal [dB]: what the noise side needs. */
   readonly mismatchLossDb: number;
   readonly dissipationDb: number;
@@ -175,5 +202,6 @@ export interface Link {
   readonly ends: Readonly<Record<EndName, Readonly<Record<string, PreparedEnd>>>>;
   readonly weathers: Readonly<Record<string, PreparedWeather>>;
   readonly modes: Readonly<Record<string, Mode>>;
+  readonly doubts: Doubts;
   readonly warnings: readonly Warning[];
 }

@@ -18,6 +18,8 @@ export interface WaterCost {
   readonly dissipationDb: Bounded;
   /** Standard deviation over an unknown phase of the wet feed's loss [dB]. */
   readonly phaseSpreadDb: number;
+  /** As of a covered feed, with the water on. */
+  readonly beat: number;
   readonly returnLossDb: Bounded;
   readonly filmMm: number;
   readonly source: string;
@@ -57,6 +59,7 @@ export function waterOnCover(
   const common = {
     noun,
     phaseSpreadDb: wet.phaseSpreadDb,
+    beat: wet.beat,
     filmMm: filmMm.nominal,
     warnings: deposit.warnings,
   };
@@ -87,6 +90,7 @@ export function waterOnCover(
     mismatchDb: exactly(0),
     dissipationDb: bounded(0, published.lossDb, whole),
     phaseSpreadDb: dry.phaseSpreadDb,
+    beat: dry.beat,
     returnLossDb: bounded(wet.returnLossDb.low, dry.returnLossDb.nominal, dry.returnLossDb.high),
     filmMm: 0,
     source: published.source,
@@ -143,6 +147,7 @@ function beads(
       ),
     ),
     phaseSpreadDb: wet.phaseSpreadDb,
+    beat: wet.beat,
     returnLossDb: wet.returnLossDb,
     filmMm: 0,
   };

@@ -9,12 +9,14 @@ import { pathCommand } from "./path.ts";
 import { readingsCommand } from "./readings.ts";
 import { run } from "./run.ts";
 import { schemaCommand } from "./schema.ts";
+import { spreadCommand } from "./spread.ts";
 import { thicknessCommand } from "./thickness.ts";
 import { yearCommand } from "./year.ts";
 
 run([
   budgetCommand,
   coversCommand,
+  spreadCommand,
   yearCommand,
   pathCommand,
   horizonCommand,

@@ -30,6 +30,8 @@ export interface CoveredFeed {
   readonly sidewaysLossDb: Bounded;
   /** Standard deviation of the insertion loss over a uniformly random phase [dB], 0 with the phase known. */
   readonly phaseSpreadDb: number;
+  /** x of the loss 20 log10|1 - x e^(j psi)| that an unknown phase psi adds to the nominal, 0 with the phase known. */
+  readonly beat: number;
 }
 
 /**
@@ -95,6 +97,7 @@ export function coveredFeed({
       dissipationDb,
       sidewaysLossDb,
       phaseSpreadDb: 0,
+      beat: 0,
     };
   }
 
@@ -117,6 +120,7 @@ export function coveredFeed({
     dissipationDb,
     sidewaysLossDb,
     phaseSpreadDb: phaseSpread(gb),
+    beat: gb,
   };
 }
 

@@ -43,7 +43,7 @@ const LEAST_SIGMA_K = 10;
 export const filledBeamK = 290;
 
 /** Temperature at which rain and wet air absorb, where that of the ground is unknown [K] (P.618-14 section 3). */
-const MEDIUM_K = 275;
+export const MEDIUM_K = 275;
 
 /**
  * Noise temperature of an antenna that looks through rain or cloud.

@@ -106,7 +106,7 @@ function isBare({ case: { transmitter, receiver } }: ReportBudget): boolean {
 }
 
 /** The cover of both ends, or the transmitter's and the receiver's where they differ. */
-export function coverName({ case: { transmitter, receiver } }: ReportBudget): string {
+export function coverName({ case: { transmitter, receiver } }: Pick<ReportBudget, "case">): string {
   return transmitter.cover === receiver.cover
     ? transmitter.cover
     : `${transmitter.cover} / ${receiver.cover}`;

@@ -1,0 +1,64 @@
+import type { EndName } from "../scenario/types.ts";
+import { column, logSpread, type Sketch } from "./causes.ts";
+import type { DrawnCover } from "./drawnCover.ts";
+import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
+import type { DishCoverState, Link } from "./types.ts";
+
+/** A cover over the whole dish in a block of draws; undefined where there is none, or where it is known. */
+export interface DrawnDish {
+  /** What is drawn costs beyond what a budget takes [dB]. */
+  readonly excessDb: Float64Array | undefined;
+  /** Shares of the power as the budget has them, and what of the former is left in a draw. */
+  readonly nominal: DishCoverState;
+  readonly passed: Float64Array | undefined;
+}
+
+/** Heat and water of a cover over the dish: of the same make as the covers of feeds, so of the same chance. */
+export function drawnDish(
+  sketch: Sketch,
+  link: Link,
+  feeds: Readonly<Record<EndName, string>>,
+  end: EndName,
+  { name, rain }: DrawnWeather,
+  drawn: DrawnCover,
+): DrawnDish {
+  const stateIn = (there: Link) => there.ends[end][feeds[end]]!.dishCover[name]!;
+  const nominal = stateIn(link);
+  if (nominal.entries.length === 0) return { excessDb: undefined, nominal, passed: undefined };
+  const lossOf = (state: DishCoverState, part: string) => {
+    const entry = state.entries.find(({ id }) => id.endsWith(part));
+    return { db: -(entry?.db ?? 0), sigma: entry?.sigma ?? 0 };
+  };
+  const heat = lossOf(nominal, ".dish_cover_heat");
+  const isRead = link.scenario.covers[link.scenario[end].dishCover!]!.measured !== undefined;
+  const heatSpread = heat.db > 0 ? logSpread(heat.sigma / heat.db) : 0;
+  const waters = Float64Array.from(
+    rain?.grid.links ?? [link],
+    (there) => lossOf(stateIn(there), "_water").db,
+  );
+  const water = lossOf(nominal, "_water").db;
+  const waterSpread = logSpread(link.doubts.waterShare);
+  const excessDb = column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) {
+      let excess = isRead
+        ? heat.sigma * drawn.reading[i]!
+        : heat.db * (Math.exp(heatSpread * drawn.heat[i]!) - 1);
+      if (water !== 0) {
+        const lower = waters[rain === undefined ? 0 : rain.node[i]!]!;
+        const upper = rain === undefined ? lower : waters[rain.node[i]! + 1]!;
+        const share = rain === undefined ? 0 : rain.share[i]!;
+        excess += Math.exp(waterSpread * drawn.water[i]!) * (lower + share * (upper - lower)) - water;
+      }
+      out[i] = excess;
+    }
+  });
+  return {
+    excessDb,
+    nominal,
+    passed: column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) {
+        out[i] = Math.min(nominal.passed + nominal.heated, nominal.passed * Math.exp(-NEPERS * excessDb[i]!));
+      }
+    }),
+  };
+}

@@ -1,0 +1,77 @@
+import { scatterQuantile } from "../numeric/scatterQuantile.ts";
+import type { EndName } from "../scenario/types.ts";
+import { type Cause, column, PREFIX, type Sketch, stillOf, tiedUniforms, uniformsOf } from "./causes.ts";
+import { isStated } from "./drawnLevels.ts";
+import { NEPERS } from "./drawnWeather.ts";
+import type { Link } from "./types.ts";
+
+/** Match of the bare feed in a block of draws. */
+export interface DrawnFeed {
+  readonly mismatchDb: Float64Array;
+  /** Reflection over that of the scenario. */
+  readonly gammaRatio: Float64Array;
+  readonly cosine: Float64Array;
+  readonly nominalDb: number;
+}
+
+/** Return loss of a feed, and the phase between it and whatever cover it has. */
+export function drawnFeed(
+  sketch: Sketch,
+  { scenario, doubts }: Link,
+  feeds: Readonly<Record<EndName, string>>,
+  end: EndName,
+): DrawnFeed {
+  const cause = (of: EndName): Cause => {
+    const { returnLossSpread: stated } = scenario.feeds[feeds[of]]!;
+    const sigma = stated?.sigma ?? doubts.feedReturnLossDb;
+    const scatter = stated?.scatter ?? ({ kind: "normal", sigma } as const);
+    return {
+      id: `${PREFIX[of]}.return_loss`,
+      matter: "match",
+      end: of,
+      label: "return loss of the feed",
+      scatter,
+      unit: "dB",
+      stated: isStated(stated),
+      still: stillOf(scatter),
+    };
+  };
+  const { returnLossDb } = scenario.feeds[feeds[end]]!;
+  const own = uniformsOf(sketch, cause(end));
+  const uniforms =
+    end === "transmitter"
+      ? own
+      : tiedUniforms(sketch, uniformsOf(sketch, cause("transmitter")), own, doubts.correlation.returnLoss);
+  const phases = uniformsOf(sketch, {
+    id: `${PREFIX[end]}.phase`,
+    matter: "cover",
+    end,
+    label: "phase between feed and cover",
+    scatter: { kind: "flat", low: 0, high: 360 },
+    unit: "deg",
+    stated: false,
+    still: 0.25, // where the phase adds next to nothing
+  });
+  const quantile = scatterQuantile(returnLossDb, cause(end).scatter);
+  const gammaRatio = column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) {
+      out[i] = Math.exp(
+        (NEPERS / 2) * (returnLossDb - Math.max(LEAST_RETURN_LOSS_DB, quantile(uniforms[i]!))),
+      );
+    }
+  });
+  const gamma2 = Math.exp(-NEPERS * returnLossDb);
+  return {
+    gammaRatio,
+    mismatchDb: column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) out[i] = -Math.log(1 - gamma2 * gammaRatio[i]! ** 2) / NEPERS;
+    }),
+    cosine: column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) out[i] = Math.cos(2 * Math.PI * phases[i]!);
+    }),
+    nominalDb: -Math.log(1 - gamma2) / NEPERS,
+  };
+}
+
+/** As the schema has it: below, next to nothing enters the feed at all [dB]. */
+const LEAST_RETURN_LOSS_DB = 0.1;

@@ -1,0 +1,49 @@
+import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
+import { scatterQuantile } from "../numeric/scatterQuantile.ts";
+import { column, type Sketch, stillOf, uniformsOf } from "./causes.ts";
+import { isStated } from "./drawnLevels.ts";
+import { NEPERS } from "./drawnWeather.ts";
+import { LABEL_NOISE_FIGURE_SIGMA_DB } from "./noiseSide.ts";
+import type { Link } from "./types.ts";
+
+/** The receiver and its line in a block of draws. */
+export interface DrawnReceiver {
+  /** Noise temperature of the receiver itself [K]. */
+  readonly receiverK: Float64Array;
+  /** Share of the power that the line passes on. */
+  readonly linePassed: Float64Array;
+}
+
+/**
+ * Noise of the receiver and of its line.
+ *
+ * @param lineLossDb  drawn loss of the line [dB]
+ */
+export function drawnReceiver(sketch: Sketch, { scenario }: Link, lineLossDb: Float64Array): DrawnReceiver {
+  const { noiseFigureDb: input } = scenario.receiver;
+  const scatter = input.scatter ?? {
+    kind: "normal" as const,
+    sigma: input.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB,
+  };
+  const uniforms = uniformsOf(sketch, {
+    id: "noise.receiver",
+    matter: "noise",
+    end: undefined,
+    label: "noise figure",
+    scatter,
+    unit: "dB",
+    stated: isStated(input),
+    still: stillOf(scatter),
+  });
+  const quantile = scatterQuantile(input.value, scatter);
+  return {
+    receiverK: column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) {
+        out[i] = REFERENCE_TEMPERATURE_K * (Math.exp(NEPERS * Math.max(0, quantile(uniforms[i]!))) - 1);
+      }
+    }),
+    linePassed: column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) out[i] = Math.exp(-NEPERS * lineLossDb[i]!);
+    }),
+  };
+}

@@ -1,0 +1,79 @@
+import { Command, Option } from "commander";
+import { type Case, cases, prepare, spreadCsv, spreadJson, spreadOf, spreadText } from "../index.ts";
+import { knownName } from "./knownName.ts";
+import { within } from "./optionQuantity.ts";
+import { progressBar } from "./progress.ts";
+import { scenarioIn } from "./scenarioFile.ts";
+import { paintFor, print, UserError } from "./terminal.ts";
+
+interface SpreadOptions {
+  readonly weather?: readonly string[];
+  readonly cover?: readonly string[];
+  readonly mode?: string;
+  readonly draws: string;
+  readonly seed: string;
+  readonly precision: string;
+  readonly detail?: true;
+  readonly json?: true;
+  readonly csv?: true;
+}
+
+const MOST_DRAWS = 1_000_000;
+const MOST_SEED = 2 ** 32 - 1;
+
+const collect = (value: string, before: readonly string[] = []) => [...before, value];
+
+export const spreadCommand = new Command("spread")
+  .description(
+    "how sure is the verdict: draw every uncertain input, with each cover, and rank what it hangs on",
+  )
+  .argument("<file>", "scenario file")
+  .option("--weather <name>", "only this weather (again for more)", collect)
+  .option(
+    "--cover <name>",
+    "only this cover at both ends, beside the scenario's own (again for more)",
+    collect,
+  )
+  .option("--mode <name>", "this mode in place of the scenario's first")
+  .option("--draws <number>", "most draws", "200000")
+  .option("--seed <number>", "another whole number draws other numbers; the same one the same", "1")
+  .option("--precision <percent>", "stop when every chance to close is known to this, at 95 %", "0.5 %")
+  .addOption(new Option("--detail", "every input with its distribution").conflicts(["json", "csv"]))
+  .addOption(new Option("--json", "everything as JSON").conflicts("csv"))
+  .option("--csv", "a flat table, a row for each weather and cover")
+  .action(async (file: string, options: SpreadOptions) => {
+    const draws = whole("--draws", options.draws, 1, MOST_DRAWS);
+    const seed = whole("--seed", options.seed, 0, MOST_SEED);
+    const precision = within("--precision", options.precision, "percent", [0.001, 50], "0.001 to 50 %") / 100;
+    const link = prepare(await scenarioIn(file));
+    const { mode = link.scenario.receiver.modes[0]! } = options;
+    knownName("mode", mode, Object.keys(link.modes));
+    for (const name of options.weather ?? []) knownName("weather", name, Object.keys(link.weathers));
+    for (const name of options.cover ?? []) knownName("cover", name, Object.keys(link.scenario.covers));
+    const progress = progressBar(process.stderr, "spread");
+    const study = spreadOf(link, choose(cases(link), mode, options), { draws, seed, precision, progress });
+    if (options.json) print(spreadJson(study));
+    else if (options.csv) print(spreadCsv(study));
+    else print(spreadText(study, link, { detail: options.detail ?? false, paint: paintFor(process.stdout) }));
+  });
+
+/** Cases of one mode; the scenario's own covers stay, for the ranking is theirs. */
+function choose(all: readonly Case[], mode: string, { weather, cover }: SpreadOptions): Case[] {
+  const first = all[0]!;
+  return all
+    .filter((one) => one.mode === first.mode)
+    .map((one) => ({ ...one, mode }))
+    .filter((one) => weather === undefined || weather.includes(one.weather))
+    .filter((one) => {
+      const own =
+        one.transmitter.cover === first.transmitter.cover && one.receiver.cover === first.receiver.cover;
+      const both = one.transmitter.cover === one.receiver.cover;
+      return own || cover === undefined || (both && cover.includes(one.transmitter.cover));
+    });
+}
+
+function whole(option: string, text: string, low: number, high: number): number {
+  const value = Number(text);
+  if (text.trim() !== "" && Number.isInteger(value) && value >= low && value <= high) return value;
+  throw new UserError(`${option}: read "${text}", expected a whole number from ${low} to ${high}`);
+}

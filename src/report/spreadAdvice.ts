@@ -1,0 +1,111 @@
+import type { Matter } from "../budget/causes.ts";
+import type { SpreadStudy } from "../study/spread.ts";
+import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
+import { cell, columns, RULE } from "./columns.ts";
+import { matterWords } from "./spreadWords.ts";
+import { abreast, capital, listed, paragraph, signed, tenth } from "./words.ts";
+
+/** Shares below this are nothing that a ranking of some thousand draws can tell. */
+const LEAST_SHARE = 0.02;
+/** Matters worth advice in one weather. */
+const MOST_ADVICE = 2;
+
+const COVER: readonly Matter[] = ["cover", "water"];
+
+/** Matter by weather: share of the variance and rank correlation, the largest first. */
+export function rankingTable({ rankings }: SpreadStudy): string {
+  const share = (matter: Matter, ranking: SpreadRanking) =>
+    ranking.matters.find((one) => one.matter === matter)?.varianceShare ?? 0;
+  const most = (matter: Matter) => Math.max(...rankings.map((ranking) => share(matter, ranking)));
+  const all = [...new Set(rankings.flatMap(({ matters }) => matters.map(({ matter }) => matter)))];
+  const told = all.filter((matter) => most(matter) >= LEAST_SHARE).sort((a, b) => most(b) - most(a));
+  const figures = (matter: Matter, { matters }: SpreadRanking) => {
+    const found = matters.find((one) => one.matter === matter);
+    if (found === undefined) return "-";
+    const percent = found.varianceShare < LEAST_SHARE ? "<2" : `${Math.round(100 * found.varianceShare)}`;
+    return `${percent} % ${found.rankCorrelation.toFixed(2)} ±${tenth(found.sigmaDb)}`;
+  };
+  return abreast(rankings, (some) =>
+    columns([
+      [cell("share, rank, dB"), ...some.map((ranking) => cell(ranking.case.weather))],
+      RULE,
+      ...told.map((matter) => [
+        cell(matterWords[matter].name),
+        ...some.map((ranking) => cell(figures(matter, ranking))),
+      ]),
+    ]),
+  );
+}
+
+/** What follows: what matters how much more than the cover, what knowing it would bring, what to do. */
+export function adviceText({ rankings }: SpreadStudy): string {
+  const comparisons = rankings.map(comparison).filter((line) => line !== "");
+  const worth = rankings.flatMap((ranking) =>
+    ranking.matters
+      .filter(({ varianceShare }) => varianceShare >= LEAST_SHARE)
+      .slice(0, MOST_ADVICE)
+      .map((one) => ({ one, ranking, gainDb: one.knownLowDb - ranking.lowDb })),
+  );
+  // Each matter once, where knowing it would bring the most.
+  const best = new Map<Matter, (typeof worth)[number]>();
+  for (const entry of worth.toSorted((a, b) => a.gainDb - b.gainDb)) best.set(entry.one.matter, entry);
+  const advices = [...best.values()].reverse().map(({ one, ranking }) => advice(one, ranking));
+  return [...comparisons, ...advices].map((line) => paragraph(line, "- ")).join("\n");
+}
+
+function comparison({ case: { weather }, matters }: SpreadRanking): string {
+  const deviation = (some: readonly MatterOfSpread[]) => Math.hypot(...some.map(({ sigmaDb }) => sigmaDb));
+  const covers = matters.filter(({ matter }) => COVER.includes(matter));
+  const [first] = matters.filter(({ matter }) => !COVER.includes(matter));
+  if (first === undefined) return "";
+  const { name } = matterWords[first.matter];
+  const own = deviation(covers);
+  if (own < 0.05)
+    return `${capital(weather)}: the cover adds nothing to the spread; ${matterWords[first.matter].name} leads.`;
+  const times = first.sigmaDb / own;
+  const wet = covers.some(({ matter, sigmaDb }) => matter === "water" && sigmaDb > 0.05);
+  const what = wet ? "the cover and its water" : "the cover";
+  const figures = `(${tenth(first.sigmaDb)} against ${tenth(own)} dB)`;
+  if (times < 1 / 1.25) return `${capital(weather)}: ${what} matter more than anything else ${figures}.`;
+  if (times < 1.25) return `${capital(weather)}: ${name} matters about as much as ${what} ${figures}.`;
+  return `${capital(weather)}: ${name} matters ${timesWords(times)} as much as ${what} ${figures}.`;
+}
+
+const counts = [
+  "",
+  "",
+  "twice",
+  "three times",
+  "four times",
+  "five times",
+  "six times",
+  "seven times",
+  "eight times",
+  "nine times",
+  "ten times",
+];
+
+function timesWords(times: number): string {
+  if (times < 1.75) return "one and a half times";
+  if (times < 2.75 && times > 2.25) return "two and a half times";
+  return counts[Math.round(times)] ?? `${Math.round(times)} times`;
+}
+
+function advice(
+  { matter, knownLowDb, knownCloses }: MatterOfSpread,
+  { case: one, lowDb, closes }: SpreadRanking,
+): string {
+  const { name, advice } = matterWords[matter];
+  const points = 100 * (knownCloses - closes);
+  const gains = [
+    ...(Math.abs(knownLowDb - lowDb) >= 0.05
+      ? [`the 5 % margin would move by ${signed(knownLowDb - lowDb)} dB`]
+      : []),
+    ...(Math.abs(points) >= 1
+      ? [`the chance to close by ${points > 0 ? "+" : ""}${points.toFixed(0)} points`]
+      : []),
+  ];
+  const effect =
+    gains.length > 0 ? ` Were it as the scenario has it for sure, in ${one.weather} ${listed(gains)}.` : "";
+  return `${capital(name)}: ${advice}.${effect}`;
+}

@@ -1,0 +1,87 @@
+import type { Link } from "../budget/types.ts";
+import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
+import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
+import { coverName } from "./marginText.ts";
+import { matterWords } from "./spreadWords.ts";
+import { listed, paragraph, signed, tenth } from "./words.ts";
+
+/** What a median and a chance may differ by before it is worth a word [dB, share]. */
+const MEDIAN_DB = 0.3;
+const CHANCE = 0.02;
+/** Skew and shift of a matter that bends a margin away from the normal distribution. */
+const SKEW = 0.5;
+const SHIFT_DB = 0.1;
+
+/** Where draws and a budget's root-sum-square part ways, and why. */
+export function agreementText(study: SpreadStudy, link: Link): string {
+  const apart = study.rows.filter((row) => differs(row));
+  const count = `${study.rows.length} case${study.rows.length === 1 ? "" : "s"}`;
+  if (apart.length === 0) {
+    return paragraph(
+      `Against \`oilskin budget\`: verdicts of all ${count} agree, medians to ${tenth(MEDIAN_DB)} dB and chances to ` +
+        `${100 * CHANCE} points.`,
+    );
+  }
+  const turned = apart.filter(({ verdict, budget }) => verdict !== budget.verdict);
+  const lines = [
+    `Against \`oilskin budget\`, which adds the deviations as root-sum-square: ${apart.length} of ${count} differ by more ` +
+      `than ${tenth(MEDIAN_DB)} dB or ${100 * CHANCE} points; ` +
+      (turned.length === 0
+        ? "the verdicts are the same."
+        : `verdicts differ in ${listed(turned.map((row) => `${row.case.weather} under ${coverName(row)} (${row.budget.verdict} there, ${row.verdict} here)`))}.`),
+    ...study.rankings.map((ranking) => reasonText(ranking, study, link)).filter((line) => line !== ""),
+  ];
+  return [paragraph(lines[0]!), ...lines.slice(1).map((line) => paragraph(line, "- "))].join("\n");
+}
+
+function differs({ marginDb, closes, verdict, budget }: SpreadRow): boolean {
+  const sampling = (closes.high - closes.low) / 2;
+  return (
+    verdict !== budget.verdict ||
+    Math.abs(marginDb.medianDb - budget.marginDb) > MEDIAN_DB ||
+    Math.abs(closes.share - budget.holdProbability) > CHANCE + sampling
+  );
+}
+
+function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): string {
+  const { case: one, matters } = ranking;
+  const row = study.rows.find(
+    ({ case: other }) =>
+      other.weather === one.weather &&
+      other.transmitter.cover === one.transmitter.cover &&
+      other.receiver.cover === one.receiver.cover,
+  )!;
+  if (!differs(row)) return "";
+  const whole = Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
+  const reasons = [
+    ...blunderReason(link),
+    ...matters
+      .filter(({ sigmaDb, skewness, shiftDb }) => {
+        const counts = sigmaDb > whole / 5;
+        return (counts && Math.abs(skewness) > SKEW) || Math.abs(shiftDb) > SHIFT_DB;
+      })
+      .map(bentReason),
+    ...(one.transmitter.cover !== "bare" &&
+    one.receiver.cover !== "bare" &&
+    matters.some(({ matter }) => matter === "water")
+      ? ["water at both ends is tied, which a root-sum-square takes as independent"]
+      : []),
+  ];
+  const { budget, marginDb, closes } = row;
+  const here = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, chance ${(100 * closes.share).toFixed(0)} for ${(100 * budget.holdProbability).toFixed(0)} %`;
+  return `${one.weather}, ${coverName(ranking)}: ${here}; because ${reasons.length > 0 ? reasons.join("; ") : "the tails are no normal ones"}.`;
+}
+
+function blunderReason({ doubts: { blunder } }: Link): string[] {
+  if (blunder.chance === 0) return [];
+  return [
+    `blunders, which a budget leaves out, cost some ${tenth(blunder.lossDb.value)} dB in ${Number((100 * blunder.chance).toPrecision(2))} % of the draws`,
+  ];
+}
+
+function bentReason({ matter, skewness, shiftDb }: MatterOfSpread): string {
+  const { name } = matterWords[matter];
+  const tail =
+    Math.abs(skewness) > SKEW ? `${name} has its long tail towards ${skewness < 0 ? "loss" : "gain"}` : name;
+  return Math.abs(shiftDb) > SHIFT_DB ? `${tail} and moves the mean by ${signed(shiftDb)} dB` : tail;
+}

@@ -1,0 +1,131 @@
+import type { Link } from "../budget/types.ts";
+import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
+import { type Cell, cell, columns, RULE } from "./columns.ts";
+import { coverName, meanings, pathLines } from "./marginText.ts";
+import { warningText } from "./notes.ts";
+import { adviceText, rankingTable } from "./spreadAdvice.ts";
+import { agreementText } from "./spreadAgreement.ts";
+import { spreadCautions } from "./spreadCautions.ts";
+import { rangePicture } from "./spreadPicture.ts";
+import { matterWords, scatterWords } from "./spreadWords.ts";
+import { capital, type Paint, paragraph, plain, tenth } from "./words.ts";
+
+/** How sure the verdict is, in words; then margins, covers, what the spread hangs on, and what a budget says. */
+export function spreadText(
+  study: SpreadStudy,
+  link: Link,
+  { detail = false, paint = plain }: { readonly detail?: boolean; readonly paint?: Paint } = {},
+): string {
+  const weathers = [...new Set(study.rows.map(({ case: { weather } }) => weather))];
+  const rowsIn = (weather: string) => study.rows.filter((row) => row.case.weather === weather);
+  const parts = [
+    pathLines(study, link, paint),
+    paragraph(howDrawn(study, link)),
+    weathers.map((weather) => paragraph(sentence(rowsIn(weather), weather), "- ")).join("\n"),
+    ...weathers.map((weather) =>
+      [
+        paint("strong", `${capital(weather)}: margin in dB`),
+        marginTable(rowsIn(weather), link, paint),
+        "",
+        rangePicture(rowsIn(weather), link.scenario.decision.reserveDb),
+      ].join("\n"),
+    ),
+    paragraph(
+      "5 %, 95 %: one draw in twenty lies below, one above. closes: draws with a margin above 0; reserve: above " +
+        `${tenth(link.scenario.decision.reserveDb)} dB. takes: bare less covered in the same draws, median and 5 to ` +
+        "95 %. lost: draws that close with bare feeds and not with the cover. *: as the scenario has it.",
+    ),
+    `${paint("strong", "What the spread hangs on, scenario's covers, blunders left out")}\n${rankingTable(study)}`,
+    adviceText(study),
+    agreementText(study, link),
+    detail ? `${paint("strong", "What was drawn")}\n${causeTable(study)}` : "",
+    warningText(study.warnings, paint),
+    spreadCautions(paint),
+    leftOut,
+  ];
+  return `${parts.filter((part) => part !== "").join("\n\n")}\n`;
+}
+
+const leftOut = paragraph(
+  "Not drawn: errors of the standards themselves where they state none, multipath fading and ducting, a station off " +
+    "frequency, the day's refraction beyond what the doubt of the way over the ground holds.",
+);
+
+function howDrawn({ mode, draws, mostDraws, seed, halfWidth, precision }: SpreadStudy, link: Link): string {
+  const points = (100 * halfWidth).toFixed(1);
+  const stop =
+    draws < mostDraws
+      ? `enough for chances good to ${points} points`
+      : halfWidth <= precision
+        ? `chances good to ${points} points`
+        : `chances good to ${points} points, where ${Number((100 * precision).toPrecision(2))} were asked for`;
+  return (
+    `${capital(link.modes[mode]!.label)}: ${draws.toLocaleString("en-GB")} draws, ${stop} (95 %), the same draws for all ` +
+    `covers and weathers; seed ${seed}.`
+  );
+}
+
+/** The answer in one weather: the scenario's covers, or the first asked for, against bare feeds. */
+function sentence(rows: readonly SpreadRow[], weather: string): string {
+  const [row] = rows as [SpreadRow];
+  const { marginDb, closes } = row;
+  const range = `${tenth(marginDb.medianDb)} dB in the middle, ${tenth(marginDb.lowDb)} to ${tenth(marginDb.highDb)} dB in nine draws of ten`;
+  const answer = `${capital(weather)}: ${coverName(row)} closes in ${chance(closes.share)} of the draws (${range})`;
+  if (row.costDb === undefined) return `${answer}.`;
+  const lost = 100 * row.lost;
+  const won = 100 * row.won;
+  const turned =
+    lost + won < 0.1
+      ? "the cover changes no answer"
+      : `the cover loses ${countOf(lost)} contacts in a hundred${won >= 0.1 ? ` and wins ${countOf(won)}` : ""}`;
+  return `${answer}; against bare feeds ${turned}.`;
+}
+
+const countOf = (hundredth: number) => hundredth.toFixed(hundredth < 9.95 ? 1 : 0);
+
+/** A drawn probability to a tenth of a per cent, and no surer than the draws are. */
+export function chance(share: number): string {
+  if (share > 0.9995) return "all but none";
+  if (share < 0.0005) return "next to none";
+  return `${(100 * share).toFixed(1)} %`;
+}
+
+function marginTable(rows: readonly SpreadRow[], { scenario }: Link, paint: Paint): string {
+  const { transmitter, receiver } = scenario;
+  const figure = (share: number) => `${(100 * share).toFixed(1)} %`;
+  return columns([
+    ["cover", "5 %", "median", "95 %", "closes", "reserve", "verdict", "takes", "lost"].map((head) =>
+      cell(head),
+    ),
+    RULE,
+    ...rows.map((row): Cell[] => {
+      const { case: one, marginDb, closes, keepsReserve, verdict, costDb, lost } = row;
+      const own = one.transmitter.cover === transmitter.cover && one.receiver.cover === receiver.cover;
+      return [
+        cell(own ? `${coverName(row)} *` : coverName(row)),
+        ...[marginDb.lowDb, marginDb.medianDb, marginDb.highDb].map((db) => cell(tenth(db))),
+        cell(figure(closes.share)),
+        cell(figure(keepsReserve.share)),
+        cell(verdict, paint(meanings[verdict], verdict)),
+        cell(
+          costDb === undefined
+            ? "-"
+            : `${tenth(costDb.medianDb)} (${tenth(costDb.lowDb)} to ${tenth(costDb.highDb)})`,
+        ),
+        cell(costDb === undefined ? "-" : figure(lost)),
+      ];
+    }),
+  ]);
+}
+
+function causeTable({ causes }: SpreadStudy): string {
+  return columns([
+    ["what", "how it scatters", "by"].map((head) => cell(head)),
+    RULE,
+    ...causes.map(({ label, matter, end, scatter, unit, stated }) => [
+      cell(`${end === undefined ? "" : `${end}: `}${label === "aim" ? matterWords[matter].name : label}`),
+      cell(scatterWords({ scatter, unit })),
+      cell(stated ? "scenario" : "usual"),
+    ]),
+  ]);
+}
