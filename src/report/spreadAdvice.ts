@@ -48,8 +48,10 @@ export function adviceText({ rankings }: SpreadStudy): string {
   );
   // Each matter once, where knowing it would bring the most.
   const best = new Map<Matter, (typeof worth)[number]>();
-  for (const entry of worth.toSorted((a, b) => a.gainDb - b.gainDb)) best.set(entry.one.matter, entry);
-  const advices = [...best.values()].reverse().map(({ one, ranking }) => advice(one, ranking));
+  for (const entry of worth.toSorted((a, b) => b.gainDb - a.gainDb)) {
+    if (!best.has(entry.one.matter)) best.set(entry.one.matter, entry);
+  }
+  const advices = [...best.values()].map(({ one, ranking }) => advice(one, ranking));
   return [...comparisons, ...advices].map((line) => paragraph(line, "- ")).join("\n");
 }
 

@@ -55,6 +55,7 @@ function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): str
   const whole = Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
   const reasons = [
     ...blunderReason(link),
+    ...rateReason(one.weather, link),
     ...matters
       .filter(({ sigmaDb, skewness, shiftDb }) => {
         const counts = sigmaDb > whole / 5;
@@ -79,9 +80,20 @@ function blunderReason({ doubts: { blunder } }: Link): string[] {
   ];
 }
 
+function rateReason(weather: string, { doubts, scenario }: Link): string[] {
+  const { rainMmPerH, coversWetAsAtMmPerH = 0 } = scenario.weather[weather]!;
+  const rains = rainMmPerH.value + coversWetAsAtMmPerH > 0;
+  const stated = rainMmPerH.sigma !== undefined || rainMmPerH.scatter !== undefined;
+  if (!rains || stated || doubts.rainRateFactor === 1) return [];
+  return [
+    `the rain rate, which a budget takes as written, is drawn within a factor of ${doubts.rainRateFactor}`,
+  ];
+}
+
 function bentReason({ matter, skewness, shiftDb }: MatterOfSpread): string {
   const { name } = matterWords[matter];
-  const tail =
-    Math.abs(skewness) > SKEW ? `${name} has its long tail towards ${skewness < 0 ? "loss" : "gain"}` : name;
-  return Math.abs(shiftDb) > SHIFT_DB ? `${tail} and moves the mean by ${signed(shiftDb)} dB` : tail;
+  const moves = `moves the mean by ${signed(shiftDb)} dB`;
+  if (Math.abs(skewness) <= SKEW) return `${name} ${moves}`;
+  const tail = `${name} has its long tail towards ${skewness < 0 ? "loss" : "gain"}`;
+  return Math.abs(shiftDb) > SHIFT_DB ? `${tail} and ${moves}` : tail;
 }
