@@ -142,7 +142,7 @@ export { scenarioJsonSchema } from "./scenario/schema.ts";
 export { TerrainError } from "./scenario/terrain/faults.ts";
 export { openTerrain } from "./scenario/terrain/openTerrain.ts";
 export type { ElevationSource, Terrain } from "./scenario/terrain/types.ts";
-export type { Diagnostic, Scenario } from "./scenario/types.ts";
+export type { Diagnostic, Scatter, Scenario, SpreadSettings, Uncertain } from "./scenario/types.ts";
 export { withMeasuredCover } from "./scenario/writeCover.ts";
 export { breakEven } from "./study/breakEven.ts";
 export { coverVerdict } from "./study/coverVerdict.ts";

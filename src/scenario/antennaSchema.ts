@@ -63,7 +63,7 @@ const conicalHorn = group(
 /** A feed, horn or other radiator whose mouth can be covered. */
 export const feedSchema = group(
   {
-    return_loss: quantity("levelDb", { about: "return loss of the bare feed", range: [0.1, 80] }).optional(),
+    return_loss: uncertain("levelDb", { about: "return loss of the bare feed", range: [0.1, 80] }).optional(),
     vswr: quantity("ratio", {
       about: "voltage standing wave ratio of the bare feed",
       range: [1.001, 100],
@@ -97,7 +97,8 @@ export const feedSchema = group(
 ).transform((feed): Feed => {
   const { return_loss, vswr } = feed;
   return {
-    returnLossDb: return_loss ?? reflectionFigures({ vswr: vswr! }).returnLossDb,
+    returnLossDb: return_loss?.value ?? reflectionFigures({ vswr: vswr! }).returnLossDb,
+    returnLossSpread: return_loss?.sigma === undefined ? undefined : return_loss,
     phaseDeg: feed.phase,
     edgeTaperDb: feed.edge_taper,
     tenDbWidthDeg: feed.beamwidth_10db,

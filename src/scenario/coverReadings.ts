@@ -1,12 +1,8 @@
 import type { Fault } from "./issues.ts";
+import { isGroup, type Raw } from "./raw.ts";
 import type { BenchReadings } from "./readings.ts";
 import { didYouMean, listed, shown } from "./wording.ts";
 import { fromFolder } from "./yamlFile.ts";
-
-type Raw = Readonly<Record<string, unknown>>;
-
-const isGroup = (value: unknown): value is Raw =>
-  typeof value === "object" && value !== null && !Array.isArray(value);
 
 /**
  * A scenario as typed, the tables that its covers name (`measured: { readings: bench.csv }`) read and reduced in

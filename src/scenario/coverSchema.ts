@@ -16,7 +16,11 @@ function spreadOf({ value, sigma = 0 }: Uncertain, lowest: number): Bounded {
 const layer = group(
   {
     material: text("a material of `oilskin materials`, air, or a name of your own with its permittivity"),
-    thickness: quantity("thicknessMm", { about: "thickness of the layer", range: [0, 1000] }),
+    thickness: uncertain("thicknessMm", {
+      about: "thickness of the layer",
+      range: [0, 1000],
+      normalOnly: true,
+    }),
     fill: quantity("percent", {
       about: "share of solid material, the rest being air",
       range: [0.1, 100],
@@ -25,12 +29,18 @@ const layer = group(
     loss_tangent: uncertain("ratio", { about: "loss tangent", range: [0, 10] }).optional(),
   },
   "a layer: material and thickness",
-).transform(({ material, thickness: thicknessMm, fill, permittivity, loss_tangent }, context): CoverLayer => {
+).transform(({ material, thickness, fill, permittivity, loss_tangent }, context): CoverLayer => {
   const known = material === "air" ? undefined : findMaterial(material);
   const eps = permittivity && spreadOf(permittivity, 1);
   const loss = loss_tangent && spreadOf(loss_tangent, 0);
+  const spreads = [thickness, permittivity, loss_tangent].map((figure) => figure?.sigma);
+  const common = {
+    thicknessMm: thickness.value,
+    thicknessSigmaMm: thickness.sigma,
+    statedSpread: spreads.some((sigma) => sigma !== undefined) || undefined,
+  };
   if (material === "air") {
-    return { material, thicknessMm, permittivity: eps ?? exactly(1), lossTangent: loss ?? exactly(0) };
+    return { material, ...common, permittivity: eps ?? exactly(1), lossTangent: loss ?? exactly(0) };
   }
   if (known === undefined && eps === undefined) {
     const names = materials.flatMap(({ name, aliases }) => [name, ...aliases]);
@@ -45,7 +55,7 @@ const layer = group(
   };
   return {
     material: known?.name ?? material,
-    thicknessMm,
+    ...common,
     ...(fill === undefined ? solid : filled(solid, fill / 100)),
   };
 });

@@ -4,11 +4,18 @@ import { didYouMean, instead, shown } from "./wording.ts";
 /** Longest text of the user's own: a name, a title, the path of a file [characters]. */
 const LONGEST_TEXT = 500;
 
+/** What goes into the JSON Schema beside, or in place of, what the package finds out. */
+interface Described {
+  readonly description: string;
+  readonly type?: readonly string[];
+  readonly anyOf?: readonly object[];
+}
+
 /**
  * A schema with what an editor is to be told of it. The package's own `.meta()` copies the schema for that, which a
  * hundred fields would feel at every start.
  */
-export function described<T extends z.ZodType>(schema: T, meta: { description: string; type?: string[] }): T {
+export function described<T extends z.ZodType>(schema: T, meta: Described): T {
   z.globalRegistry.add(schema, meta as z.GlobalMeta);
   return schema;
 }

@@ -1,6 +1,6 @@
 import type * as z from "zod";
 import type { FaultPath } from "./positions.ts";
-import { didYouMean, listed, shown } from "./wording.ts";
+import { unknownKey } from "./wording.ts";
 
 /** A fault at a place in the file, before line and column are known. */
 export interface Fault {
@@ -16,9 +16,12 @@ export function faultsOf(issue: z.core.$ZodIssue, schema: z.core.$ZodType): Faul
     const known = keysAt(path, schema);
     return issue.keys.map((key) => ({
       code: "unknown_key",
-      message: `unknown key ${shown(key)}, expected ${listed(known)}${didYouMean(key, known)}`,
+      message: unknownKey(key, known),
       path: [...path, key],
     }));
+  }
+  if (issue.code === "custom" && issue.params?.["code"] === "unknown_key") {
+    return [{ code: "unknown_key", message, path }];
   }
   if (!message.startsWith("missing,")) return [{ code: "bad_value", message, path }];
   const name = String(path.at(-1));

@@ -1,67 +1,61 @@
 import * as z from "zod";
+import { readScattering, type Scattering, type ScatteringField } from "./distribution.ts";
+import { definedAs } from "./distributionJson.ts";
 import { described } from "./fields.ts";
-import {
-  describeRefusal,
-  kinds,
-  type Quantity,
-  type QuantityKind,
-  type Reading,
-  readQuantity,
-} from "./quantity.ts";
-import { rangeHint } from "./rangeHints.ts";
+import { type FieldOptions, judgedQuantity } from "./judgedQuantity.ts";
+import { kinds, type Quantity, type QuantityKind } from "./quantity.ts";
 import type { Uncertain } from "./types.ts";
 import { instead } from "./wording.ts";
 
-export interface FieldOptions {
-  /** What the field means; an editor shows it. */
-  readonly about: string;
-  /** Lowest and highest value that can be meant, in the canonical unit of the kind. */
-  readonly range: readonly [low: number, high: number];
-}
-
 /** A field that holds a quantity with a unit; its value is the number in the canonical unit. */
 export function quantity(kind: QuantityKind, options: FieldOptions) {
-  return field(kind, options, false, ({ value }) => value);
-}
-
-/** The same, where `3 W +/- 0.5 dB` is welcome. */
-export function uncertain(kind: QuantityKind, options: FieldOptions) {
-  return field(kind, options, true, ({ value, sigma }): Uncertain => ({ value, sigma }));
-}
-
-function field<T>(kind: QuantityKind, options: FieldOptions, spread: boolean, take: (read: Quantity) => T) {
-  const { expected, usual } = kinds[kind];
-  const error = ({ input }: { input?: unknown }) => instead(input, expected);
-  const needsUnit = usual[0] !== "";
-  const typed = described(z.string({ error }), {
+  const { expected } = kinds[kind];
+  const typed = described(z.string({ error: ({ input }) => instead(input, expected) }), {
     description: `${options.about}: ${expected}`,
-    ...(!needsUnit && { type: ["string", "number"] }),
+    ...(isBare(kind) && { type: ["string", "number"] }),
   });
   return typed.transform((input, context) => {
-    const judge = (reading: Reading): T => {
-      const fault = reading.ok ? outOfRange(reading, kind, options) : describeRefusal(reading);
-      if (reading.ok && fault === undefined) return take(reading);
-      context.addIssue({ code: "custom", message: fault ?? "", input });
+    const conclude = (read: Quantity | string): number => {
+      if (typeof read !== "string") return read.value;
+      context.addIssue({ code: "custom", message: read, input });
       return z.NEVER;
     };
-    const reading = readQuantity(input, kind, { spread });
-    if (reading.ok || !reading.libraryMayRead) return judge(reading);
-    // mathjs is slow to start: it is loaded for arithmetic and rare units alone.
-    return import("#math-units").then(({ readArithmetic }) => judge(readArithmetic(String(input), kind)));
+    const read = judgedQuantity(input, kind, options, false);
+    return read instanceof Promise ? read.then(conclude) : conclude(read);
   });
 }
 
-function outOfRange(read: Quantity, kind: QuantityKind, { about, range }: FieldOptions): string | undefined {
-  const [low, high] = range;
-  const { value, sigma = 0 } = read;
-  const unit = kinds[kind].usual[0]!;
-  if (value >= low && value <= high) {
-    if (sigma <= high - low) return undefined;
-    return `read a spread of ${sigma}, expected less than the range from ${low} to ${high} ${unit}`;
-  }
-  const hint = rangeHint(read, kind, range);
-  return (
-    `read "${`${read.number} ${read.unit}`.trim()}", expected ${about} from ${low} to ${high} ${unit}`.trim() +
-    (hint === undefined ? "" : ` (${hint})`)
-  );
+/**
+ * The same, where a spread is welcome: `3 W +/- 0.5 dB`, or a group that names a distribution.
+ *
+ * The schema knows no more of it than that it is there: a node for each form of a distribution in each field would
+ * be felt at every start. What an editor may offer stands in `distributionJson.ts`, once.
+ */
+export function uncertain(kind: QuantityKind, options: ScatteringField) {
+  const definition = options.normalOnly ? "normal" : isBare(kind) ? "distributionOfNumber" : "distribution";
+  const typed = described(z.unknown(), {
+    description: `${options.about}: ${kinds[kind].expected}`,
+    anyOf: [{ type: isBare(kind) ? ["string", "number"] : "string" }, definedAs(definition)],
+  });
+  return typed.transform((input, context) => {
+    const conclude = ({ read, faults }: Scattering): Uncertain => {
+      for (const { message, path, code } of faults) {
+        context.addIssue({
+          code: "custom",
+          message,
+          path: [...path],
+          input,
+          ...(code && { params: { code } }),
+        });
+      }
+      return read ?? z.NEVER;
+    };
+    const reading = readScattering(input, kind, options);
+    return reading instanceof Promise ? reading.then(conclude) : conclude(reading);
+  });
+}
+
+/** Whether numbers stand there without a unit. */
+function isBare(kind: QuantityKind): boolean {
+  return kinds[kind].usual[0] === "";
 }

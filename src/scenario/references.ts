@@ -2,19 +2,14 @@ import { modes as builtInModes } from "../receiver/modes.ts";
 import { faultOfText } from "./fields.ts";
 import type { Fault } from "./issues.ts";
 import type { FaultPath } from "./positions.ts";
+import { isGroup, type Raw } from "./raw.ts";
 import { BARE } from "./schema.ts";
 import { didYouMean, listed, shown } from "./wording.ts";
-
-type Raw = Readonly<Record<string, unknown>>;
 
 /** The group under a key of a group; an empty one where there is none. */
 function groupAt(raw: unknown, key: string): Raw {
   const value = isGroup(raw) && Object.hasOwn(raw, key) ? raw[key] : undefined;
   return isGroup(value) ? value : {};
-}
-
-function isGroup(value: unknown): value is Raw {
-  return typeof value === "object" && value !== null && !Array.isArray(value);
 }
 
 function hasAny(group: Raw, ...keys: string[]): boolean {

@@ -3,10 +3,12 @@ import { modes as builtInModes, type Mode } from "../receiver/modes.ts";
 import { dishSchema, feedSchema } from "./antennaSchema.ts";
 import { climateSchema } from "./climateSchema.ts";
 import { coverSchema } from "./coverSchema.ts";
+import { distributionDefinitions } from "./distributionJson.ts";
 import { group, named, oneOf, text } from "./fields.ts";
 import { pathSchema } from "./pathSchema.ts";
 import { quantity, uncertain } from "./quantityField.ts";
-import type { Scenario } from "./types.ts";
+import { spreadSchema } from "./spreadSchema.ts";
+import type { Scenario, Uncertain } from "./types.ts";
 import { weatherSchema } from "./weatherSchema.ts";
 import { instead } from "./wording.ts";
 
@@ -34,7 +36,7 @@ const end = ({
   dish?: string | undefined;
   cover?: string | undefined;
   dish_cover?: string | undefined;
-  line_loss?: { value: number; sigma?: number | undefined } | undefined;
+  line_loss?: Uncertain | undefined;
 }) => ({ feed, dish, cover, dishCover, lineLossDb });
 
 const transmitter = group(
@@ -123,6 +125,7 @@ export const scenarioSchema = group(
     weather: named(weatherSchema, "the weathers").optional(),
     climate: climateSchema.optional(),
     decision: decision.optional(),
+    spread: spreadSchema.optional(),
   },
   "a scenario: title, frequency, transmitter, receiver, feeds, path and more",
 ).transform(
@@ -153,5 +156,5 @@ export const scenarioSchema = group(
 /** JSON Schema of the file as it is typed, for editors. */
 export function scenarioJsonSchema(): object {
   const schema = z.toJSONSchema(scenarioSchema, { io: "input", target: "draft-7", reused: "inline" });
-  return { title: "Oilskin scenario", ...schema };
+  return { title: "Oilskin scenario", ...schema, definitions: distributionDefinitions() };
 }

@@ -9,16 +9,24 @@ import type { Profile } from "../path/profile.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { TerrainGap } from "./terrain/types.ts";
 
+export type { Scatter };
+
 /**
  * A scenario after reading: every quantity in one canonical unit, named in the field.
  *
  * `loadScenario` makes it from YAML; a program may as well build one by hand.
  */
 
-/** A value that may carry the 1-sigma uncertainty that its user typed, in the unit of the value (dB for powers). */
+/**
+ * A value that may carry the 1-sigma uncertainty that its user typed, in the unit of the value (dB for powers).
+ *
+ * The budget takes `value` and `sigma` and no more: of a flat, exponential or mixed input mean and standard
+ * deviation, of a log-normal one the median and the standard deviation.
+ */
 export interface Uncertain {
   readonly value: number;
   readonly sigma?: number | undefined;
+  /** How it scatters, where the user named a distribution; otherwise `sigma` is that of a normal one. */
   readonly scatter?: Scatter | undefined;
 }
 
@@ -63,6 +71,7 @@ export interface Receiver extends End {
 
 export interface Feed {
   readonly returnLossDb: number;
+  /** The same with its spread, where the user typed one. */
   readonly returnLossSpread?: Uncertain | undefined;
   /** Phase of the feed's own reflection seen from outside, at the plane of its mouth [deg]; seldom known. */
   readonly phaseDeg?: number | undefined;
@@ -110,10 +119,11 @@ export interface CoverLayer {
   readonly material: string;
   readonly thicknessMm: number;
   readonly thicknessSigmaMm?: number | undefined;
-  readonly statedSpread?: boolean | undefined;
-  /** With the spread in which the material is published. */
+  /** With the spread in which the material is published, or with that of the user: see `statedSpread`. */
   readonly permittivity: Bounded;
   readonly lossTangent: Bounded;
+  /** True where the user typed a spread of permittivity, loss tangent or thickness: bounds are then 1 sigma. */
+  readonly statedSpread?: boolean | undefined;
 }
 
 export interface MeasuredCover {
@@ -207,6 +217,41 @@ export interface Decision {
   readonly confidence: number;
 }
 
+/**
+ * One standard deviation of what no field of the scenario states, for a study of the spread; undefined leaves it to
+ * the study. Shares are those of the decibels that an entry takes, 0.4 being 40 %.
+ */
+export interface SpreadSettings {
+  readonly feedReturnLossDb?: number | undefined;
+  readonly coverLossShare?: number | undefined;
+  readonly waterShare?: number | undefined;
+  /** One standard deviation multiplies or divides the rain rate by it; 1 is exact. */
+  readonly rainRateFactor?: number | undefined;
+  readonly rainLengthShare?: number | undefined;
+  readonly gasShare?: number | undefined;
+  readonly fogShare?: number | undefined;
+  readonly diffractionDb?: number | undefined;
+  readonly troposcatterDb?: number | undefined;
+  readonly rainScatterDb?: number | undefined;
+  readonly foliageDb?: number | undefined;
+  /** Loss by crossed or tilted polarization [dB]. */
+  readonly tiltLossDb?: Uncertain | undefined;
+  /** A slip of the operator or a dead switch: how likely it is, 0 to 1, and what it costs [dB]. */
+  readonly blunder?: { readonly chance: number; readonly lossDb: Uncertain } | undefined;
+  readonly correlation?: EndCorrelation | undefined;
+}
+
+/** How far what scatters at one end scatters alike at the other, -1 to 1. */
+export interface EndCorrelation {
+  readonly water?: number | undefined;
+  /** Loss and thickness of sheets cut from one batch. */
+  readonly cover?: number | undefined;
+  readonly aim?: number | undefined;
+  readonly gain?: number | undefined;
+  readonly returnLoss?: number | undefined;
+  readonly line?: number | undefined;
+}
+
 /** The two ends and what lies between; `budget/pathSettings.ts` stands in for what is not given. */
 export interface ScenarioPath {
   readonly from: Site;
@@ -264,6 +309,7 @@ export interface Scenario {
   readonly climate?: Climate | undefined;
   readonly spread?: SpreadSettings | undefined;
   readonly decision: Decision;
+  readonly spread?: SpreadSettings | undefined;
 }
 
 /** A fault or a doubt in a scenario file. Lines and columns count from 1. */

@@ -24,6 +24,11 @@ export function didYouMean(written: unknown, words: Iterable<string>): string {
   return meant === undefined ? "" : ` (did you mean ${meant}?)`;
 }
 
+/** A key that should not be there, beside those that may. */
+export function unknownKey(key: string, known: readonly string[]): string {
+  return `unknown key ${shown(key)}, expected ${listed(known)}${didYouMean(key, known)}`;
+}
+
 /** Names, as many as a message can hold. */
 export function listed(names: readonly string[]): string {
   const more = names.length - MOST_NAMES;
