@@ -184,16 +184,14 @@ async function readLognormal(raw: Raw, path: FaultPath, desk: Desk): Promise<Unc
 }
 
 async function readFlat(raw: unknown, path: FaultPath, desk: Desk): Promise<Uncertain | undefined> {
-  const expected = "the low and the high end, such as";
-  const example = `[${exampleOf(desk.kind, 1)}, ${exampleOf(desk.kind, 2)}]`;
-  if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list: ${expected} ${example}`), path);
-  if (raw.length !== 2) return desk.fault(`a list of ${raw.length}, expected ${expected} ${example}`, path);
+  const expected = "a low end and then a higher one";
+  if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list of two, ${expected}`), path);
+  if (raw.length !== 2) return desk.fault(`a list of ${raw.length}, expected two, ${expected}`, path);
   const low = await readOne(raw[0], [...path, 0], desk);
   const high = await readOne(raw[1], [...path, 1], desk);
   if (low === undefined || high === undefined) return undefined;
   if (low < high) return scattered(low, { kind: "flat", low, high });
-  const what = low === high ? "two equal ends" : "the high end first";
-  return desk.fault(`${what}, expected the low end and then a higher one, such as ${example}`, path);
+  return desk.fault(`${low === high ? "two equal ends" : "the high end first"}, expected ${expected}`, path);
 }
 
 async function readMixture(
@@ -202,11 +200,11 @@ async function readMixture(
   desk: Desk,
   depth: number,
 ): Promise<Uncertain | undefined> {
-  const expected = `parts, such as { share: 96 %, of: ${exampleOf(desk.kind, 1)} }`;
-  if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list of ${expected}`), path);
-  if (raw.length === 0) return desk.fault(`an empty list, expected ${expected}`, path);
+  const expected = "each with its share and what it is of: [{ share: 4 %, of: ... }]";
+  if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list of parts, ${expected}`), path);
+  if (raw.length === 0) return desk.fault(`an empty list, expected one part or more, ${expected}`, path);
   if (depth >= DEEPEST_MIXTURE) {
-    return desk.fault(`mixtures within mixtures, expected at most ${DEEPEST_MIXTURE}`, path);
+    return desk.fault(`mixtures within mixtures, expected at most ${DEEPEST_MIXTURE} deep`, path);
   }
   desk.parts += raw.length;
   if (desk.parts > MOST_PARTS) return desk.fault(`more than ${MOST_PARTS} parts, expected fewer`, path);
@@ -259,6 +257,9 @@ async function readNested(
 
 /** One number in its canonical unit, without a spread. */
 async function readOne(raw: unknown, path: FaultPath, desk: Desk): Promise<number | undefined> {
+  if (raw === undefined) {
+    return desk.fault(instead(raw, `${desk.field.about}: ${kinds[desk.kind].expected}`), path);
+  }
   const read = await judgedQuantity(raw, desk.kind, desk.field, false);
   return typeof read === "string" ? desk.fault(read, path) : read.value;
 }
@@ -279,8 +280,4 @@ async function readPositive(
 function scattered(value: number, scatter: Scatter): Uncertain {
   const { mean, sigma } = momentsOf(value, scatter);
   return { value: scatter.kind === "lognormal" ? value : mean, sigma, scatter };
-}
-
-function exampleOf(kind: QuantityKind, number: number): string {
-  return `${number} ${kinds[kind].usual[0]}`.trim();
 }

@@ -3,7 +3,7 @@ import fc from "fast-check";
 import { describe, expect, it, vi } from "vitest";
 import { loadScenario } from "../../src/scenario/load.ts";
 import type { Diagnostic } from "../../src/scenario/types.ts";
-import { faultsOf, sample, scenarioOf, spoiled } from "./sample.ts";
+import { faultsOf, sample, scenarioOf, spoiled, withoutMark } from "./sample.ts";
 
 /** Counts how often the arithmetic, and with it mathjs, is taken into memory. */
 const arithmetic = vi.hoisted(() => ({ loaded: 0 }));
@@ -97,14 +97,6 @@ describe("a sound scenario", () => {
     expect(polarization).toBe("horizontal");
   });
 });
-
-/** Where the fault is expected to be told; taken out before the text is read. */
-const MARK = "¶";
-
-function withoutMark(marked: string): { text: string; line: number; column: number } {
-  const before = marked.slice(0, marked.indexOf(MARK)).split("\n");
-  return { text: marked.replace(MARK, ""), line: before.length, column: before.at(-1)!.length + 1 };
-}
 
 /** What is changed in the sample, with the mark; then the code and words of the one fault. */
 type Row = [what: string, from: string, to: string, code: string, ...words: string[]];

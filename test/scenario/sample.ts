@@ -33,6 +33,14 @@ export function spoiled(...changes: readonly (readonly [from: string, to: string
   }, sample);
 }
 
+/** Where the fault is expected to be told; taken out before the text is read. */
+const MARK = "¶";
+
+export function withoutMark(marked: string): { text: string; line: number; column: number } {
+  const before = marked.slice(0, marked.indexOf(MARK)).split("\n");
+  return { text: marked.replace(MARK, ""), line: before.length, column: before.at(-1)!.length + 1 };
+}
+
 export async function faultsOf(pathOrText: string): Promise<readonly Diagnostic[]> {
   const { diagnostics } = await loadScenario(pathOrText);
   if (!diagnostics) throw new Error("the scenario was read, where faults were expected");
