@@ -19,6 +19,7 @@ interface Part {
   readonly additionalProperties?: false | Part;
   readonly items?: Part;
   readonly anyOf?: Part[];
+  readonly definitions?: Record<string, Part>;
 }
 
 /** Every part of the schema with its path; names of the user's own are written `*`, places in a list `[]`. */
@@ -28,6 +29,8 @@ function* partsOf(part: Part, path = ""): Generator<[path: string, part: Part]> 
   if (part.additionalProperties) yield* partsOf(part.additionalProperties, `${path}.*`);
   if (part.items) yield* partsOf(part.items, `${path}[]`);
   for (const choice of part.anyOf ?? []) yield* partsOf(choice, path);
+  for (const [name, child] of Object.entries(part.definitions ?? {}))
+    yield* partsOf(child, `${path}#${name}`);
 }
 
 function at(path: string): Part {
@@ -69,6 +72,55 @@ describe("the JSON Schema of the scenario file", () => {
     const raw = demo();
     expect(validate(raw)).toBe(true);
     spoil(raw);
+    expect(validate(raw)).toBe(false);
+  });
+
+  it.each<[what: string, power: unknown]>([
+    ["a spread", "3 W +/- 0.5 dB"],
+    ["a normal one", { normal: "3 W", sigma: "0.5 dB" }],
+    ["a log-normal one", { lognormal: "3 W", factor: 1.6 }],
+    ["a flat one", { flat: ["10 mW", "100 mW"] }],
+    ["an exponential one", { exponential: "3 W" }],
+    [
+      "a mixture",
+      {
+        mixture: [
+          { share: "4 %", of: "3 W" },
+          { share: "96 %", of: { flat: ["1 W", "2 W"] } },
+        ],
+      },
+    ],
+  ])("takes a quantity as %s", (_, power) => {
+    const raw = demo();
+    raw.transmitter.power = power;
+    expect(validate(raw), JSON.stringify(validate.errors)).toBe(true);
+  });
+
+  it.each<[what: string, power: unknown]>([
+    ["a bare number", 3],
+    ["an empty group", {}],
+    ["a sigma alone", { sigma: "0.5 dB" }],
+    ["a mean alone", { normal: "3 W" }],
+    ["a mean that is a bare number", { normal: 3, sigma: "0.5 dB" }],
+    ["a key that is none", { flat: ["1 W", "2 W"], colour: "red" }],
+    ["two distributions", { normal: "3 W", sigma: "1 dB", flat: ["1 W", "2 W"] }],
+    ["three ends", { flat: ["1 W", "2 W", "3 W"] }],
+    ["a mixture without parts", { mixture: [] }],
+    ["a part without a share", { mixture: [{ of: "1 W" }] }],
+    ["a faulty part", { mixture: [{ share: "100 %", of: { flat: ["1 W"] } }] }],
+  ])("refuses a quantity as %s", (_, power) => {
+    const raw = demo();
+    raw.transmitter.power = power;
+    expect(validate(raw)).toBe(false);
+  });
+
+  it("takes numbers in the distribution of a number, and a normal thickness alone", () => {
+    const raw = demo();
+    const [layer] = raw.covers.film.layers;
+    layer.permittivity = { mixture: [{ share: "100 %", of: { normal: 2.1, sigma: 0.05 } }] };
+    layer.thickness = { normal: "5 mil", sigma: "0.3 mil" };
+    expect(validate(raw), JSON.stringify(validate.errors)).toBe(true);
+    layer.thickness = { flat: ["4 mil", "6 mil"] };
     expect(validate(raw)).toBe(false);
   });
 
