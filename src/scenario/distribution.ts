@@ -1,7 +1,7 @@
 import { momentsOf, type Scatter, type ScatterPart } from "../numeric/scatter.ts";
 import { type FieldOptions, judgedQuantity } from "./judgedQuantity.ts";
 import type { FaultPath } from "./positions.ts";
-import { kinds, type Quantity, type QuantityKind } from "./quantity.ts";
+import { kinds, type QuantityKind } from "./quantity.ts";
 import { isGroup, type Raw } from "./raw.ts";
 import type { Uncertain } from "./types.ts";
 import { didYouMean, instead, unknownKey } from "./wording.ts";
@@ -61,22 +61,15 @@ function kindOfSigma(kind: QuantityKind): QuantityKind {
   return kind === "powerDbm" || kind === "gainDbi" ? "levelDb" : kind;
 }
 
-/** Reads what stands in an uncertain field; a promise where it is a group or holds arithmetic. */
-export function readScattering(
-  input: unknown,
-  kind: QuantityKind,
-  field: ScatteringField,
-): Scattering | Promise<Scattering> {
+/** Reads what stands in an uncertain field. */
+export function readScattering(input: unknown, kind: QuantityKind, field: ScatteringField): Scattering {
   if (isGroup(input)) return readGroup(input, kind, field);
-  const conclude = (read: Quantity | string): Scattering =>
-    typeof read === "string"
-      ? { faults: [{ message: read, path: [] }] }
-      : { read: { value: read.value, sigma: read.sigma }, faults: [] };
   const read = judgedQuantity(input, kind, field, true);
-  return read instanceof Promise ? read.then(conclude) : conclude(read);
+  if (typeof read === "string") return { faults: [{ message: read, path: [] }] };
+  return { read: { value: read.value, sigma: read.sigma }, faults: [] };
 }
 
-async function readGroup(raw: Raw, kind: QuantityKind, field: ScatteringField): Promise<Scattering> {
+function readGroup(raw: Raw, kind: QuantityKind, field: ScatteringField): Scattering {
   const faults: ScatteringFault[] = [];
   const desk: Desk = {
     kind,
@@ -87,7 +80,7 @@ async function readGroup(raw: Raw, kind: QuantityKind, field: ScatteringField): 
       return undefined;
     },
   };
-  const read = await readForm(raw, [], desk, 0);
+  const read = readForm(raw, [], desk, 0);
   return faults.length > 0 ? { faults } : { read, faults };
 }
 
@@ -100,12 +93,7 @@ interface Desk {
   parts: number;
 }
 
-async function readForm(
-  raw: Raw,
-  path: FaultPath,
-  desk: Desk,
-  depth: number,
-): Promise<Uncertain | undefined> {
+function readForm(raw: Raw, path: FaultPath, desk: Desk, depth: number): Uncertain | undefined {
   const form = formOf(raw, path, desk);
   if (form === undefined) return undefined;
   const { kind, field, fault } = desk;
@@ -124,7 +112,7 @@ async function readForm(
     case "flat":
       return readFlat(raw["flat"], [...path, "flat"], desk);
     case "exponential": {
-      const mean = await readPositive(raw, "exponential", path, desk);
+      const mean = readPositive(raw, "exponential", path, desk);
       return mean === undefined ? undefined : scattered(mean, { kind: "exponential", mean });
     }
     case "mixture":
@@ -159,11 +147,11 @@ function formOf(raw: Raw, path: FaultPath, { kind, fault }: Desk): Form | undefi
   return form;
 }
 
-async function readNormal(raw: Raw, path: FaultPath, desk: Desk): Promise<Uncertain | undefined> {
+function readNormal(raw: Raw, path: FaultPath, desk: Desk): Uncertain | undefined {
   const { kind, field } = desk;
   const [low, high] = field.range;
-  const value = await readOne(raw["normal"], [...path, "normal"], desk);
-  const sigma = await readOne(raw["sigma"], [...path, "sigma"], {
+  const value = readOne(raw["normal"], [...path, "normal"], desk);
+  const sigma = readOne(raw["sigma"], [...path, "sigma"], {
     ...desk,
     kind: kindOfSigma(kind),
     field: { about: "one standard deviation", range: [0, high - low] },
@@ -172,9 +160,9 @@ async function readNormal(raw: Raw, path: FaultPath, desk: Desk): Promise<Uncert
   return scattered(value, { kind: "normal", sigma });
 }
 
-async function readLognormal(raw: Raw, path: FaultPath, desk: Desk): Promise<Uncertain | undefined> {
-  const median = await readPositive(raw, "lognormal", path, desk);
-  const factor = await readOne(raw["factor"], [...path, "factor"], {
+function readLognormal(raw: Raw, path: FaultPath, desk: Desk): Uncertain | undefined {
+  const median = readPositive(raw, "lognormal", path, desk);
+  const factor = readOne(raw["factor"], [...path, "factor"], {
     ...desk,
     kind: "ratio",
     field: { about: "a factor by which one standard deviation multiplies", range: [1.001, LARGEST_FACTOR] },
@@ -183,23 +171,18 @@ async function readLognormal(raw: Raw, path: FaultPath, desk: Desk): Promise<Unc
   return scattered(median, { kind: "lognormal", factor });
 }
 
-async function readFlat(raw: unknown, path: FaultPath, desk: Desk): Promise<Uncertain | undefined> {
+function readFlat(raw: unknown, path: FaultPath, desk: Desk): Uncertain | undefined {
   const expected = "a low end and then a higher one";
   if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list of two, ${expected}`), path);
   if (raw.length !== 2) return desk.fault(`a list of ${raw.length}, expected two, ${expected}`, path);
-  const low = await readOne(raw[0], [...path, 0], desk);
-  const high = await readOne(raw[1], [...path, 1], desk);
+  const low = readOne(raw[0], [...path, 0], desk);
+  const high = readOne(raw[1], [...path, 1], desk);
   if (low === undefined || high === undefined) return undefined;
   if (low < high) return scattered(low, { kind: "flat", low, high });
   return desk.fault(`${low === high ? "two equal ends" : "the high end first"}, expected ${expected}`, path);
 }
 
-async function readMixture(
-  raw: unknown,
-  path: FaultPath,
-  desk: Desk,
-  depth: number,
-): Promise<Uncertain | undefined> {
+function readMixture(raw: unknown, path: FaultPath, desk: Desk, depth: number): Uncertain | undefined {
   const expected = "each with its share and what it is of: [{ share: 4 %, of: ... }]";
   if (!Array.isArray(raw)) return desk.fault(instead(raw, `a list of parts, ${expected}`), path);
   if (raw.length === 0) return desk.fault(`an empty list, expected one part or more, ${expected}`, path);
@@ -209,7 +192,7 @@ async function readMixture(
   desk.parts += raw.length;
   if (desk.parts > MOST_PARTS) return desk.fault(`more than ${MOST_PARTS} parts, expected fewer`, path);
   const parts: (ScatterPart | undefined)[] = [];
-  for (const [i, part] of raw.entries()) parts.push(await readPart(part, [...path, i], desk, depth));
+  for (const [i, part] of raw.entries()) parts.push(readPart(part, [...path, i], desk, depth));
   const whole = parts.filter((part) => part !== undefined);
   if (whole.length < raw.length) return undefined;
   const percent = whole.reduce((sum, { share }) => sum + share, 0);
@@ -221,57 +204,47 @@ async function readMixture(
 }
 
 /** One part of a mixture, its share still in percent. */
-async function readPart(
-  raw: unknown,
-  path: FaultPath,
-  desk: Desk,
-  depth: number,
-): Promise<ScatterPart | undefined> {
+function readPart(raw: unknown, path: FaultPath, desk: Desk, depth: number): ScatterPart | undefined {
   const keys = ["share", "of"];
   if (!isGroup(raw)) return desk.fault(instead(raw, "a part of the mixture: share and of"), path);
   for (const key of Object.keys(raw).filter((key) => !keys.includes(key))) {
     desk.fault(unknownKey(key, keys), [...path, key], "unknown_key");
   }
-  const share = await readOne(raw["share"], [...path, "share"], {
+  const share = readOne(raw["share"], [...path, "share"], {
     ...desk,
     kind: "percent",
     field: { about: "a share of the mixture", range: [0, 100] },
   });
-  const of = await readNested(raw["of"], [...path, "of"], desk, depth);
+  const of = readNested(raw["of"], [...path, "of"], desk, depth);
   if (share === undefined || of === undefined) return undefined;
   const { value, sigma } = of;
   const plain: Scatter | undefined = sigma === undefined ? undefined : { kind: "normal", sigma };
   return { share, value, scatter: of.scatter ?? plain };
 }
 
-async function readNested(
-  raw: unknown,
-  path: FaultPath,
-  desk: Desk,
-  depth: number,
-): Promise<Uncertain | undefined> {
+function readNested(raw: unknown, path: FaultPath, desk: Desk, depth: number): Uncertain | undefined {
   if (isGroup(raw)) return readForm(raw, path, desk, depth + 1);
-  const read = await judgedQuantity(raw, desk.kind, desk.field, true);
+  const read = judgedQuantity(raw, desk.kind, desk.field, true);
   return typeof read === "string" ? desk.fault(read, path) : { value: read.value, sigma: read.sigma };
 }
 
 /** One number in its canonical unit, without a spread. */
-async function readOne(raw: unknown, path: FaultPath, desk: Desk): Promise<number | undefined> {
+function readOne(raw: unknown, path: FaultPath, desk: Desk): number | undefined {
   if (raw === undefined) {
     return desk.fault(instead(raw, `${desk.field.about}: ${kinds[desk.kind].expected}`), path);
   }
-  const read = await judgedQuantity(raw, desk.kind, desk.field, false);
+  const read = judgedQuantity(raw, desk.kind, desk.field, false);
   return typeof read === "string" ? desk.fault(read, path) : read.value;
 }
 
-async function readPositive(
+function readPositive(
   raw: Raw,
   form: "lognormal" | "exponential",
   path: FaultPath,
   desk: Desk,
-): Promise<number | undefined> {
+): number | undefined {
   const at = [...path, form];
-  const value = await readOne(raw[form], at, desk);
+  const value = readOne(raw[form], at, desk);
   if (value === undefined || value > 0) return value;
   return desk.fault(instead(raw[form], `${desk.field.about} above 0 for ${form}`), at);
 }

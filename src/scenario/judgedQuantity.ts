@@ -1,11 +1,4 @@
-import {
-  describeRefusal,
-  kinds,
-  type Quantity,
-  type QuantityKind,
-  type Reading,
-  readQuantity,
-} from "./quantity.ts";
+import { describeRefusal, kinds, type Quantity, type QuantityKind, readQuantity } from "./quantity.ts";
 import { rangeHint } from "./rangeHints.ts";
 import { instead } from "./wording.ts";
 
@@ -17,7 +10,21 @@ export interface FieldOptions {
 }
 
 /**
- * A quantity that makes sense in its field, or what is wrong with it; a promise only where arithmetic is in it.
+ * What is said of a quantity that only the arithmetic can read, while that is not loaded: mathjs is slow to start,
+ * and few files need it. `yamlFile.ts` then loads it and judges the file again. A schema that waited here for the
+ * module would put what it waited for behind its neighbours, and the weathers of a file out of their order.
+ */
+export const ARITHMETIC_WANTED = "arithmetic is wanted";
+
+let arithmetic: typeof import("#math-units") | undefined;
+
+/** Takes arithmetic and rare units into memory. */
+export async function loadArithmetic(): Promise<void> {
+  arithmetic = await import("#math-units");
+}
+
+/**
+ * A quantity that makes sense in its field, or what is wrong with it.
  *
  * @param spread  true where `3 W +/- 0.5 dB` is welcome
  */
@@ -26,16 +33,14 @@ export function judgedQuantity(
   kind: QuantityKind,
   options: FieldOptions,
   spread: boolean,
-): Quantity | string | Promise<Quantity | string> {
+): Quantity | string {
   if (typeof input !== "string") return instead(input, kinds[kind].expected);
-  const judge = (reading: Reading) => {
-    if (!reading.ok) return describeRefusal(reading);
-    return outOfRange(reading, kind, options) ?? reading;
-  };
-  const reading = readQuantity(input, kind, { spread });
-  if (reading.ok || !reading.libraryMayRead) return judge(reading);
-  // mathjs is slow to start: it is loaded for arithmetic and rare units alone.
-  return import("#math-units").then(({ readArithmetic }) => judge(readArithmetic(input, kind)));
+  let reading = readQuantity(input, kind, { spread });
+  if (!reading.ok && reading.libraryMayRead) {
+    if (arithmetic === undefined) return ARITHMETIC_WANTED;
+    reading = arithmetic.readArithmetic(input, kind);
+  }
+  return reading.ok ? (outOfRange(reading, kind, options) ?? reading) : describeRefusal(reading);
 }
 
 function outOfRange(read: Quantity, kind: QuantityKind, { about, range }: FieldOptions): string | undefined {

@@ -1,10 +1,9 @@
 import * as z from "zod";
-import { readScattering, type Scattering, type ScatteringField } from "./distribution.ts";
+import { readScattering, type ScatteringField } from "./distribution.ts";
 import { definedAs } from "./distributionJson.ts";
 import { described } from "./fields.ts";
 import { type FieldOptions, judgedQuantity } from "./judgedQuantity.ts";
-import { kinds, type Quantity, type QuantityKind } from "./quantity.ts";
-import type { Uncertain } from "./types.ts";
+import { kinds, type QuantityKind } from "./quantity.ts";
 import { instead } from "./wording.ts";
 
 /** A field that holds a quantity with a unit; its value is the number in the canonical unit. */
@@ -15,13 +14,10 @@ export function quantity(kind: QuantityKind, options: FieldOptions) {
     ...(isBare(kind) && { type: ["string", "number"] }),
   });
   return typed.transform((input, context) => {
-    const conclude = (read: Quantity | string): number => {
-      if (typeof read !== "string") return read.value;
-      context.addIssue({ code: "custom", message: read, input });
-      return z.NEVER;
-    };
     const read = judgedQuantity(input, kind, options, false);
-    return read instanceof Promise ? read.then(conclude) : conclude(read);
+    if (typeof read !== "string") return read.value;
+    context.addIssue({ code: "custom", message: read, input });
+    return z.NEVER;
   });
 }
 
@@ -38,20 +34,17 @@ export function uncertain(kind: QuantityKind, options: ScatteringField) {
     anyOf: [{ type: isBare(kind) ? ["string", "number"] : "string" }, definedAs(definition)],
   });
   return typed.transform((input, context) => {
-    const conclude = ({ read, faults }: Scattering): Uncertain => {
-      for (const { message, path, code } of faults) {
-        context.addIssue({
-          code: "custom",
-          message,
-          path: [...path],
-          input,
-          ...(code && { params: { code } }),
-        });
-      }
-      return read ?? z.NEVER;
-    };
-    const reading = readScattering(input, kind, options);
-    return reading instanceof Promise ? reading.then(conclude) : conclude(reading);
+    const { read, faults } = readScattering(input, kind, options);
+    for (const { message, path, code } of faults) {
+      context.addIssue({
+        code: "custom",
+        message,
+        path: [...path],
+        input,
+        ...(code && { params: { code } }),
+      });
+    }
+    return read ?? z.NEVER;
   });
 }
 

@@ -3,6 +3,7 @@ import { isAbsolute, join } from "node:path";
 import type * as z from "zod";
 import { readDocument } from "./document.ts";
 import { type Fault, faultsOf } from "./issues.ts";
+import { ARITHMETIC_WANTED, loadArithmetic } from "./judgedQuantity.ts";
 import type { Places } from "./positions.ts";
 import type { Diagnostic } from "./types.ts";
 import { visible } from "./wording.ts";
@@ -81,7 +82,11 @@ export async function judgeYaml<T>(text: string, form: YamlForm<T>): Promise<Jud
     return { diagnostics: [atStart("empty", `the file is empty; ${starter}`)] };
   }
   const { raw, faults: more } = await resolve(content.raw);
-  const parsed = await schema.safeParseAsync(raw);
+  let parsed = schema.safeParse(raw);
+  if (parsed.error?.issues.some(({ message }) => message === ARITHMETIC_WANTED)) {
+    await loadArithmetic();
+    parsed = schema.safeParse(raw);
+  }
   const issues = parsed.success ? [] : parsed.error.issues.flatMap((issue) => faultsOf(issue, schema));
   const found = [...issues, ...more];
   if (parsed.success && faults.length + found.length === 0) return { value: parsed.data, places };

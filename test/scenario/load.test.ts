@@ -39,6 +39,15 @@ describe("a sound scenario", () => {
     expect(arithmetic.loaded).toBe(1);
   });
 
+  it("keeps weathers in their order, whatever has arithmetic or a distribution in it", async () => {
+    for (const rain of ["2 * 8 mm/h", "{ normal: 2 * 8 mm/h, sigma: 3 mm/h }"]) {
+      const { weather } = await scenarioOf(
+        spoiled(["  dry: {}\n", ""], ["rain: 16 mm/h", `rain: ${rain}`], ["decision", "  dry: {}\ndecision"]),
+      );
+      expect(Object.keys(weather)).toEqual(["shower", "dry"]);
+    }
+  });
+
   it.each<[what: string, text: string]>([
     ["line ends of Windows", sample.replaceAll("\n", "\r\n")],
     ["line ends of old", sample.replaceAll("\n", "\r")],
