@@ -39,6 +39,7 @@ function keysAt(path: FaultPath, schema: z.core.$ZodType): string[] {
     const { def } = node._zod;
     if (def.type === "pipe") into(def.in);
     else if (def.type === "optional") into(def.innerType);
+    else if (def.type === "lazy") into(def.getter());
     else if (def.type === "object" && rest.length === 0) return Object.keys(def.shape);
     else if (def.type === "object") into(def.shape[String(rest.shift())]!);
     else {

@@ -56,6 +56,9 @@ export function fromFolder(folder: string, path: string): string {
   return isAbsolute(path) ? path : join(folder, path);
 }
 
+/** A reader compiled for each group pays where many values come, not for one file. */
+const ONCE = { jitless: true };
+
 export interface YamlForm<T> {
   readonly schema: z.ZodType<T>;
   /** What the file should be, such as "scenario". */
@@ -82,10 +85,10 @@ export async function judgeYaml<T>(text: string, form: YamlForm<T>): Promise<Jud
     return { diagnostics: [atStart("empty", `the file is empty; ${starter}`)] };
   }
   const { raw, faults: more } = await resolve(content.raw);
-  let parsed = schema.safeParse(raw);
+  let parsed = schema.safeParse(raw, ONCE);
   if (parsed.error?.issues.some(({ message }) => message === ARITHMETIC_WANTED)) {
     await loadArithmetic();
-    parsed = schema.safeParse(raw);
+    parsed = schema.safeParse(raw, ONCE);
   }
   const issues = parsed.success ? [] : parsed.error.issues.flatMap((issue) => faultsOf(issue, schema));
   const found = [...issues, ...more];
