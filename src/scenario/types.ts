@@ -185,32 +185,6 @@ export interface Snow {
   readonly wetnessPercent: number;
 }
 
-export interface SpreadSettings {
-  readonly feedReturnLossDb?: number | undefined;
-  readonly coverLossShare?: number | undefined;
-  readonly waterShare?: number | undefined;
-  readonly rainRateFactor?: number | undefined;
-  readonly rainLengthShare?: number | undefined;
-  readonly gasShare?: number | undefined;
-  readonly fogShare?: number | undefined;
-  readonly diffractionDb?: number | undefined;
-  readonly troposcatterDb?: number | undefined;
-  readonly rainScatterDb?: number | undefined;
-  readonly foliageDb?: number | undefined;
-  readonly tiltLossDb?: Uncertain | undefined;
-  readonly blunder?: { readonly chance: number; readonly lossDb: Uncertain } | undefined;
-  readonly correlation?:
-    | {
-        readonly water?: number | undefined;
-        readonly cover?: number | undefined;
-        readonly aim?: number | undefined;
-        readonly gain?: number | undefined;
-        readonly returnLoss?: number | undefined;
-        readonly line?: number | undefined;
-      }
-    | undefined;
-}
-
 export interface Decision {
   readonly reserveDb: number;
   /** 0 to 1. */
@@ -307,7 +281,6 @@ export interface Scenario {
   readonly path: ScenarioPath;
   readonly weather: Readonly<Record<string, Weather>>;
   readonly climate?: Climate | undefined;
-  readonly spread?: SpreadSettings | undefined;
   readonly decision: Decision;
   readonly spread?: SpreadSettings | undefined;
 }
