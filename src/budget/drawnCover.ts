@@ -61,11 +61,9 @@ export function drawnCover(
     const tie = part === "water" ? correlation.water : oneBatch ? correlation.cover : 0;
     return other === undefined || tie === 0 ? own : tied(sketch, other[part], own, tie);
   };
-  const hasStack = mouths.some(
-    ({ parts: { scatter } }) => scatter.batchLowDb !== 0 || scatter.batchHighDb !== 0,
-  );
+  const hasStack = mouths.some(({ parts: { scatter } }) => scatter.stack !== undefined);
   return {
-    stack: hasStack ? stackOf() : none.fill(0.5),
+    stack: hasStack ? stackOf() : new Float64Array(sketch.block).fill(0.5),
     heat: normals(
       "heat",
       ({ coverHeatDb, scatter }) => coverHeatDb > 0 && scatter.heatShare > 0,

@@ -153,7 +153,7 @@ function tiltLevel({ spread }: Scenario, { tiltLossDb }: Doubts): Level[] {
     scatter: tiltLossDb.scatter ?? { kind: "normal", sigma: tiltLossDb.sigma ?? 0 },
     unit: "dB",
     stated: spread?.tiltLossDb !== undefined,
-    still: 1e-9,
+    still: 1e-12,
   };
   return [{ cause, nominal: 0, sign: -1, least: 0 }];
 }

@@ -35,8 +35,8 @@ export function drawnMouth(
 ): DrawnMouth {
   const mouth = nodes[(nodes.length - 1) / 2]!;
   const { coverMismatchDb, coverHeatDb, beat: nominalBeat, scatter } = mouth.parts;
-  const { batchLowDb, batchHighDb, batchIsSigma, planeWaveDb, readingDb } = scatter;
-  const hasStack = batchLowDb !== 0 || batchHighDb !== 0;
+  const { stackIsSigma, planeWaveDb, readingDb } = scatter;
+  const [low, high] = [scatter.stack?.("low"), scatter.stack?.("high")];
   const waters = nodes.map(({ parts }) => parts);
   const waterMismatch = Float64Array.from(waters, ({ waterMismatchDb }) => waterMismatchDb);
   const waterHeat = Float64Array.from(waters, ({ waterHeatDb }) => waterHeatDb);
@@ -53,9 +53,11 @@ export function drawnMouth(
     for (let i = 0; i < mismatchDb.length; i++) {
       let mismatch = feed.mismatchDb[i]! + coverMismatchDb;
       let heat = hasHeat ? coverHeatDb * Math.exp(heatSpread * drawn.heat[i]!) : coverHeatDb;
-      if (hasStack) {
-        const place = batchIsSigma ? normalDeviate(drawn.stack[i]!) : 2 * drawn.stack[i]! - 1;
-        mismatch += place < 0 ? -place * batchLowDb : place * batchHighDb;
+      if (low !== undefined && high !== undefined) {
+        const place = stackIsSigma ? normalDeviate(drawn.stack[i]!) : 2 * drawn.stack[i]! - 1;
+        const shift = place < 0 ? low : high;
+        mismatch += Math.abs(place) * shift.mismatchDb;
+        heat += Math.abs(place) * shift.heatDb;
       }
       mismatch += planeWaveDb * drawn.planeWave[i]! + readingDb * drawn.reading[i]!;
       if (isWet) {

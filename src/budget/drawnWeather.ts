@@ -39,7 +39,7 @@ export function drawnWeather(sketch: Sketch, link: Link, ends: EndsInUse, name: 
   const entryDb = (id: string) => -(prepared.entries.find((entry) => entry.id === id)?.db ?? 0);
   const [gasDb, fogDb] = [entryDb("path.gas"), entryDb("path.fog")];
   const rainDb = prepared.rainLossDb;
-  const rainLoss = rain && rainDb > 0 ? rainLossOf(sketch, link, name, rain) : undefined;
+  const rainLoss = rainDb > 0 ? rainLossOf(sketch, link, name, rain) : undefined;
   const fog =
     fogDb > 0 ? normalsOf(sketch, shareCause("path.fog", "air", "fog", doubts.fogShare)) : undefined;
   const gas = gasDb > 0 && doubts.gasShare > 0 ? normalsOf(sketch, gasCause(doubts.gasShare)) : undefined;
@@ -123,13 +123,10 @@ function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain | undefi
 }
 
 /** Rain on the path [dB]: by its rate, whose loss is nearly a power of it, and by the length of path in it. */
-function rainLossOf(
-  sketch: Sketch,
-  { doubts, scenario }: Link,
-  name: string,
-  { grid, node, share }: DrawnRain,
-): Float64Array {
-  const logs = Float64Array.from(grid.links, ({ weathers }) =>
+function rainLossOf(sketch: Sketch, link: Link, name: string, rain: DrawnRain | undefined): Float64Array {
+  const { rainLengthShare } = link.doubts;
+  const atNodes = rain?.grid.links ?? [link];
+  const logs = Float64Array.from(atNodes, ({ weathers }) =>
     Math.log(Math.max(1e-12, weathers[name]!.rainLossDb)),
   );
   const lengths = normalsOf(sketch, {
@@ -137,16 +134,19 @@ function rainLossOf(
     matter: "rain",
     end: undefined,
     label: "length of path in the rain",
-    scatter: { kind: "normal", sigma: doubts.rainLengthShare },
+    scatter: { kind: "normal", sigma: rainLengthShare },
     unit: "share",
-    stated: scenario.spread?.rainLengthShare !== undefined,
+    stated: link.scenario.spread?.rainLengthShare !== undefined,
     still: 0.5,
   });
   return column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      const lower = logs[node[i]!]!;
-      const loss = Math.exp(lower + share[i]! * (logs[node[i]! + 1]! - lower));
-      out[i] = loss * Math.max(0, 1 + doubts.rainLengthShare * lengths[i]!);
+      let log = logs[0]!;
+      if (rain !== undefined) {
+        log = logs[rain.node[i]!]!;
+        log += rain.share[i]! * (logs[rain.node[i]! + 1]! - log);
+      }
+      out[i] = Math.exp(log) * Math.max(0, 1 + rainLengthShare * lengths[i]!);
     }
   });
 }

@@ -10,15 +10,14 @@ import { BENCH_REPEATABILITY_DB } from "../readings/verdict.ts";
 import type { Cover, CoverLayer, Feed, Uncertain } from "../scenario/types.ts";
 import type { Doubts } from "./doubts.ts";
 import { cascade, type Mouthpiece, mouthWidthMm, sheetBefore } from "./mouthpiece.ts";
-import type { CoverScatter, Warning } from "./types.ts";
+import type { CoverScatter, StackShift, Warning } from "./types.ts";
 
 /** Where a change of return loss stops that asks for more than the feed has: it was read on a better feed. */
 const LEAST_RETURN_LOSS_DB = 0.1;
 
 export const NO_SCATTER: CoverScatter = {
-  batchLowDb: 0,
-  batchHighDb: 0,
-  batchIsSigma: false,
+  stack: undefined,
+  stackIsSigma: false,
   heatShare: 0,
   planeWaveDb: 0,
   readingDb: 0,
@@ -74,9 +73,8 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
       planeWaveSigmaDb,
     ),
     scatter: {
-      batchLowDb: least.mismatchLossDb.nominal - covered.mismatchLossDb.nominal,
-      batchHighDb: most.mismatchLossDb.nominal - covered.mismatchLossDb.nominal,
-      batchIsSigma: cover.layers.some(({ statedSpread }) => statedSpread),
+      stack: hasStackSpread(cover) ? (end) => stackShift(mouth, covered, end) : undefined,
+      stackIsSigma: cover.layers.some(({ statedSpread }) => statedSpread),
       heatShare: doubts.coverLossShare,
       planeWaveDb: planeWaveSigmaDb,
       readingDb: 0,
@@ -86,6 +84,27 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
     covered,
     source: "plane wave through the layers, Born & Wolf 1.6",
     warnings: layerWarnings(mouth, near, where),
+  };
+}
+
+function hasStackSpread({ layers }: Cover): boolean {
+  return layers.some(
+    ({ permittivity: { low, high }, thicknessSigmaMm = 0 }) => low !== high || thicknessSigmaMm > 0,
+  );
+}
+
+/** Loss tangents are left as they are: what they scatter by is drawn as a share of the heat. */
+function stackShift(mouth: Mouthpiece, nominal: CoveredFeed, end: "low" | "high"): StackShift {
+  const layers = mouth.cover.layers.map((layer) => ({
+    ...layerAt(layer, end),
+    lossTangent: layer.lossTangent.nominal,
+  }));
+  const there = cascade(mouth, sheetBefore(mouth, layers));
+  const change = (part: "mismatchLossDb" | "dissipationDb" | "sidewaysLossDb") =>
+    there[part].nominal - nominal[part].nominal;
+  return {
+    mismatchDb: change("mismatchLossDb"),
+    heatDb: change("dissipationDb") + change("sidewaysLossDb"),
   };
 }
 

@@ -143,13 +143,18 @@ export interface PreparedEnd {
   readonly warnings: readonly Warning[];
 }
 
+/** What other permittivity and thickness change of a dry cover, over all phases [dB]. */
+export interface StackShift {
+  readonly mismatchDb: number;
+  readonly heatDb: number;
+}
+
 /** How a dry cover may differ from its nominal self [dB]. */
 export interface CoverScatter {
-  /** Change of the mismatch with the materials at the low and the high end of their spread, over all phases. */
-  readonly batchLowDb: number;
-  readonly batchHighDb: number;
+  /** With permittivity and thickness at the low or the high end of their spread, loss tangents kept; undefined where they have none. */
+  readonly stack: ((end: "low" | "high") => StackShift) | undefined;
   /** True where those ends are one standard deviation away, false where they end a published range. */
-  readonly batchIsSigma: boolean;
+  readonly stackIsSigma: boolean;
   /** Of the heat, as a share of it. */
   readonly heatShare: number;
   /** Of a plane wave before a mouth that is none. */
