@@ -1,6 +1,7 @@
 import { normalCdf } from "../numeric/normal.ts";
-import { normalDeviate } from "../numeric/normalDeviate.ts";
+import { normalDeviate, normalDeviates } from "../numeric/normalDeviate.ts";
 import type { Scatter } from "../numeric/scatter.ts";
+import { scatterColumn } from "../numeric/scatterQuantile.ts";
 import type { EndName } from "../scenario/types.ts";
 
 /** What a cause is about: what its user could look into, measure or mend. */
@@ -71,9 +72,18 @@ export function column(sketch: Sketch, fill: (out: Float64Array) => void): Float
 /** Standard normal deviates of a cause. */
 export function normalsOf(sketch: Sketch, cause: Cause): Float64Array {
   const uniforms = uniformsOf(sketch, cause);
-  return column(sketch, (out) => {
-    for (let i = 0; i < out.length; i++) out[i] = normalDeviate(uniforms[i]!);
-  });
+  return column(sketch, (out) => normalDeviates(uniforms, out));
+}
+
+/** Values of an input that scatters about a nominal one. */
+export function valuesOf(
+  sketch: Sketch,
+  nominal: number,
+  scatter: Scatter,
+  uniforms: Float64Array,
+): Float64Array {
+  const fill = scatterColumn(nominal, scatter);
+  return column(sketch, (out) => fill(uniforms, out));
 }
 
 /** Normal deviates that hang together with those of the other end: r of one, sqrt(1 - r^2) of its own. */

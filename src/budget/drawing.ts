@@ -56,9 +56,18 @@ export function drawingOf(link: Link, cases: readonly Case[], block = 1024): Dra
     drawnFeed(sketch, used, feeds, "receiver"),
   ];
   const all = (end: EndName) => cases.map((one) => mouthOf(used, feeds, end, one));
-  const sentCover = drawnCover(sketch, used, "transmitter", all("transmitter"), undefined, false);
+  const over = (end: EndName) => Object.values(ends[end].dishCover);
+  const sentCover = drawnCover(
+    sketch,
+    used,
+    "transmitter",
+    all("transmitter"),
+    over("transmitter"),
+    undefined,
+    false,
+  );
   const heardCover = (oneBatch: boolean) =>
-    drawnCover(sketch, used, "receiver", all("receiver"), sentCover, oneBatch);
+    drawnCover(sketch, used, "receiver", all("receiver"), over("receiver"), sentCover, oneBatch);
   const [heardOther, heardTwin] = [heardCover(false), heardCover(true)];
   const weathers = new Map<string, DrawnWeather>();
   for (const { weather } of cases) {
@@ -70,7 +79,7 @@ export function drawingOf(link: Link, cases: readonly Case[], block = 1024): Dra
     const mouth = (end: EndName, feed: DrawnFeed, cover: DrawnCover): DrawnMouth => {
       const nodes = weather.rain?.grid.links ?? [used];
       const mouths = nodes.map((link) => mouthOf(link, feeds, end, one));
-      return drawnMouth(sketch, used.doubts, feed, cover, mouths, weather.rain);
+      return drawnMouth(sketch, feed, cover, mouths, weather.rain);
     };
     return marginColumn(sketch, budgets[k]!, {
       common: levels.level,

@@ -1,6 +1,7 @@
 import type { EndName } from "../scenario/types.ts";
 import { column, logSpread, type Sketch } from "./causes.ts";
 import type { DrawnCover } from "./drawnCover.ts";
+import { atRate } from "./drawnRain.ts";
 import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
 import type { DishCoverState, Link } from "./types.ts";
 
@@ -31,26 +32,19 @@ export function drawnDish(
   };
   const heat = lossOf(nominal, ".dish_cover_heat");
   const isRead = link.scenario.covers[link.scenario[end].dishCover!]!.measured !== undefined;
-  const heatSpread = heat.db > 0 ? logSpread(heat.sigma / heat.db) : 0;
-  const waters = Float64Array.from(
-    rain?.grid.links ?? [link],
-    (there) => lossOf(stateIn(there), "_water").db,
+  const waterDb = lossOf(nominal, "_water").db;
+  const nodes = rain?.grid.links ?? [link];
+  const water = atRate(
+    sketch,
+    rain,
+    nodes.map((there) => lossOf(stateIn(there), "_water").db),
   );
-  const water = lossOf(nominal, "_water").db;
-  const waterSpread = logSpread(link.doubts.waterShare);
+  // A dish cover's own heat may scatter by another share than that of covers before a feed: by its entry's sigma.
+  const heatSpread = heat.db > 0 ? logSpread(heat.sigma / heat.db) : 0;
   const excessDb = column(sketch, (out) => {
-    for (let i = 0; i < out.length; i++) {
-      let excess = isRead
-        ? heat.sigma * drawn.reading[i]!
-        : heat.db * (Math.exp(heatSpread * drawn.heat[i]!) - 1);
-      if (water !== 0) {
-        const lower = waters[rain === undefined ? 0 : rain.node[i]!]!;
-        const upper = rain === undefined ? lower : waters[rain.node[i]! + 1]!;
-        const share = rain === undefined ? 0 : rain.share[i]!;
-        excess += Math.exp(waterSpread * drawn.water[i]!) * (lower + share * (upper - lower)) - water;
-      }
-      out[i] = excess;
-    }
+    if (isRead) for (let i = 0; i < out.length; i++) out[i] = heat.sigma * drawn.reading[i]!;
+    else for (let i = 0; i < out.length; i++) out[i] = heat.db * (Math.exp(heatSpread * drawn.heat[i]!) - 1);
+    for (let i = 0; i < out.length; i++) out[i]! += drawn.waterTimes[i]! * water[i]! - waterDb;
   });
   return {
     excessDb,

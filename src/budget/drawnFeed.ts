@@ -1,6 +1,14 @@
-import { scatterQuantile } from "../numeric/scatterQuantile.ts";
 import type { EndName } from "../scenario/types.ts";
-import { type Cause, column, PREFIX, type Sketch, stillOf, tiedUniforms, uniformsOf } from "./causes.ts";
+import {
+  type Cause,
+  column,
+  PREFIX,
+  type Sketch,
+  stillOf,
+  tiedUniforms,
+  uniformsOf,
+  valuesOf,
+} from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
 import { NEPERS } from "./drawnWeather.ts";
 import type { Link } from "./types.ts";
@@ -52,12 +60,10 @@ export function drawnFeed(
     stated: false,
     still: 0.25, // where the phase adds next to nothing
   });
-  const quantile = scatterQuantile(returnLossDb, cause(end).scatter);
+  const values = valuesOf(sketch, returnLossDb, cause(end).scatter, uniforms);
   const gammaRatio = column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      out[i] = Math.exp(
-        (NEPERS / 2) * (returnLossDb - Math.max(LEAST_RETURN_LOSS_DB, quantile(uniforms[i]!))),
-      );
+      out[i] = Math.exp((NEPERS / 2) * (returnLossDb - Math.max(LEAST_RETURN_LOSS_DB, values[i]!)));
     }
   });
   const gamma2 = Math.exp(-NEPERS * returnLossDb);

@@ -1,5 +1,4 @@
 import type { Scatter } from "../numeric/scatter.ts";
-import { scatterQuantile } from "../numeric/scatterQuantile.ts";
 import type { EndName, Scenario, Uncertain } from "../scenario/types.ts";
 import {
   type Cause,
@@ -10,6 +9,7 @@ import {
   stillOf,
   tiedUniforms,
   uniformsOf,
+  valuesOf,
 } from "./causes.ts";
 import type { Doubts } from "./doubts.ts";
 import { aimLevels } from "./drawnAim.ts";
@@ -65,9 +65,9 @@ function levelColumn(
   { cause, nominal, sign, least = Number.NEGATIVE_INFINITY }: Level,
   uniforms: Float64Array,
 ): Float64Array {
-  const quantile = scatterQuantile(nominal, cause.scatter);
+  const values = valuesOf(sketch, nominal, cause.scatter, uniforms);
   return column(sketch, (out) => {
-    for (let i = 0; i < out.length; i++) out[i] = sign * (Math.max(least, quantile(uniforms[i]!)) - nominal);
+    for (let i = 0; i < out.length; i++) out[i] = sign * (Math.max(least, values[i]!) - nominal);
   });
 }
 

@@ -1,9 +1,7 @@
-import { normalDeviate } from "../numeric/normalDeviate.ts";
-import { logSpread, type Sketch } from "./causes.ts";
-import type { Doubts } from "./doubts.ts";
+import { column, type Sketch } from "./causes.ts";
 import type { DrawnCover } from "./drawnCover.ts";
 import type { DrawnFeed } from "./drawnFeed.ts";
-import type { DrawnRain } from "./drawnWeather.ts";
+import { atRate, type DrawnRain } from "./drawnRain.ts";
 import type { Mouth } from "./types.ts";
 
 /** A beat nearer to 1 would cost without end in the worst phase; no feed and sheet reflect that much. */
@@ -27,7 +25,6 @@ export interface DrawnMouth {
  */
 export function drawnMouth(
   sketch: Sketch,
-  doubts: Doubts,
   feed: DrawnFeed,
   drawn: DrawnCover,
   nodes: readonly Mouth[],
@@ -36,42 +33,46 @@ export function drawnMouth(
   const mouth = nodes[(nodes.length - 1) / 2]!;
   const { coverMismatchDb, coverHeatDb, beat: nominalBeat, scatter } = mouth.parts;
   const { stackIsSigma, planeWaveDb, readingDb } = scatter;
-  const [low, high] = [scatter.stack?.("low"), scatter.stack?.("high")];
-  const waters = nodes.map(({ parts }) => parts);
-  const waterMismatch = Float64Array.from(waters, ({ waterMismatchDb }) => waterMismatchDb);
-  const waterHeat = Float64Array.from(waters, ({ waterHeatDb }) => waterHeatDb);
-  const isWet = waterMismatch.some((db) => db !== 0) || waterHeat.some((db) => db !== 0);
-  const heatSpread = logSpread(scatter.heatShare);
-  const waterSpread = logSpread(doubts.waterShare);
-  const hasHeat = coverHeatDb > 0 && heatSpread > 0;
-  const beats = nominalBeat > 0;
-
-  const mismatchDb = new Float64Array(sketch.block);
-  const heatDb = new Float64Array(sketch.block);
-  const beat = new Float64Array(sketch.block).fill(1);
-  sketch.steps.push(() => {
-    for (let i = 0; i < mismatchDb.length; i++) {
-      let mismatch = feed.mismatchDb[i]! + coverMismatchDb;
-      let heat = hasHeat ? coverHeatDb * Math.exp(heatSpread * drawn.heat[i]!) : coverHeatDb;
-      if (low !== undefined && high !== undefined) {
-        const place = stackIsSigma ? normalDeviate(drawn.stack[i]!) : 2 * drawn.stack[i]! - 1;
-        const shift = place < 0 ? low : high;
-        mismatch += Math.abs(place) * shift.mismatchDb;
-        heat += Math.abs(place) * shift.heatDb;
-      }
-      mismatch += planeWaveDb * drawn.planeWave[i]! + readingDb * drawn.reading[i]!;
-      if (isWet) {
-        const node = rain === undefined ? 0 : rain.node[i]!;
-        const share = rain === undefined ? 0 : rain.share[i]!;
-        const times = Math.exp(waterSpread * drawn.water[i]!);
-        mismatch += times * between(waterMismatch, node, share);
-        heat += times * between(waterHeat, node, share);
-      }
-      mismatchDb[i] = mismatch;
-      heatDb[i] = heat;
-      if (beats) {
+  const heatIsDrawn = coverHeatDb > 0 && scatter.heatShare > 0;
+  const mismatchDb = column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) {
+      out[i] =
+        feed.mismatchDb[i]! +
+        coverMismatchDb +
+        planeWaveDb * drawn.planeWave[i]! +
+        readingDb * drawn.reading[i]!;
+    }
+  });
+  const heatDb = column(sketch, (out) => {
+    if (!heatIsDrawn) out.fill(coverHeatDb);
+    else for (let i = 0; i < out.length; i++) out[i] = coverHeatDb * drawn.heatTimes[i]!;
+  });
+  if (scatter.stack !== undefined) {
+    const [low, high] = [scatter.stack("low"), scatter.stack("high")];
+    const places = stackIsSigma ? drawn.stackNormal : drawn.stackFlat;
+    addBent(sketch, mismatchDb, places, low.mismatchDb, high.mismatchDb);
+    addBent(sketch, heatDb, places, low.heatDb, high.heatDb);
+  }
+  addWater(
+    sketch,
+    mismatchDb,
+    drawn.waterTimes,
+    rain,
+    nodes.map(({ parts }) => parts.waterMismatchDb),
+  );
+  addWater(
+    sketch,
+    heatDb,
+    drawn.waterTimes,
+    rain,
+    nodes.map(({ parts }) => parts.waterHeatDb),
+  );
+  const beat = column(sketch, (out) => {
+    if (nominalBeat === 0) out.fill(1);
+    else {
+      for (let i = 0; i < out.length; i++) {
         const x = Math.min(MOST_BEAT, nominalBeat * feed.gammaRatio[i]!);
-        beat[i] = 1 + x * (x - 2 * feed.cosine[i]!);
+        out[i] = 1 + x * (x - 2 * feed.cosine[i]!);
       }
     }
   });
@@ -83,7 +84,25 @@ export function drawnMouth(
   };
 }
 
-function between(values: Float64Array, node: number, share: number): number {
-  const lower = values[node]!;
-  return share === 0 ? lower : lower + share * (values[node + 1]! - lower);
+/** Adds a line that bends at nought: so much a unit below, so much above. */
+function addBent(sketch: Sketch, to: Float64Array, places: Float64Array, low: number, high: number): void {
+  sketch.steps.push(() => {
+    for (let i = 0; i < to.length; i++)
+      to[i]! += Math.max(0, -places[i]!) * low + Math.max(0, places[i]!) * high;
+  });
+}
+
+/** Adds what water costs at the drawn rate, times what its model is off by. */
+function addWater(
+  sketch: Sketch,
+  to: Float64Array,
+  times: Float64Array,
+  rain: DrawnRain | undefined,
+  atNodes: readonly number[],
+): void {
+  if (atNodes.every((db) => db === 0)) return;
+  const water = atRate(sketch, rain, atNodes);
+  sketch.steps.push(() => {
+    for (let i = 0; i < to.length; i++) to[i]! += times[i]! * water[i]!;
+  });
 }

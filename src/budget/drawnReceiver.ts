@@ -1,6 +1,5 @@
 import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
-import { scatterQuantile } from "../numeric/scatterQuantile.ts";
-import { column, type Sketch, stillOf, uniformsOf } from "./causes.ts";
+import { column, type Sketch, stillOf, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
 import { NEPERS } from "./drawnWeather.ts";
 import { LABEL_NOISE_FIGURE_SIGMA_DB } from "./noiseSide.ts";
@@ -35,11 +34,11 @@ export function drawnReceiver(sketch: Sketch, { scenario }: Link, lineLossDb: Fl
     stated: isStated(input),
     still: stillOf(scatter),
   });
-  const quantile = scatterQuantile(input.value, scatter);
+  const values = valuesOf(sketch, input.value, scatter, uniforms);
   return {
     receiverK: column(sketch, (out) => {
       for (let i = 0; i < out.length; i++) {
-        out[i] = REFERENCE_TEMPERATURE_K * (Math.exp(NEPERS * Math.max(0, quantile(uniforms[i]!))) - 1);
+        out[i] = REFERENCE_TEMPERATURE_K * (Math.exp(NEPERS * Math.max(0, values[i]!)) - 1);
       }
     }),
     linePassed: column(sketch, (out) => {

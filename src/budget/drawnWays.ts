@@ -1,6 +1,6 @@
 import { type Cause, column, normalsOf, type Sketch } from "./causes.ts";
 import type { EndsInUse } from "./drawnLevels.ts";
-import type { DrawnRain } from "./drawnWeather.ts";
+import { atRate, type DrawnRain } from "./drawnRain.ts";
 import { mechanismsOf } from "./mechanisms.ts";
 import type { Link, Mechanism } from "./types.ts";
 
@@ -24,21 +24,16 @@ export function wayLevel(
   const best = ways[0]!;
   if (best.sigmaDb === 0) return undefined;
   const drawn = ways.map((way) => {
-    const normals = normalsOf(sketch, wayCause(way));
-    const excess =
-      way.name === "rain_scatter" && rain !== undefined ? scatterByRate(ends, name, rain) : undefined;
-    return { way, normals, excess };
+    const atNodes =
+      way.name === "rain_scatter" && rain !== undefined ? scatterByRate(ends, name, rain) : [way.excessDb];
+    const excess = atRate(sketch, atNodes.length > 1 ? rain : undefined, atNodes);
+    return { sigmaDb: way.sigmaDb, leastDb: leastOf(way), normals: normalsOf(sketch, wayCause(way)), excess };
   });
   return column(sketch, (out) => {
     out.fill(CLOSED_DB);
-    for (const { way, normals, excess } of drawn) {
+    for (const { sigmaDb, leastDb, normals, excess } of drawn) {
       for (let i = 0; i < out.length; i++) {
-        const node = rain === undefined ? 0 : rain.node[i]!;
-        const nominal =
-          excess === undefined
-            ? way.excessDb
-            : excess[node]! + rain!.share[i]! * (excess[node + 1]! - excess[node]!);
-        out[i] = Math.min(out[i]!, Math.max(leastOf(way), nominal + way.sigmaDb * normals[i]!));
+        out[i] = Math.min(out[i]!, Math.max(leastDb, excess[i]! + sigmaDb * normals[i]!));
       }
     }
     for (let i = 0; i < out.length; i++) out[i] = best.excessDb - out[i]!;
@@ -64,12 +59,8 @@ function wayCause({ name, label, sigmaDb }: Mechanism): Cause {
 }
 
 /** Excess of rain scatter at the nodes of the rate [dB]. */
-function scatterByRate(
-  { transmitter, receiver }: EndsInUse,
-  name: string,
-  { grid }: DrawnRain,
-): Float64Array {
-  return Float64Array.from(grid.links, (link) => {
+function scatterByRate({ transmitter, receiver }: EndsInUse, name: string, { grid }: DrawnRain): number[] {
+  return grid.links.map((link) => {
     const ways = mechanismsOf(link, link.weathers[name]!, transmitter, receiver);
     return ways.find((way) => way.name === "rain_scatter")?.excessDb ?? CLOSED_DB;
   });

@@ -227,6 +227,40 @@ describe("one cause moved is the engine with that input changed", () => {
     expect(still - moved).toBeLessThan((factor - 1) * signal * 1.15);
   });
 
+  it("water on one cover alone by the whole of its doubt, tied to nothing", () => {
+    const scenario = scenarioOf({
+      covers: { bare: coverOf(), film: coverOf({ layers: [layerOf(0.13, 2.05)], surface: "beading" }) },
+      weather: { now: weatherOf({ rainMmPerH: { value: 30, sigma: 0 }, wets: ["receiver"] }) },
+      feeds: { stub: feedOf({ returnLossDb: 60 }) },
+    });
+    const chosen = caseOf(scenario, "now");
+    const budget = evaluate(prepare(scenario), chosen);
+    const factor = Math.exp(Math.sqrt(Math.log(1.25)) * Z);
+    const signal = -budget.entries
+      .filter(({ id }) => id.includes("water"))
+      .reduce((sum, { db }) => sum + db, 0);
+    const { still, moved } = marginsAt(scenario, [chosen], "rx.water", P)[0]!;
+    expect(still - moved).toBeGreaterThan((factor - 1) * signal);
+    expect(still - moved).toBeLessThan((factor - 1) * signal * 1.3);
+  });
+
+  it("heat and water of a cover over the dish", () => {
+    const scenario = scenarioOf({
+      covers: { bare: coverOf(), cloth: coverOf({ layers: [layerOf(0.5, 2.6, 0.05)], surface: "wetting" }) },
+      transmitter: { cover: "bare", dishCover: "cloth" },
+      receiver: { cover: "bare" },
+      weather: { now: weatherOf({ rainMmPerH: { value: 10, sigma: 0 } }) },
+    });
+    const chosen = caseOf(scenario, "now");
+    const budget = evaluate(prepare(scenario), chosen);
+    const loss = (id: string) => -budget.entries.find((entry) => entry.id === `tx.${id}`)!.db;
+    const factorOf = (share: number) => Math.exp(Math.sqrt(Math.log(1 + share ** 2)) * Z);
+    const heat = marginsAt(scenario, [chosen], "tx.cover_heat", P)[0]!;
+    expect(heat.still - heat.moved).toBeCloseTo(loss("dish_cover_heat") * (factorOf(0.4) - 1), 9);
+    const water = marginsAt(scenario, [chosen], "tx.water", P)[0]!;
+    expect(water.still - water.moved).toBeCloseTo(loss("dish_cover_water") * (factorOf(0.5) - 1), 9);
+  });
+
   it("aim: 12 theta^2/b^2 about a standing offset", () => {
     const scenario = {
       ...plain,
@@ -237,7 +271,7 @@ describe("one cause moved is the engine with that input changed", () => {
     const drawing = drawingOf(prepare(scenario), [chosen], 2);
     const cause = (id: string) => drawing.uniforms[drawing.causes.findIndex((one) => one.id === id)]!;
     // A radius of two deviations, first to the side of the offset, then against it.
-    for (const id of ["tx.pointing"]) cause(id).fill(1 - Math.exp(-2));
+    cause("tx.pointing").fill(1 - Math.exp(-2));
     cause("tx.pointing_side").set([1e-12, 0.5]);
     drawing.work();
     const [towards, against] = drawing.margins[0]! as unknown as [number, number];

@@ -6,5 +6,7 @@
 import { coldStart } from "./coldStart.mjs";
 import { diffraction } from "./diffraction.mjs";
 import { sheetRate } from "./sheets.mjs";
+import { spread } from "./spread.mjs";
 
-for (const measure of [coldStart, sheetRate, diffraction]) process.stdout.write(`${measure()}\n`);
+for (const measure of [coldStart, sheetRate, diffraction, spread])
+  process.stdout.write(`${await measure()}\n`);

@@ -1,0 +1,90 @@
+import { column, normalsOf, type Sketch, stillOf, uniformsOf, valuesOf } from "./causes.ts";
+import { isStated } from "./drawnLevels.ts";
+import { RAIN_NODES, type RainGrid, rainGrid } from "./rainGrid.ts";
+import type { Link } from "./types.ts";
+
+/** Rain rates of the grid's nodes, and where between them each draw lies. */
+export interface DrawnRain {
+  readonly grid: RainGrid;
+  readonly node: Int32Array;
+  readonly share: Float64Array;
+}
+
+/** Where the drawn rain rates lie among the grid's nodes; one random number makes it rain alike in all weathers. */
+export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain | undefined {
+  const grid = rainGrid(link, name);
+  if (grid === undefined) return undefined;
+  const { rainMmPerH } = link.scenario.weather[name]!;
+  const uniforms = uniformsOf(sketch, {
+    id: "rain.rate",
+    matter: "rain",
+    end: undefined,
+    label: "rain rate",
+    scatter: grid.scatter,
+    unit: "rate",
+    stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
+    still: stillOf(grid.scatter),
+  });
+  const rates = valuesOf(sketch, grid.rateMmPerH, grid.scatter, uniforms);
+  const { stepLog } = grid;
+  const last = 2 * RAIN_NODES;
+  const node = new Int32Array(sketch.block);
+  const share = new Float64Array(sketch.block);
+  sketch.steps.push(() => {
+    for (let i = 0; i < node.length; i++) {
+      const ratio = Math.max(1e-6, rates[i]! / grid.rateMmPerH);
+      const place = Math.min(last, Math.max(0, RAIN_NODES + Math.log(ratio) / stepLog));
+      const lower = Math.min(last - 1, Math.floor(place));
+      node[i] = lower;
+      share[i] = place - lower;
+    }
+  });
+  return { grid, node, share };
+}
+
+/** Rain on the path [dB]: by its rate, whose loss is nearly a power of it, and by the length of path in it. */
+export function rainLossOf(
+  sketch: Sketch,
+  link: Link,
+  name: string,
+  rain: DrawnRain | undefined,
+): Float64Array {
+  const { rainLengthShare } = link.doubts;
+  const atNodes = rain?.grid.links ?? [link];
+  const logsAtNodes = atNodes.map(({ weathers }) => Math.log(Math.max(1e-12, weathers[name]!.rainLossDb)));
+  const lengths = normalsOf(sketch, {
+    id: "rain.length",
+    matter: "rain",
+    end: undefined,
+    label: "length of path in the rain",
+    scatter: { kind: "normal", sigma: rainLengthShare },
+    unit: "share",
+    stated: link.scenario.spread?.rainLengthShare !== undefined,
+    still: 0.5,
+  });
+  const logs = atRate(sketch, rain, logsAtNodes);
+  return column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) {
+      out[i] = Math.exp(logs[i]!) * Math.max(0, 1 + rainLengthShare * lengths[i]!);
+    }
+  });
+}
+
+/** A figure at the drawn rates, on straight lines between its values at the nodes of the rate; one value without any. */
+export function atRate(
+  sketch: Sketch,
+  rain: DrawnRain | undefined,
+  atNodes: readonly number[],
+): Float64Array {
+  const values = Float64Array.from(atNodes);
+  return column(sketch, (out) => {
+    if (rain === undefined) out.fill(values[0]!);
+    else {
+      const { node, share } = rain;
+      for (let i = 0; i < out.length; i++) {
+        const lower = values[node[i]!]!;
+        out[i] = lower + share[i]! * (values[node[i]! + 1]! - lower);
+      }
+    }
+  });
+}
