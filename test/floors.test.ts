@@ -78,6 +78,15 @@ describe("the floors of the house", () => {
     expect(offenders).toEqual([]);
   });
 
+  it("states the radius of the Earth once", () => {
+    const stating = files.filter((file) =>
+      readFileSync(join(source, file), "utf8")
+        .split("\n")
+        .some((line) => /\b6371\b/.test(line.replace(/^\s*(\/?\*|\/\/).*/, ""))),
+    );
+    expect(stating).toEqual(["numeric/constants.ts"]);
+  });
+
   it("keeps every file short enough to read in one sitting", () => {
     const long = files.filter((file) => readFileSync(join(source, file), "utf8").split("\n").length > 400);
     expect(long).toEqual([]);

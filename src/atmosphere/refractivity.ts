@@ -1,4 +1,5 @@
 import { requireFinite, requireNotNegative, requirePositive, type Validity } from "../numeric/check.ts";
+import { EARTH_RADIUS_KM } from "../numeric/constants.ts";
 
 export interface Refractivity {
   readonly nUnits: number;
@@ -38,9 +39,6 @@ export function refractivity({
   const wetUnits = (72 * e) / t + (3.75e5 * e) / (t * t);
   return { nUnits: dryUnits + wetUnits, dryUnits, wetUnits };
 }
-
-/** Mean radius of the Earth [km] in the propagation Recommendations. */
-export const EARTH_RADIUS_KM = 6371;
 
 /** Curvature of that Earth in N-units/km, 1e6/6371 rounded as P.452 and P.530 do. */
 const EARTH_CURVATURE_N_PER_KM = 157;

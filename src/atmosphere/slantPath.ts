@@ -1,9 +1,9 @@
 import { requirePositive, requireWithin } from "../numeric/check.ts";
-import { RADIANS_PER_DEGREE } from "../numeric/constants.ts";
+import { EARTH_RADIUS_KM, RADIANS_PER_DEGREE } from "../numeric/constants.ts";
 import { dbToPower } from "../numeric/decibels.ts";
 import { specificGasAttenuation } from "./gasAttenuation.ts";
 import { referenceAtmosphere } from "./referenceAtmosphere.ts";
-import { EARTH_RADIUS_KM, refractivity } from "./refractivity.ts";
+import { refractivity } from "./refractivity.ts";
 
 export interface StationInput {
   readonly frequencyGHz: number;

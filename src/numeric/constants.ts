@@ -13,6 +13,9 @@ export const ZERO_CELSIUS_K = 273.15;
 /** Standard acceleration of free fall [m/s^2], conventional value. */
 export const STANDARD_GRAVITY_M_PER_S2 = 9.80665;
 
+/** Mean radius of the Earth in the propagation Recommendations [km], such as ITU-R P.452-18, equation 6a. */
+export const EARTH_RADIUS_KM = 6371;
+
 export const RADIANS_PER_DEGREE = Math.PI / 180;
 
 /** Wavelength in air taken as vacuum [m] for a frequency [GHz]. */

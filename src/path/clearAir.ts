@@ -7,7 +7,7 @@ import {
   requireWithin,
   type Validity,
 } from "../numeric/check.ts";
-import { RADIANS_PER_DEGREE, ZERO_CELSIUS_K } from "../numeric/constants.ts";
+import { EARTH_RADIUS_KM, RADIANS_PER_DEGREE, ZERO_CELSIUS_K } from "../numeric/constants.ts";
 import { combineMechanisms } from "./clearAirCombination.ts";
 import { deltaBullingtonLoss } from "./deltaBullington.ts";
 import { ductClimate, ductingLoss } from "./ducting.ts";
@@ -85,7 +85,7 @@ export interface ClearAirLoss extends PathAnalysis, ZoneLengths {
 }
 
 /** Effective radius where the refractivity gradient is one exceeded for beta0 of time only: k = 3. */
-const BETA0_RADIUS_KM = 3 * 6371;
+const BETA0_RADIUS_KM = 3 * EARTH_RADIUS_KM;
 
 /**
  * Basic transmission loss of a path in clear air, not exceeded for a percentage of time: line of sight,
@@ -127,7 +127,7 @@ export function clearAirLoss(input: ClearAirInput): ClearAirLoss {
     longestInlandKm: zones.longestInlandKm,
   });
   const { beta0Percent } = climate;
-  const effectiveRadiusKm = (6371 * 157) / (157 - dN);
+  const effectiveRadiusKm = (EARTH_RADIUS_KM * 157) / (157 - dN);
   const txHeightAmslM = profile.heightsM[0]! + input.txHeightM;
   const rxHeightAmslM = profile.heightsM[profile.heightsM.length - 1]! + input.rxHeightM;
   const surface = smoothSurface(profile, txHeightAmslM, rxHeightAmslM);
@@ -249,7 +249,7 @@ function midLatitudeDeg(from: Position, to: Position, distanceKm: number): numbe
     Math.cos(end) * Math.sin(turn),
     Math.cos(start) * Math.sin(end) - Math.sin(start) * Math.cos(end) * Math.cos(turn),
   );
-  const half = distanceKm / (2 * 6371);
+  const half = distanceKm / (2 * EARTH_RADIUS_KM);
   const sine = Math.sin(start) * Math.cos(half) + Math.cos(start) * Math.sin(half) * Math.cos(heading);
   return Math.asin(Math.min(1, sine)) / RADIANS_PER_DEGREE;
 }

@@ -1,7 +1,5 @@
 import { requireFinite, requireNotNegative, requirePositive } from "../numeric/check.ts";
-
-/** Mean radius of the Earth in ITU-R propagation models [km]. */
-export const EARTH_RADIUS_KM = 6371;
+import { EARTH_RADIUS_KM } from "../numeric/constants.ts";
 
 /**
  * Effective Earth radius [km] for a k-factor; 4/3 in the standard atmosphere.

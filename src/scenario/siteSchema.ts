@@ -1,6 +1,5 @@
 import * as z from "zod";
-import { RADIANS_PER_DEGREE } from "../numeric/constants.ts";
-import { EARTH_RADIUS_KM } from "../path/horizon.ts";
+import { EARTH_RADIUS_KM, RADIANS_PER_DEGREE } from "../numeric/constants.ts";
 import { locatorToPoint } from "../path/locator.ts";
 import { type Axis, readCoordinate } from "./coordinates.ts";
 import { group, text } from "./fields.ts";
