@@ -1,6 +1,7 @@
 import { Command, Option } from "commander";
 import { coversCsv, coversJson, coversText, coverVerdict, prepare } from "../index.ts";
 import { knownName } from "./knownName.ts";
+import { namesAsked, namesOption } from "./namesAsked.ts";
 import { bandOf } from "./optionQuantity.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { paintFor, print } from "./terminal.ts";
@@ -18,7 +19,7 @@ export const coversCommand = new Command("covers")
     "judge every cover of the scenario, dry and wet: cost, match, noise, break-even rain, durability",
   )
   .argument("<file>", "scenario file")
-  .option("--weather <names...>", "only these weathers")
+  .addOption(namesOption("--weather <name>", "only this weather"))
   .option("--mode <name>", "this mode in place of the scenario's first")
   .option(
     "--band <width>",
@@ -28,8 +29,8 @@ export const coversCommand = new Command("covers")
   .option("--csv", "a flat table")
   .action(async (file: string, options: CoversOptions) => {
     const link = prepare(await scenarioIn(file));
-    const { weather: names = Object.keys(link.weathers), mode = link.scenario.receiver.modes[0]! } = options;
-    for (const name of names) knownName("weather", name, Object.keys(link.weathers));
+    const names = namesAsked("weather", options.weather, Object.keys(link.weathers));
+    const { mode = link.scenario.receiver.modes[0]! } = options;
     knownName("mode", mode, Object.keys(link.modes));
     const bandGHz = options.band === undefined ? undefined : bandOf(options.band, link.scenario);
     const verdict = coverVerdict(link, mode, names, bandGHz);

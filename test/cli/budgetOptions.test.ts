@@ -135,6 +135,24 @@ describe("--require", () => {
     expect(statusOf(demo, ...storm, "--csv", "--require")).toBe(3);
   });
 
+  it("leaves the file that follows it alone", () => {
+    const storming = [...storm, "--cover", "lid"];
+    expect(statusOf("--require", demo)).toBe(3);
+    expect(statusOf(...storming, "--require", demo)).toBe(3);
+    expect(statusOf(...dry, "--require", demo)).toBe(0);
+    expect(statusOf("--require", "thin", ...storming, demo)).toBe(3);
+    expect(statusOf(...dry, "--require", "thin", demo)).toBe(0);
+    expect(statusOf(...storming, demo, "--require")).toBe(3);
+    expect(statusOf(...storm, "--cover", "bare", "--require", "thin", demo)).toBe(0); // 4.4 dB, thin
+    expect(statusOf(...storm, "--cover", "bare", "--require", demo)).toBe(3);
+  });
+
+  it("asks for a file where none is named", () => {
+    const { status, stderr } = oilskin(["budget", "--require", "thin"]);
+    expect(status).toBe(2);
+    expect(stderr).toContain("missing required argument 'file'");
+  });
+
   it("refuses another word", () => {
     const { status, stdout, stderr } = oilskin(["budget", demo, "--require", "nonsense"]);
     expect({ status, stdout }).toEqual({ status: 2, stdout: "" });

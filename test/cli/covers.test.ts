@@ -50,7 +50,7 @@ describe("oilskin covers", () => {
   });
 
   it("knows only the weathers asked for", () => {
-    const verdict = verdictOf(demo, "--weather", "dry", "shower");
+    const verdict = verdictOf(demo, "--weather", "dry", "--weather", "shower");
     expect(verdict.weathers).toEqual(["dry", "shower"]);
     expect(verdict.worstWeather).toBe("shower");
     const text = textOf(demo, "--weather", "dry");
