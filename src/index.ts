@@ -106,6 +106,8 @@ export {
   thermalNoiseDbm,
 } from "./receiver/noise.ts";
 // Studies and reports
+export { compareCsv, compareJson } from "./report/compareData.ts";
+export { compareText } from "./report/compareText.ts";
 export { coversCsv, coversJson } from "./report/coversData.ts";
 export { coversText } from "./report/coversText.ts";
 export { horizonCsv, horizonJson } from "./report/horizonData.ts";
@@ -142,9 +144,17 @@ export { scenarioJsonSchema } from "./scenario/schema.ts";
 export { TerrainError } from "./scenario/terrain/faults.ts";
 export { openTerrain } from "./scenario/terrain/openTerrain.ts";
 export type { ElevationSource, Terrain } from "./scenario/terrain/types.ts";
-export type { Diagnostic, Scatter, Scenario, SpreadSettings, Uncertain } from "./scenario/types.ts";
+export type {
+  Diagnostic,
+  ReadScenario,
+  Scatter,
+  Scenario,
+  SpreadSettings,
+  Uncertain,
+} from "./scenario/types.ts";
 export { withMeasuredCover } from "./scenario/writeCover.ts";
 export { breakEven } from "./study/breakEven.ts";
+export { commonMode, commonWeathers, compare } from "./study/compare.ts";
 export { coverVerdict } from "./study/coverVerdict.ts";
 export { exposureOfLink } from "./study/exposureOfLink.ts";
 export { type HorizonPlace, horizonRound } from "./study/horizonRound.ts";

@@ -1,5 +1,6 @@
 import { budgetCommand } from "./budget.ts";
 import { checkCommand } from "./check.ts";
+import { compareCommand } from "./compare.ts";
 import { coversCommand } from "./covers.ts";
 import { horizonCommand } from "./horizon.ts";
 import { inferCommand } from "./infer.ts";
@@ -17,6 +18,7 @@ run([
   budgetCommand,
   coversCommand,
   spreadCommand,
+  compareCommand,
   yearCommand,
   pathCommand,
   horizonCommand,

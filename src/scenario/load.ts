@@ -5,11 +5,11 @@ import { withTerrain } from "./pathTerrain.ts";
 import type { FaultPath } from "./positions.ts";
 import { danglingNames } from "./references.ts";
 import { scenarioSchema } from "./schema.ts";
-import type { Diagnostic, Scenario } from "./types.ts";
+import type { Diagnostic, ReadScenario } from "./types.ts";
 import { judgeYaml, readText } from "./yamlFile.ts";
 
 export type Loaded =
-  | { readonly scenario: Scenario; readonly diagnostics?: undefined }
+  | (ReadScenario & { readonly diagnostics?: undefined })
   | { readonly scenario?: undefined; readonly diagnostics: readonly Diagnostic[] };
 
 /**
@@ -31,7 +31,7 @@ export async function loadScenario(pathOrText: string): Promise<Loaded> {
 
 /** The same for a text whose paths start from `folder`. */
 export async function judgeScenario(text: string, folder: string): Promise<Loaded> {
-  const { value, places, diagnostics } = await judgeYaml(text, {
+  const { value, typed, places, diagnostics } = await judgeYaml(text, {
     schema: scenarioSchema,
     noun: "scenario",
     starter: "`oilskin new FILE` writes a starter",
@@ -43,7 +43,7 @@ export async function judgeScenario(text: string, folder: string): Promise<Loade
   if (value === undefined) return { diagnostics };
   const { path, messages } = await withTerrain(value.path, folder);
   const { climate, mapMessages } = withRainMap(value, folder);
-  if (messages.length + mapMessages.length === 0) return { scenario: { ...value, path, climate } };
+  if (messages.length + mapMessages.length === 0) return { scenario: { ...value, path, climate }, typed };
   const faults = (code: string, found: readonly string[], at: FaultPath) =>
     found.map((message) => ({ code, message, ...places.ofValue(at) }));
   return {

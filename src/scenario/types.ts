@@ -285,6 +285,13 @@ export interface Scenario {
   readonly spread?: SpreadSettings | undefined;
 }
 
+/** A scenario read, and the file that it came from. */
+export interface ReadScenario {
+  readonly scenario: Scenario;
+  /** The YAML document, every plain value as the text that was typed. */
+  readonly typed: unknown;
+}
+
 /** A fault or a doubt in a scenario file. Lines and columns count from 1. */
 export interface Diagnostic {
   readonly code: string;

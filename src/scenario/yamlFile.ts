@@ -70,8 +70,19 @@ export interface YamlForm<T> {
 }
 
 export type Judged<T> =
-  | { readonly value: T; readonly places: Places; readonly diagnostics?: undefined }
-  | { readonly value?: undefined; readonly places?: undefined; readonly diagnostics: readonly Diagnostic[] };
+  | {
+      readonly value: T;
+      /** The document as typed. */
+      readonly typed: unknown;
+      readonly places: Places;
+      readonly diagnostics?: undefined;
+    }
+  | {
+      readonly value?: undefined;
+      readonly typed?: undefined;
+      readonly places?: undefined;
+      readonly diagnostics: readonly Diagnostic[];
+    };
 
 /** Reads the text of a YAML file by its schema: the value, or every fault with its place. */
 export async function judgeYaml<T>(text: string, form: YamlForm<T>): Promise<Judged<T>> {
@@ -92,7 +103,9 @@ export async function judgeYaml<T>(text: string, form: YamlForm<T>): Promise<Jud
   }
   const issues = parsed.success ? [] : parsed.error.issues.flatMap((issue) => faultsOf(issue, schema));
   const found = [...issues, ...more];
-  if (parsed.success && faults.length + found.length === 0) return { value: parsed.data, places };
+  if (parsed.success && faults.length + found.length === 0) {
+    return { value: parsed.data, typed: content.raw, places };
+  }
   const placed = found.map(({ code, message, path }) => {
     const place = code === "unknown_key" ? places.ofKey : places.ofValue;
     return { code, message, ...place(path) };
