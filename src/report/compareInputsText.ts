@@ -1,8 +1,8 @@
 import type { InputDifference } from "../study/compareInputs.ts";
 import { LINE_WIDTH, lengthOf, listed, type Paint, paragraph } from "./words.ts";
 
-/** Widest value of a file that is shown in its column [characters]. */
-const WIDEST_VALUE = 60;
+/** Longest value of a file that is shown whole [characters]. */
+const LONGEST_VALUE = 240;
 /** How many keys of no weight are named. */
 const MOST_KEYS = 12;
 
@@ -19,15 +19,14 @@ export function inputsText(inputs: readonly InputDifference[], paint: Paint): st
   return parts.join("\n");
 }
 
-/** `covers.film, layer 1, thickness: 5 mil -> 10 mil`, broken before the arrow where it is long. */
+/** `covers.film.layer 1.thickness: 5 mil -> 10 mil`, on lines of its own where it is long. */
 function line({ path, a, b }: InputDifference): string {
-  const key = `  ${keyOf(path)}: `;
   const [from, to] = [a, b].map((value) => (value === undefined ? "not given" : cut(value)));
-  const whole = `${key}${from} -> ${to}`;
+  const whole = `  ${keyOf(path)}: ${from} -> ${to}`;
   if (lengthOf(whole) <= LINE_WIDTH) return whole;
-  return [`  ${keyOf(path)}:`, `    A ${from}`, `    B ${to}`]
-    .map((text) => cut(text, LINE_WIDTH))
-    .join("\n");
+  return [`${paragraph(keyOf(path), "  ")}:`, paragraph(from!, "    A "), paragraph(to!, "    B ")].join(
+    "\n",
+  );
 }
 
 /** What has a name of its own is named by it, without what differs in it. */
@@ -47,6 +46,6 @@ function keyOf(path: InputDifference["path"]): string {
     .join(".");
 }
 
-function cut(text: string, width = WIDEST_VALUE): string {
-  return lengthOf(text) <= width ? text : `${[...text].slice(0, width - 3).join("")}...`;
+function cut(text: string): string {
+  return lengthOf(text) <= LONGEST_VALUE ? text : `${[...text].slice(0, LONGEST_VALUE - 3).join("")}...`;
 }

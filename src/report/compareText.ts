@@ -7,7 +7,10 @@ import { compareAnswer } from "./compareAnswer.ts";
 import { inputsText } from "./compareInputsText.ts";
 import { meanings } from "./marginText.ts";
 import { warningText } from "./notes.ts";
-import { abreast, listed, type Paint, paragraph, percent, plain, signed, tenth } from "./words.ts";
+import { abreast, lengthOf, listed, type Paint, paragraph, percent, plain, signed, tenth } from "./words.ts";
+
+/** Widest name of a weather, or of two, in a table [characters]. */
+const WIDEST_NAME = 38;
 
 /** Two scenarios: the answer first, then what differs in the files, the margins and the entries behind them. */
 export function compareText(comparison: Comparison, names: Pair, paint: Paint = plain): string {
@@ -49,8 +52,16 @@ function scenarioLines({ scenario }: Comparison, names: Pair, paint: Paint): str
     .join("\n");
 }
 
+/** A name in a table, cut where it would push the figures off the line; the sentences above have it whole. */
 function weatherName({ weather: { a, b } }: ComparedWeather): string {
-  return a === b ? a : `${a} / ${b}`;
+  const whole = a === b ? a : `${a} / ${b}`;
+  if (lengthOf(whole) <= WIDEST_NAME) return whole;
+  const half = Math.floor((WIDEST_NAME - 3) / 2);
+  return a === b ? cut(a, WIDEST_NAME) : `${cut(a, half)} / ${cut(b, half)}`;
+}
+
+function cut(name: string, width: number): string {
+  return lengthOf(name) <= width ? name : `${[...name].slice(0, width - 3).join("")}...`;
 }
 
 function marginTable(weathers: readonly ComparedWeather[], paint: Paint): string {
@@ -166,6 +177,7 @@ export function labelOf({ label: { a, b } }: Pick<ComparedEntry, "label">): stri
   let end = 0;
   while (end < Math.min(one.length, other.length) - start && one.at(-1 - end) === other.at(-1 - end)) end++;
   const middle = [one, other].map((words) => words.slice(start, words.length - end).join(" "));
+  if (middle.includes("")) return `${a}/${b}`;
   return [...one.slice(0, start), middle.join("/"), ...one.slice(one.length - end)].join(" ");
 }
 

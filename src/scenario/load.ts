@@ -10,7 +10,11 @@ import { judgeYaml, readText } from "./yamlFile.ts";
 
 export type Loaded =
   | (ReadScenario & { readonly diagnostics?: undefined })
-  | { readonly scenario?: undefined; readonly diagnostics: readonly Diagnostic[] };
+  | {
+      readonly scenario?: undefined;
+      readonly typed?: undefined;
+      readonly diagnostics: readonly Diagnostic[];
+    };
 
 /**
  * Reads a scenario and checks all of it, the tables of readings that its covers name, the terrain of its
