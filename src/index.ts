@@ -136,6 +136,7 @@ export { exposureLimits } from "./safety/exposureLimits.ts";
 export { readCoordinate } from "./scenario/coordinates.ts";
 export { type InferReadings, loadInferReadings } from "./scenario/infer.ts";
 export { judgeScenario, loadScenario } from "./scenario/load.ts";
+export { materialHint } from "./scenario/materialsMeant.ts";
 export { nearest } from "./scenario/nearest.ts";
 export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/quantity.ts";
 export { type BenchReadings, loadReadings, loadSweeps } from "./scenario/readings.ts";

@@ -2,11 +2,11 @@ import { Command } from "commander";
 import {
   findMaterial,
   type Material,
+  materialHint,
   materials,
   materialsText,
   materialText,
   materialThickness,
-  nearest,
 } from "../index.ts";
 import { paintFor, print, UserError } from "./terminal.ts";
 
@@ -29,15 +29,5 @@ export const materialsCommand = new Command("materials")
 function known(name: string): Material {
   const material = findMaterial(name);
   if (material !== undefined) return material;
-  const part = name.trim().toLowerCase();
-  const alike = materials.filter((one) =>
-    [one.name, ...one.aliases].some((word) => part !== "" && word.toLowerCase().includes(part)),
-  );
-  const close = nearest(
-    name,
-    materials.flatMap((one) => [one.name, ...one.aliases]),
-  );
-  const meant = alike.length > 0 ? alike.map((one) => one.name) : close === undefined ? [] : [close];
-  const hint = meant.length > 0 ? `did you mean ${meant.join(", ")}?` : "`oilskin materials` lists them";
-  throw new UserError(`no material "${name}" (${hint})`);
+  throw new UserError(`no material "${name}"${materialHint(name)}`);
 }

@@ -1,12 +1,13 @@
 import * as z from "zod";
 import { type Bounded, exactly } from "../cover/bounded.ts";
-import { findMaterial, materials } from "../cover/materials.ts";
+import { findMaterial } from "../cover/materials.ts";
 import { mixture } from "../cover/mixture.ts";
 import { wetModels } from "../cover/wetModels.ts";
 import { group, oneOf, text } from "./fields.ts";
+import { materialHint } from "./materialsMeant.ts";
 import { quantity, uncertain } from "./quantityField.ts";
 import type { Cover, CoverLayer, Uncertain } from "./types.ts";
-import { didYouMean, instead, shown } from "./wording.ts";
+import { instead, shown } from "./wording.ts";
 
 /** A figure typed by the user: its spread, where one was typed, bounds it. */
 function spreadOf({ value, sigma = 0 }: Uncertain, lowest: number): Bounded {
@@ -43,9 +44,8 @@ const layer = group(
     return { material, ...common, permittivity: eps ?? exactly(1), lossTangent: loss ?? exactly(0) };
   }
   if (known === undefined && eps === undefined) {
-    const names = materials.flatMap(({ name, aliases }) => [name, ...aliases]);
-    const hint = didYouMean(material, names) || " (`oilskin materials` lists them)";
-    const message = `read ${shown(material)}, expected a known material or a permittivity beside it${hint}`;
+    const expected = "expected a known material or a permittivity beside it";
+    const message = `read ${shown(material)}, ${expected}${materialHint(material)}`;
     context.addIssue({ code: "custom", message, path: ["material"], input: material });
     return z.NEVER;
   }

@@ -1,9 +1,10 @@
 import * as z from "zod";
 import { exactly } from "../cover/bounded.ts";
-import { findMaterial, materials } from "../cover/materials.ts";
+import { findMaterial } from "../cover/materials.ts";
 import { group, named, text } from "./fields.ts";
+import { materialHint } from "./materialsMeant.ts";
 import { quantity, uncertain } from "./quantityField.ts";
-import { didYouMean, shown } from "./wording.ts";
+import { shown } from "./wording.ts";
 
 const returnLoss = (about: string) => quantity("levelDb", { about, range: [0.1, 60] });
 const insertionLoss = quantity("levelDb", { about: "insertion loss", range: [-10, 60] });
@@ -28,11 +29,8 @@ const knownSheet = group(
 ).transform(({ material, permittivity, loss_tangent, thickness, gap = 0, ...read }, context) => {
   const known = findMaterial(material);
   if (known === undefined && permittivity === undefined) {
-    const hint = didYouMean(
-      material,
-      materials.flatMap(({ name, aliases }) => [name, ...aliases]),
-    );
-    const message = `read ${shown(material)}, expected a known material or a permittivity beside it${hint}`;
+    const expected = "expected a known material or a permittivity beside it";
+    const message = `read ${shown(material)}, ${expected}${materialHint(material)}`;
     context.addIssue({ code: "custom", message, path: ["material"], input: material });
     return z.NEVER;
   }
