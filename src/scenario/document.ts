@@ -107,6 +107,12 @@ function judgeKeys(document: Document.Parsed): { faults: KeyFault[]; fatal: bool
     },
     Pair: (_, pair, path) => {
       const map = path.at(-1) as YAMLMap;
+      const split = splitNumber(map, pair);
+      if (split !== undefined) {
+        faults.push({ code: "decimal_comma", ...split });
+        refused.push([map, pair]);
+        return;
+      }
       const node = pair.key as { range?: [number, number, number] } | null;
       const message = isScalar(node) ? faultOfKey(node.value) : "a key that is no plain word";
       if (message === undefined) return;
@@ -116,6 +122,26 @@ function judgeKeys(document: Document.Parsed): { faults: KeyFault[]; fatal: bool
   });
   for (const [map, pair] of refused) map.items.splice(map.items.indexOf(pair), 1);
   return { faults, fatal, firstAlias: firstAlias ?? 0 };
+}
+
+/**
+ * A number with a decimal comma between braces, which YAML has cut into a value and a key: `power: 2` and `5 W`. The
+ * value is mended, so that it is no second fault.
+ */
+function splitNumber(map: YAMLMap, { key, value }: Pair): Omit<KeyFault, "code"> | undefined {
+  const before = map.items[map.items.findIndex((pair) => pair.key === key) - 1]?.value;
+  const tail = isScalar(key) ? String(key.value) : "";
+  const isAlone = value === null || (isScalar(value) && value.value === null);
+  if (!map.flow || !isAlone || !/^\d/.test(tail) || !isScalar(before)) return undefined;
+  const head = String(before.value);
+  if (!/^[+-]?\d+$/.test(head)) return undefined;
+  const meant = `${head}.${tail}`;
+  const whole = /^\d{3}(?!\d)/.test(tail) ? `, or ${head}${tail} if it parts thousands` : "";
+  const message =
+    `read "${head},${tail}", where the comma ends the item, expected a number with a point ` +
+    `(a decimal comma? write ${meant}${whole})`;
+  before.value = meant;
+  return { message, offset: before.range?.[0] ?? 0 };
 }
 
 function faultOfKey(key: unknown): string | undefined {
