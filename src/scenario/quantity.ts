@@ -185,6 +185,11 @@ function refuseEarly(text: string, kind: QuantityKind): Refusal | undefined {
   if (hyphened) {
     return refuse("unreadable", text, kind, `write ${`${hyphened[1]} ${hyphened[2]} ${hyphened[3]}`.trim()}`);
   }
+  const proportion = kind === "ratio" && /^(\d+\.?\d*)\s*:\s*(\d+\.?\d*)$/.exec(text);
+  if (proportion) {
+    const [, above, below] = proportion;
+    return refuse("unreadable", text, kind, `write ${Number(below) === 1 ? above : `${above}/${below}`}`);
+  }
   const feetAndInches = /^(\d+)\s*(?:ft|feet|foot|')\s*(\d[\d./ ]*?)\s*(?:in|inch|inches|")?$/i.exec(text);
   if (feetAndInches) {
     return refuse("unreadable", text, kind, `write ${feetAndInches[1]} ft + ${feetAndInches[2]} in`);

@@ -140,6 +140,9 @@ const refused: [input: string | number, kind: QuantityKind, code: RefusalCode, h
   ["1 500 m", "lengthM", "thousands_separator", /1500/],
   ["1'500 m", "lengthM", "thousands_separator", /1500/],
   ["1_500 m", "lengthM", "thousands_separator", /1500/],
+  ["1.4:1", "ratio", "unreadable", /^write 1\.4$/], // as people say a standing-wave ratio
+  ["1.25 : 1.0", "ratio", "unreadable", /^write 1\.25$/],
+  ["4:3", "ratio", "unreadable", /^write 4\/3$/],
   ["1-1/2 in", "thicknessMm", "unreadable", /1 1\/2 in/],
   ["5 ft 6 in", "lengthM", "unreadable", /5 ft \+ 6 in/],
   ["5'6\"", "lengthM", "unreadable", /5 ft \+ 6 in/],
