@@ -106,6 +106,7 @@ export {
   thermalNoiseDbm,
 } from "./receiver/noise.ts";
 // Studies and reports
+export { checkText } from "./report/checkText.ts";
 export { compareCsv, compareJson } from "./report/compareData.ts";
 export { compareText } from "./report/compareText.ts";
 export { coversCsv, coversJson } from "./report/coversData.ts";

@@ -142,13 +142,18 @@ describe("oilskin check", () => {
     const [first, ...rest] = stdout.trimEnd().split("\n");
     expect(first).toMatch(/: sound; \d feeds?, \d covers with bare, \d weathers$/);
     expect(rest.length).toBeGreaterThan(0);
-    for (const line of rest) expect(line.startsWith(`${file}: warning: `)).toBe(true);
+    expect(rest[0]).toBe("Warnings");
+    for (const line of rest.slice(1)) {
+      expect(line).toMatch(/^( {2}- | {4})\S/);
+      expect(line.length).toBeLessThanOrEqual(80);
+    }
   });
 
   it("tells the doubts that the budget tells", () => {
     const { warnings } = JSON.parse(oilskin(["budget", demo, "--json"]).stdout) as MarginReport;
-    const [, ...lines] = oilskin(["check", demo]).stdout.trimEnd().split("\n");
-    expect(lines).toEqual(warnings.map(({ where, message }) => `${demo}: warning: ${where}: ${message}`));
+    const [, ...items] = oilskin(["check", demo]).stdout.split("\n  - ");
+    const told = items.map((item) => item.trim().replace(/\s+/g, " "));
+    expect(told).toEqual(warnings.map(({ where, message }) => `${where}: ${message}`));
   });
 
   it("counts one as one", () => {
