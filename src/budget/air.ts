@@ -15,6 +15,7 @@ import { effectiveRainLength, rainFadeValidity } from "../path/rainFade.ts";
 import type { Scenario, Weather } from "../scenario/types.ts";
 import { type Doubts, doubtsOf } from "./doubts.ts";
 import { type Entry, lossEntry, sumOf } from "./entry.ts";
+import { idleInputs } from "./idleInputs.ts";
 import { overreachWarning } from "./overreach.ts";
 import type { PathGeometry, PreparedWeather, Warning } from "./types.ts";
 
@@ -37,7 +38,7 @@ export function prepareWeather(
   weather: Weather,
   where: string,
 ): PreparedWeather {
-  const warnings: Warning[] = [];
+  const warnings: Warning[] = idleInputs(weather, where);
   const { frequencyGHz } = scenario;
   const heightsKm = [path.from, path.to].map(({ groundM, heightM }) => (groundM + heightM) / 1000);
   const meanKm = (heightsKm[0]! + heightsKm[1]!) / 2;

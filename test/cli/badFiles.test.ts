@@ -156,6 +156,15 @@ describe("oilskin check", () => {
     expect(told).toEqual(warnings.map(({ where, message }) => `${where}: ${message}`));
   });
 
+  it("tells of what is stated for nothing, and finds the scenario sound; so does the budget", () => {
+    const file = changedDemo(folder, "idle.yaml", "dry: {}", "dry: { extent: 5 km }");
+    for (const command of ["check", "budget"]) {
+      const { status, stdout, stderr } = oilskin([command, file]);
+      expect({ status, stderr }).toEqual({ status: 0, stderr: "" });
+      expect(stdout).toContain("  - weather.dry.extent: does nothing without rain\n");
+    }
+  });
+
   it("counts one as one", () => {
     const file = join(folder, "plain.yaml");
     const text = readFileSync(demo, "utf8");
