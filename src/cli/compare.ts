@@ -56,9 +56,8 @@ export const compareCommand = new Command("compare")
     const one = (noun: string, text: string | undefined, namesOf: (link: Link) => object) =>
       text === undefined ? undefined : pairs(noun, text, namesOf)[0]!;
 
-    const weathers =
-      options.weather?.flatMap((text) => pairs("weather", text, (link) => link.weathers)) ??
-      commonWeathers(a, b);
+    const named = options.weather?.flatMap((text) => pairs("weather", text, (link) => link.weathers));
+    const weathers = named === undefined ? commonWeathers(a, b) : eachOnce(named);
     if (weathers.length === 0) {
       throw new UserError(
         `no weather of ${files.a} (${Object.keys(a.weathers).join(", ")}) has its name in ${files.b} ` +
@@ -94,6 +93,10 @@ function pairsIn(
   knownName(noun, nameA, known[0], files.a);
   knownName(noun, nameB, known[1], files.b);
   return [{ a: nameA, b: nameB }];
+}
+
+function eachOnce(pairs: readonly Pair[]): readonly Pair[] {
+  return pairs.filter((one, i) => pairs.findIndex(({ a, b }) => a === one.a && b === one.b) === i);
 }
 
 function pairIn(text: string, [inA, inB]: readonly [readonly string[], readonly string[]]): Pair | undefined {

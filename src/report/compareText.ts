@@ -77,9 +77,9 @@ function marginTable(weathers: readonly ComparedWeather[], paint: Paint): string
   };
   const differences = {
     heads: ["B less A", "B better with"],
-    cells: ({ differenceDb, differenceSigmaDb, entries, betterProbability }: ComparedWeather) => [
+    cells: ({ differenceDb, differenceSigmaDb, distinguishable, betterProbability }: ComparedWeather) => [
       cell(`${signed(differenceDb)} ±${tenth(differenceSigmaDb)}`),
-      cell(entries.length === 0 ? "-" : percent(betterProbability)),
+      cell(distinguishable ? percent(betterProbability) : "-"),
     ],
   };
   return abreast([margins, differences], (some, measured) =>

@@ -35,7 +35,7 @@ export interface ComparedWeather {
   /** Margin of B less that of A [dB]. */
   readonly differenceDb: number;
   readonly differenceSigmaDb: number;
-  /** Probability that B leaves more than A; a half where nothing differs. */
+  /** Probability that B leaves more than A; a half where the difference is not distinguishable. */
   readonly betterProbability: number;
   /** A difference smaller than a bench repeats to cannot be shown by it. */
   readonly distinguishable: boolean;
@@ -152,6 +152,7 @@ function caseOf({ scenario }: Link, side: Side, weather: Pair, { mode, cover }: 
 function comparedIn(weather: Pair, budgets: Pair<Budget>): ComparedWeather {
   const entries = comparedEntries(budgets);
   const differenceDb = budgets.b.marginDb - budgets.a.marginDb;
+  const distinguishable = Math.abs(differenceDb) >= BENCH_REPEATABILITY_DB;
   const differenceSigmaDb = Math.hypot(...entries.map(({ sigmaDb }) => sigmaDb));
   const totals = new Map<Cause, number>();
   for (const one of entries) totals.set(one.cause, (totals.get(one.cause) ?? 0) + one.differenceDb);
@@ -167,8 +168,8 @@ function comparedIn(weather: Pair, budgets: Pair<Budget>): ComparedWeather {
       .sort((one, other) => Math.abs(other.differenceDb) - Math.abs(one.differenceDb)),
     differenceDb,
     differenceSigmaDb,
-    betterProbability: entries.length === 0 ? 0.5 : probabilityAboveZero(differenceDb, differenceSigmaDb),
-    distinguishable: Math.abs(differenceDb) >= BENCH_REPEATABILITY_DB,
+    betterProbability: distinguishable ? probabilityAboveZero(differenceDb, differenceSigmaDb) : 0.5,
+    distinguishable,
   };
 }
 

@@ -82,7 +82,9 @@ describe("oilskin compare A B", () => {
 
   it("calls less than a bench repeats to indistinguishable", () => {
     const hardly = changedDemo(folder, "hardly.yaml", "power: 10 mW", "power: 10.05 mW"); // 0.02 dB
-    expect(textOf(demo, hardly)).toContain("indistinguishable at a bench's repeatability");
+    const told = textOf(demo, hardly);
+    expect(told).toContain("indistinguishable at a bench's repeatability");
+    expect(told).toMatch(/\ndry .* 0\.0 ±0\.0 +-\n/); // no word of which is better
   });
 
   it("names differences that cancel, and calls their sum indistinguishable", () => {
@@ -154,6 +156,11 @@ describe("pairs of names", () => {
       { a: "dry", b: "dry" },
       { a: "shower", b: "rain" },
     ]);
+  });
+
+  it("count once", () => {
+    const { weathers } = comparisonOf(demo, stronger, "--weather", "dry,dry=dry", "--weather", "dry");
+    expect(weathers.map(({ weather }) => weather)).toEqual([{ a: "dry", b: "dry" }]);
   });
 
   it("compare two modes", () => {
