@@ -12,6 +12,9 @@ const verdictWords = {
 /** How many causes of a difference are named. */
 const MOST_CAUSES = 4;
 
+/** Least difference of two standard deviations that is told in words [dB]. */
+const LEAST_SURENESS_DB = 1;
+
 /** The answer: in each weather which is better, by how much and by what; weathers of the same answer together. */
 export function compareAnswer({ weathers, lonelyWeathers, inputs }: Comparison): string {
   const lonely = (["a", "b"] as const).flatMap((side) =>
@@ -41,10 +44,11 @@ function sentence(one: ComparedWeather): string {
   const [a, b] = [budget.a.verdict, budget.b.verdict];
   const judged = a === b ? verdictWords[a].both : `B ${verdictWords[b].one} where A ${verdictWords[a].one}`;
   if (entries.length === 0) return `${judged}; no entry differs`;
+  const beside = `${surenessWords(one)}${carriedWords(one)}`;
   const causes = causesOf(one);
   const by = causes.length === 0 ? "" : `: ${listed(causes)}`;
   if (!distinguishable) {
-    return `${judged}; indistinguishable at a bench's repeatability${by}${carriedWords(one)}`;
+    return `${judged}; indistinguishable at a bench's repeatability${by}${beside}`;
   }
   const better = differenceDb > 0;
   const expected = a === b || better === ranks.indexOf(b) > ranks.indexOf(a);
@@ -54,7 +58,7 @@ function sentence(one: ComparedWeather): string {
     differenceSigmaDb > Math.abs(differenceDb)
       ? `; within its standard deviation of ${tenth(differenceSigmaDb)} dB`
       : "";
-  return `${judged}${subject}${figure}${by}${doubt}${carriedWords(one)}`;
+  return `${judged}${subject}${figure}${by}${doubt}${beside}`;
 }
 
 const ranks: readonly Verdict[] = ["fails", "thin", "closes"];
@@ -68,6 +72,13 @@ function causesOf({ causes }: ComparedWeather): string[] {
     ...few.map(({ cause, differenceDb }) => `${cause} ${signed(differenceDb)} dB`),
     ...(few.length < shown.length ? [`others ${signed(others)} dB`] : []),
   ];
+}
+
+/** Which margin is surer, where that is more than a shade. */
+function surenessWords({ budget: { a, b } }: ComparedWeather): string {
+  const [one, other] = [a.marginSigmaDb, b.marginSigmaDb];
+  if (Math.abs(one - other) < LEAST_SURENESS_DB) return "";
+  return `; B is ${other > one ? "less sure" : "surer"}, ±${tenth(other)} dB against ±${tenth(one)} dB`;
 }
 
 /** The ways of the signal, where they are not the same. */

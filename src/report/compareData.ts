@@ -12,13 +12,13 @@ export function compareJson(comparison: Comparison): string {
  */
 export function compareCsv({ scenario: { a, b }, weathers }: Comparison): string {
   const head = ["weather_a", "weather_b", "mode_a", "mode_b", "id", "stage", "label_a", "label_b", "cause"];
-  const figures = ["a_db", "b_db", "difference_db", "sigma_db", "verdict_a", "verdict_b"];
+  const figures = ["a_db", "b_db", "difference_db", "difference_sigma_db", "verdict_a", "verdict_b"];
   const rows = weathers.flatMap(({ weather, entries, budget, differenceDb, differenceSigmaDb }) => {
     const chosen = [weather.a, weather.b, a.mode, b.mode];
     return [
-      ...entries.map(({ id, stage, label, cause, db, differenceDb: change, sigmaDb }) => [
+      ...entries.map(({ id, stage, label, cause, db, differenceDb: change, ...rest }) => [
         ...[...chosen, id, stage, label.a ?? "", label.b ?? "", cause],
-        ...[db.a ?? "", db.b ?? "", change, sigmaDb, "", ""],
+        ...[db.a ?? "", db.b ?? "", change, rest.differenceSigmaDb, "", ""],
       ]),
       [
         ...[...chosen, "result.margin", "result", "margin", "margin", ""],

@@ -94,9 +94,15 @@ function marginTable(weathers: readonly ComparedWeather[], paint: Paint): string
   );
 }
 
-/** Whether an entry is large enough for a line of its own. */
-function isShown({ differenceDb }: ComparedEntry): boolean {
+/** Whether an entry moves the margin enough for a line of its own. */
+function isFelt({ differenceDb }: ComparedEntry): boolean {
   return Math.abs(differenceDb) >= BENCH_REPEATABILITY_DB;
+}
+
+/** Whether it has a line: it moves the margin, or is the same figure but surer in one. */
+function isShown(entry: ComparedEntry): boolean {
+  const { a = 0, b = 0 } = entry.sigma;
+  return isFelt(entry) || Math.abs(a - b) >= BENCH_REPEATABILITY_DB;
 }
 
 function entriesText(weathers: readonly ComparedWeather[], heading: (text: string) => string): string {
@@ -162,10 +168,12 @@ function stageRows(weathers: readonly ComparedWeather[], stage: Stage): Cell[][]
 }
 
 /** As the budget shows it: noise and what the mode needs are read there as they stand, not as they count. */
-function figure({ stage, db }: ComparedEntry, side: Side): string {
+function figure(entry: ComparedEntry, side: Side): string {
+  const { stage, db, sigma } = entry;
   const value = db[side];
   if (value === undefined) return "-";
-  return tenth(stage === "noise" || stage === "mode" ? 0 - value : value);
+  const told = tenth(stage === "noise" || stage === "mode" ? 0 - value : value);
+  return isFelt(entry) ? told : `${told} ±${tenth(sigma[side]!)}`;
 }
 
 /** One label for both, the words that differ set beside each other: `rain, 8.0/5.0 km of it`. */

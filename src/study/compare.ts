@@ -8,7 +8,7 @@ import { both, type Comparable, type Pair, type Side, sides } from "./comparable
 import { type Cause, causeOf } from "./compareCauses.ts";
 import { comparedInputs, type InputDifference } from "./compareInputs.ts";
 
-/** One entry that is not the same in both, signed as it adds to the margin. */
+/** One entry that is not the same in both, in its figure, its sigma or its bounds; signed as it adds to the margin. */
 export interface ComparedEntry {
   readonly id: string;
   readonly stage: Stage;
@@ -16,10 +16,11 @@ export interface ComparedEntry {
   readonly label: Pair<string | undefined>;
   /** Undefined where a budget has no such entry, which counts as 0 dB. */
   readonly db: Pair<number | undefined>;
+  readonly sigma: Pair<number | undefined>;
   /** B less A: what it does to the margin [dB]. */
   readonly differenceDb: number;
   /** Of the difference, the errors of both taken as independent [dB]; 0 where they come from the same input. */
-  readonly sigmaDb: number;
+  readonly differenceSigmaDb: number;
 }
 
 export type ComparedBudget = Omit<Budget, "entries" | "noiseEntries" | "requirement" | "warnings">;
@@ -153,7 +154,7 @@ function comparedIn(weather: Pair, budgets: Pair<Budget>): ComparedWeather {
   const entries = comparedEntries(budgets);
   const differenceDb = budgets.b.marginDb - budgets.a.marginDb;
   const distinguishable = Math.abs(differenceDb) >= BENCH_REPEATABILITY_DB;
-  const differenceSigmaDb = Math.hypot(...entries.map(({ sigmaDb }) => sigmaDb));
+  const differenceSigmaDb = Math.hypot(...entries.map((one) => one.differenceSigmaDb));
   const totals = new Map<Cause, number>();
   for (const one of entries) totals.set(one.cause, (totals.get(one.cause) ?? 0) + one.differenceDb);
   return {
@@ -179,20 +180,30 @@ function comparedEntries(budgets: Pair<Budget>): ComparedEntry[] {
   const byId = both((side) => new Map(all[side].map((entry) => [entry.id, entry])));
   return idsInOrder(all).flatMap((id) => {
     const entry = both((side) => byId[side].get(id));
-    const differenceDb = (entry.b?.db ?? 0) - (entry.a?.db ?? 0);
-    if (Math.abs(differenceDb) <= ROUNDING_DB) return [];
-    const { stage } = (entry.a ?? entry.b)!;
+    const change = (of: (entry: Entry) => number) =>
+      (entry.b ? of(entry.b) : 0) - (entry.a ? of(entry.a) : 0);
+    const differenceDb = change(({ db }) => db);
     // What moves by less than a bench shows comes from the same input, whose error both share.
-    const sharesInput = Math.abs(differenceDb) < BENCH_REPEATABILITY_DB;
+    const sharesInput = [differenceDb, change(({ sigma }) => sigma)].every(isUnseen);
+    const isAlike =
+      Math.abs(differenceDb) <= ROUNDING_DB &&
+      sharesInput &&
+      [change(({ low, db }) => low - db), change(({ high, db }) => high - db)].every(isUnseen);
+    if (isAlike) return [];
     const known = [entry.a, entry.b].filter((one) => one !== undefined);
     return {
-      ...{ id, stage, cause: causeOf(id) },
+      ...{ id, stage: known[0]!.stage, cause: causeOf(id) },
       label: both((side) => entry[side]?.label),
       db: both((side) => entry[side]?.db),
+      sigma: both((side) => entry[side]?.sigma),
       differenceDb,
-      sigmaDb: sharesInput ? 0 : combinedSigma(known),
+      differenceSigmaDb: sharesInput ? 0 : combinedSigma(known),
     };
   });
+}
+
+function isUnseen(db: number): boolean {
+  return Math.abs(db) < BENCH_REPEATABILITY_DB;
 }
 
 function allEntries({ entries, noiseEntries, requirement }: Budget): readonly Entry[] {

@@ -46,6 +46,16 @@ describe("the answer", () => {
     expect(textOf(withPower(30), withPower(31.5))).not.toContain("within its standard deviation");
   });
 
+  it("says which is surer, and shows the entry that is so", () => {
+    const [a, b] = [0.5, 5].map((sigma) => scenarioOf({ transmitter: { powerDbm: { value: 30, sigma } } }));
+    const told = textOf(a!, b!);
+    expect(told).toMatch(
+      /indistinguishable at a bench's repeatability; B is less sure, ±6\.0 dB against ±3\.4 dB\./,
+    );
+    expect(told).toContain("transmitter power 30.0 ±0.5 30.0 ±5.0 0.0 ");
+    expect(textOf(b!, a!)).toContain("B is surer, ±3.4 dB against ±6.0 dB.");
+  });
+
   it("takes weathers of the same answer together", () => {
     const weather = { dry: weatherOf(), "after rain": weatherOf({ coversWetAsAtMmPerH: 5 }) };
     const [a, b] = [30, 33].map((value) => scenarioOf({ weather, transmitter: { powerDbm: { value } } }));

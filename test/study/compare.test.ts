@@ -105,6 +105,12 @@ describe("what differs", () => {
     expect(change(0.051).betterProbability).toBeCloseTo(0.5206, 3);
   });
 
+  it("is an entry that is surer in one, though its figure is the same", () => {
+    const { entries, differenceSigmaDb } = compared(withPower(30, 0.3), withPower(30, 0.4));
+    expect(entries.map(({ id, differenceDb }) => [id, differenceDb])).toEqual([["tx.power", 0]]);
+    expect(differenceSigmaDb).toBeCloseTo(0.5, 9);
+  });
+
   it("keeps entries that only one has, against nothing", () => {
     const rainy = scenarioOf({
       weather: { dry: weatherOf({ rainMmPerH: { value: 16 }, extentKm: 8, wets: [] }) },
