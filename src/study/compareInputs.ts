@@ -74,7 +74,7 @@ function hasPart(
 ): boolean {
   if (top === "title" || top === "climate" || rest.at(-1) === "name" || rest.at(-1) === "source")
     return false;
-  if (coverChosen && name === "cover") return false;
+  if (coverChosen && name === "cover" && (top === "transmitter" || top === "receiver")) return false;
   const names: readonly (string | undefined)[] | undefined = used[top as keyof typeof used];
   return names === undefined || name === undefined || names.includes(String(name));
 }

@@ -158,6 +158,22 @@ describe("pairs of names", () => {
     ]);
   });
 
+  it("put what a file says of its own covers aside, but not a cover of that name", () => {
+    const text = readFileSync(demo, "utf8").replaceAll("  lid:", "  cover:");
+    const [one, other] = ["first.yaml", "second.yaml"].map((name) => join(folder, name));
+    writeFileSync(one!, text);
+    writeFileSync(
+      other!,
+      text.replace("gap: 4 mm", "gap: 6 mm").replaceAll("cover: film }", "cover: sheet }"),
+    );
+    const { inputs } = comparisonOf(one!, other!, "--cover", "cover", "--weather", "dry");
+    expect(inputs.map(({ path, counts }) => [path.join("."), counts])).toEqual([
+      ["transmitter.cover", false],
+      ["receiver.cover", false],
+      ["covers.cover.gap", true],
+    ]);
+  });
+
   it("count once", () => {
     const { weathers } = comparisonOf(demo, stronger, "--weather", "dry,dry=dry", "--weather", "dry");
     expect(weathers.map(({ weather }) => weather)).toEqual([{ a: "dry", b: "dry" }]);
