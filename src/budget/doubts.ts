@@ -56,6 +56,14 @@ const usual: Doubts = {
 
 /** What a scenario leaves unknown, its own figures in the place of the usual ones. */
 export function doubtsOf({ spread = {} }: Pick<Scenario, "spread">): Doubts {
-  const stated = Object.fromEntries(Object.entries(spread).filter(([, value]) => value !== undefined));
-  return { ...usual, ...stated, correlation: { ...usual.correlation, ...spread.correlation } } as Doubts;
+  return {
+    ...usual,
+    ...statedOf(spread),
+    correlation: { ...usual.correlation, ...statedOf(spread.correlation ?? {}) },
+  } as Doubts;
+}
+
+/** Keys that hold something: an undefined one would hide the usual figure. */
+function statedOf(group: object): object {
+  return Object.fromEntries(Object.entries(group).filter(([, value]) => value !== undefined));
 }

@@ -1,6 +1,7 @@
 import { Command, Option } from "commander";
 import { type Case, cases, prepare, spreadCsv, spreadJson, spreadOf, spreadText } from "../index.ts";
 import { knownName } from "./knownName.ts";
+import { namesAsked, namesOption } from "./namesAsked.ts";
 import { within } from "./optionQuantity.ts";
 import { progressBar } from "./progress.ts";
 import { scenarioIn } from "./scenarioFile.ts";
@@ -21,19 +22,13 @@ interface SpreadOptions {
 const MOST_DRAWS = 1_000_000;
 const MOST_SEED = 2 ** 32 - 1;
 
-const collect = (value: string, before: readonly string[] = []) => [...before, value];
-
 export const spreadCommand = new Command("spread")
   .description(
     "how sure is the verdict: draw every uncertain input, with each cover, and rank what it hangs on",
   )
   .argument("<file>", "scenario file")
-  .option("--weather <name>", "only this weather (again for more)", collect)
-  .option(
-    "--cover <name>",
-    "only this cover at both ends, beside the scenario's own (again for more)",
-    collect,
-  )
+  .addOption(namesOption("--weather <name>", "only this weather"))
+  .addOption(namesOption("--cover <name>", "only this cover at both ends, beside the scenario's own"))
   .option("--mode <name>", "this mode in place of the scenario's first")
   .option("--draws <number>", "most draws", "200000")
   .option("--seed <number>", "another whole number draws other numbers; the same one the same", "1")
@@ -48,28 +43,31 @@ export const spreadCommand = new Command("spread")
     const link = prepare(await scenarioIn(file));
     const { mode = link.scenario.receiver.modes[0]! } = options;
     knownName("mode", mode, Object.keys(link.modes));
-    for (const name of options.weather ?? []) knownName("weather", name, Object.keys(link.weathers));
-    for (const name of options.cover ?? []) knownName("cover", name, Object.keys(link.scenario.covers));
+    const weathers = namesAsked("weather", options.weather, Object.keys(link.weathers));
+    const covers = namesAsked("cover", options.cover, Object.keys(link.scenario.covers));
     const progress = progressBar(process.stderr, "spread");
-    const study = spreadOf(link, choose(cases(link), mode, options), { draws, seed, precision, progress });
+    const chosen = choose(cases(link), mode, weathers, covers);
+    const study = spreadOf(link, chosen, { draws, seed, precision, progress });
     if (options.json) print(spreadJson(study));
     else if (options.csv) print(spreadCsv(study));
     else print(spreadText(study, link, { detail: options.detail ?? false, paint: paintFor(process.stdout) }));
   });
 
 /** Cases of one mode; the scenario's own covers stay, for the ranking is theirs. */
-function choose(all: readonly Case[], mode: string, { weather, cover }: SpreadOptions): Case[] {
+function choose(
+  all: readonly Case[],
+  mode: string,
+  weathers: readonly string[],
+  covers: readonly string[],
+): Case[] {
   const first = all[0]!;
   return all
-    .filter((one) => one.mode === first.mode)
-    .map((one) => ({ ...one, mode }))
-    .filter((one) => weather === undefined || weather.includes(one.weather))
-    .filter((one) => {
-      const own =
-        one.transmitter.cover === first.transmitter.cover && one.receiver.cover === first.receiver.cover;
-      const both = one.transmitter.cover === one.receiver.cover;
-      return own || cover === undefined || (both && cover.includes(one.transmitter.cover));
-    });
+    .filter((one) => one.mode === first.mode && weathers.includes(one.weather))
+    .filter(({ transmitter: { cover }, receiver }) => {
+      const own = cover === first.transmitter.cover && receiver.cover === first.receiver.cover;
+      return own || covers.includes(cover);
+    })
+    .map((one) => ({ ...one, mode }));
 }
 
 function whole(option: string, text: string, low: number, high: number): number {

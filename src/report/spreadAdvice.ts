@@ -60,7 +60,8 @@ function comparison({ case: { weather }, matters }: SpreadRanking): string {
   const covers = matters.filter(({ matter }) => COVER.includes(matter));
   const [first] = matters.filter(({ matter }) => !COVER.includes(matter));
   if (first === undefined) return "";
-  const { name } = matterWords[first.matter];
+  const { name, many } = matterWords[first.matter];
+  const verb = many ? "matter" : "matters";
   const own = deviation(covers);
   if (own < 0.05)
     return `${capital(weather)}: the cover adds nothing to the spread; ${matterWords[first.matter].name} leads.`;
@@ -68,9 +69,12 @@ function comparison({ case: { weather }, matters }: SpreadRanking): string {
   const wet = covers.some(({ matter, sigmaDb }) => matter === "water" && sigmaDb > 0.05);
   const what = wet ? "the cover and its water" : "the cover";
   const figures = `(${tenth(first.sigmaDb)} against ${tenth(own)} dB)`;
-  if (times < 1 / 1.25) return `${capital(weather)}: ${what} matter more than anything else ${figures}.`;
-  if (times < 1.25) return `${capital(weather)}: ${name} matters about as much as ${what} ${figures}.`;
-  return `${capital(weather)}: ${name} matters ${timesWords(times)} as much as ${what} ${figures}.`;
+  if (times < 1 / 1.25) {
+    const verb = wet ? "matter" : "matters";
+    return `${capital(weather)}: ${what} ${verb} more than anything else (${tenth(own)} against ${tenth(first.sigmaDb)} dB).`;
+  }
+  if (times < 1.25) return `${capital(weather)}: ${name} ${verb} about as much as ${what} ${figures}.`;
+  return `${capital(weather)}: ${name} ${verb} ${timesWords(times)} as much as ${what} ${figures}.`;
 }
 
 const counts = [
@@ -103,9 +107,7 @@ function advice(
     ...(Math.abs(knownLowDb - lowDb) >= 0.05
       ? [`the 5 % margin would move by ${signed(knownLowDb - lowDb)} dB`]
       : []),
-    ...(Math.abs(points) >= 1
-      ? [`the chance to close by ${points > 0 ? "+" : ""}${points.toFixed(0)} points`]
-      : []),
+    ...(Math.abs(points) >= 1 ? [`the chance to close by +${points.toFixed(0)} points`] : []),
   ];
   const effect =
     gains.length > 0 ? ` Were it as the scenario has it for sure, in ${one.weather} ${listed(gains)}.` : "";

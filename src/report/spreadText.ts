@@ -8,7 +8,7 @@ import { agreementText } from "./spreadAgreement.ts";
 import { spreadCautions } from "./spreadCautions.ts";
 import { rangePicture } from "./spreadPicture.ts";
 import { matterWords, scatterWords } from "./spreadWords.ts";
-import { capital, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { abreast, capital, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** How sure the verdict is, in words; then margins, covers, what the spread hangs on, and what a budget says. */
 export function spreadText(
@@ -31,9 +31,9 @@ export function spreadText(
       ].join("\n"),
     ),
     paragraph(
-      "5 %, 95 %: one draw in twenty lies below, one above. closes: draws with a margin above 0; reserve: above " +
-        `${tenth(link.scenario.decision.reserveDb)} dB. takes: bare less covered in the same draws, median and 5 to ` +
-        "95 %. lost: draws that close with bare feeds and not with the cover. *: as the scenario has it.",
+      "5 %, 95 %: one draw in twenty lies below, one above. close: draws with a margin above 0; keep: with more than " +
+        `the reserve of ${tenth(link.scenario.decision.reserveDb)} dB. takes: bare less covered in the same draws, ` +
+        "median (5 to 95 %). lost: draws that close with bare feeds and not with the cover. *: as the scenario has it.",
     ),
     `${paint("strong", "What the spread hangs on, scenario's covers, blunders left out")}\n${rankingTable(study)}`,
     adviceText(study),
@@ -52,7 +52,7 @@ const leftOut = paragraph(
 );
 
 function howDrawn({ mode, draws, mostDraws, seed, halfWidth, precision }: SpreadStudy, link: Link): string {
-  const points = (100 * halfWidth).toFixed(1);
+  const points = (100 * halfWidth).toPrecision(1);
   const stop =
     draws < mostDraws
       ? `enough for chances good to ${points} points`
@@ -85,37 +85,50 @@ const countOf = (hundredth: number) => hundredth.toFixed(hundredth < 9.95 ? 1 : 
 
 /** A drawn probability to a tenth of a per cent, and no surer than the draws are. */
 export function chance(share: number): string {
-  if (share > 0.9995) return "all but none";
-  if (share < 0.0005) return "next to none";
+  if (share > 0.9995) return "over 99.9 %";
+  if (share < 0.0005) return "under 0.1 %";
   return `${(100 * share).toFixed(1)} %`;
 }
 
 function marginTable(rows: readonly SpreadRow[], { scenario }: Link, paint: Paint): string {
   const { transmitter, receiver } = scenario;
-  const figure = (share: number) => `${(100 * share).toFixed(1)} %`;
-  return columns([
-    ["cover", "5 %", "median", "95 %", "closes", "reserve", "verdict", "takes", "lost"].map((head) =>
-      cell(head),
-    ),
-    RULE,
-    ...rows.map((row): Cell[] => {
-      const { case: one, marginDb, closes, keepsReserve, verdict, costDb, lost } = row;
-      const own = one.transmitter.cover === transmitter.cover && one.receiver.cover === receiver.cover;
-      return [
-        cell(own ? `${coverName(row)} *` : coverName(row)),
-        ...[marginDb.lowDb, marginDb.medianDb, marginDb.highDb].map((db) => cell(tenth(db))),
-        cell(figure(closes.share)),
-        cell(figure(keepsReserve.share)),
-        cell(verdict, paint(meanings[verdict], verdict)),
-        cell(
-          costDb === undefined
-            ? "-"
-            : `${tenth(costDb.medianDb)} (${tenth(costDb.lowDb)} to ${tenth(costDb.highDb)})`,
-        ),
-        cell(costDb === undefined ? "-" : figure(lost)),
-      ];
-    }),
-  ]);
+  const isOwn = ({ case: one }: SpreadRow) =>
+    one.transmitter.cover === transmitter.cover && one.receiver.cover === receiver.cover;
+  const figures: readonly { readonly head: string; readonly of: (row: SpreadRow) => string }[] = [
+    { head: "5 %", of: ({ marginDb }) => tenth(marginDb.lowDb) },
+    { head: "median", of: ({ marginDb }) => tenth(marginDb.medianDb) },
+    { head: "95 %", of: ({ marginDb }) => tenth(marginDb.highDb) },
+    { head: "close %", of: ({ closes }) => share(closes.share) },
+    { head: "keep %", of: ({ keepsReserve }) => share(keepsReserve.share) },
+    { head: "verdict", of: ({ verdict }) => verdict },
+    {
+      head: "takes",
+      of: ({ costDb }) =>
+        costDb === undefined
+          ? "-"
+          : `${tenth(costDb.medianDb)} (${tenth(costDb.lowDb)}..${tenth(costDb.highDb)})`,
+    },
+    { head: "lost %", of: ({ costDb, lost }) => (costDb === undefined ? "-" : share(lost)) },
+  ];
+  return abreast(figures, (some, measured) =>
+    columns([
+      [cell("cover"), ...some.map(({ head }) => cell(head))],
+      RULE,
+      ...rows.map((row): Cell[] => [
+        cell(isOwn(row) ? `${coverName(row)} *` : coverName(row)),
+        ...some.map(({ head, of }) => {
+          const text = of(row);
+          return cell(text, head === "verdict" && !measured ? paint(meanings[row.verdict], text) : text);
+        }),
+      ]),
+    ]),
+  );
+}
+
+/** A share to a tenth of a per cent; only what never failed in the draws is told by a bound. */
+function share(part: number): string {
+  if (part > 0.9995) return ">99.9";
+  return part > 0 && part < 0.0005 ? "<0.1" : (100 * part).toFixed(1);
 }
 
 function causeTable({ causes }: SpreadStudy): string {

@@ -2,12 +2,14 @@ import type { Cause, Matter } from "../budget/causes.ts";
 import type { Scatter } from "../numeric/scatter.ts";
 
 /** What a matter is called, and what a user can do about it; advice is common practice, no source. */
-export const matterWords: Readonly<Record<Matter, { readonly name: string; readonly advice: string }>> = {
+export const matterWords: Readonly<
+  Record<Matter, { readonly name: string; readonly many?: true; readonly advice: string }>
+> = {
   power: {
     name: "transmitter power",
     advice: "measure it at the feed with a sensor: that leaves 0.25 dB of doubt",
   },
-  line: { name: "lines and joints", advice: "measure them: that leaves 0.1 dB each" },
+  line: { name: "lines and joints", many: true, advice: "measure them: that leaves 0.1 dB each" },
   gain: {
     name: "antenna gain",
     advice: "compare the dish with another at a known distance, or by sun noise",
@@ -30,7 +32,7 @@ export const matterWords: Readonly<Record<Matter, { readonly name: string; reado
     name: "way over the ground",
     advice: "walk the path: trees and ridges decide, not tenths of a dB",
   },
-  trees: { name: "trees", advice: "move a few metres, or raise the dish over them" },
+  trees: { name: "trees", many: true, advice: "move a few metres, or raise the dish over them" },
   tilt: { name: "tilted polarization", advice: "level the tripods" },
   noise: { name: "receiver's noise", advice: "measure the noise figure, or the step from ground to sky" },
   sky: { name: "what the antenna sees", advice: "measure the step from ground to sky on the site" },
