@@ -82,7 +82,7 @@ export function noiseSide(
       figureSigma * figureWeight,
     ),
     gainEntry(
-      heading("antenna", `antenna at ${Math.round(antennaK)} K`, sky),
+      heading("antenna", `sky and ground, ${Math.round(antennaK)} K`, sky),
       step(steps[1], steps[2]),
       (powerToDb(Math.E) * antennaSigmaK) / systemK,
     ),

@@ -38,3 +38,35 @@ export function bandOf(text: string, { frequencyGHz }: Scenario): number {
   const range = [1, 1e9 * frequencyGHz] as const;
   return within("--band", text, "bandwidthHz", range, `1 Hz to the frequency, ${frequencyGHz} GHz`) / 1e9;
 }
+
+/**
+ * A list of quantities in an option that may be repeated, parted by commas. One without a unit has that of the next
+ * one that names any, `1, 2, 5 mi`, or the canonical one, `unit`.
+ *
+ * @throws UserError naming the option
+ */
+export function listOption(
+  option: string,
+  texts: readonly string[],
+  kind: QuantityKind,
+  range: readonly [low: number, high: number],
+  unit: string,
+  most: number,
+): number[] {
+  const values = texts.flatMap((text) => {
+    let following = unit;
+    const parts = text.split(",").map((part) => part.trim());
+    return parts
+      .toReversed()
+      .map((part) => {
+        const isBare = /^[+-]?[\d./ e-]+$/i.test(part);
+        if (!isBare) following = part.replace(/^[+-]?[\d./ ]+(e[+-]?\d+)?/i, "").trim();
+        const whole = isBare ? `${part} ${following}` : part;
+        return within(option, whole, kind, range, `${range[0]} to ${range[1]} ${unit}`);
+      })
+      .toReversed();
+  });
+  if (values.length > most)
+    throw new UserError(`${option}: ${values.length} of them; at most ${most} are shown`);
+  return values;
+}

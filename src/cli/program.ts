@@ -12,6 +12,7 @@ import { run } from "./run.ts";
 import { schemaCommand } from "./schema.ts";
 import { spreadCommand } from "./spread.ts";
 import { thicknessCommand } from "./thickness.ts";
+import { weatherCommand } from "./weather.ts";
 import { yearCommand } from "./year.ts";
 
 run([
@@ -19,6 +20,7 @@ run([
   coversCommand,
   spreadCommand,
   compareCommand,
+  weatherCommand,
   yearCommand,
   pathCommand,
   horizonCommand,

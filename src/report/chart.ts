@@ -1,4 +1,4 @@
-import { LINE_WIDTH } from "./words.ts";
+import { LINE_WIDTH, paragraph } from "./words.ts";
 
 /** One line of a chart: a mark of plain characters, and a value for each abscissa. */
 export interface Series {
@@ -25,7 +25,8 @@ const WIDTH = LINE_WIDTH - MARGIN - 1;
 const MOST_TICKS = 6;
 
 /**
- * Lines over one abscissa in plain characters, LINE_WIDTH wide and 14 lines high, the marks explained in the last.
+ * Lines over one abscissa in plain characters, LINE_WIDTH wide and 14 lines high, the marks explained in the
+ * last, which takes more where they are many.
  *
  * Where many values fall into one column, the column shows all that lies between their least and greatest, so that
  * no peak and no null goes lost.
@@ -64,11 +65,13 @@ export function chart({ x, xLabel, yLabel, series }: Chart): string {
     const figure = String(Number(value.toPrecision(6)));
     figures = figures.padEnd(Math.min(columnOf(value), WIDTH - figure.length)) + figure;
   }
+  const marks = series.map(({ mark, label }) => `${mark} ${label}`);
+  const legend = `${yLabel} over ${xLabel}: ${marks.join("   ")}`;
   return [
     ...rows,
     `${" ".repeat(MARGIN)}${axis.join("")}`,
     `${" ".repeat(MARGIN)}${figures}`,
-    `${yLabel} over ${xLabel}: ${series.map(({ mark, label }) => `${mark} ${label}`).join("   ")}`,
+    legend.length <= LINE_WIDTH ? legend : paragraph(`${yLabel} over ${xLabel}: ${marks.join("; ")}`),
   ].join("\n");
 }
 

@@ -12,6 +12,7 @@ import {
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { meanings, pathLines } from "./marginText.ts";
 import { handsOnText, warningText } from "./notes.ts";
+import { backLines, rateFigure } from "./rateWords.ts";
 import { abreast, capital, listed, type Paint, paragraph, plain, signed, tenth } from "./words.ts";
 
 /** Which cover: one sentence each, best first, then the figures behind it. */
@@ -43,7 +44,7 @@ function bothEnds({ rows }: CoverJudgement, weather: string): CoverRow {
 }
 
 /** Covers over a dish are no choice here: they stay as the scenario has them. */
-function dishCoverText({ scenario, ends }: Link): string {
+export function dishCoverText({ scenario, ends }: Link): string {
   const over = (["transmitter", "receiver"] as const).flatMap((end) => {
     const { dishCover, feed } = scenario[end];
     return ends[end][feed]!.isSheltered ? `${dishCover} (${end})` : [];
@@ -197,13 +198,13 @@ function rippleText({ covers, bandGHz }: CoverVerdict, paint: Paint): string {
 function breakEvenTable({ covers }: CoverVerdict, { scenario }: Link): string {
   const rate = (value: number | undefined) => {
     if (value === undefined) return `not by ${HEAVIEST_MM_PER_H} mm/h`;
-    return value === 0 ? "without rain" : `${value < 10 ? value.toFixed(1) : value.toFixed(0)} mm/h`;
+    return value === 0 ? "without rain" : `${rateFigure(value)} mm/h`;
   };
   const ways = [
     { head: `down to the reserve of ${tenth(scenario.decision.reserveDb)} dB at`, way: "reserveMmPerH" },
     { head: "down to nothing at", way: "zeroMmPerH" },
   ] as const;
-  return abreast(ways, (some) =>
+  const table = abreast(ways, (some) =>
     columns([
       [cell("cover"), ...some.map(({ head }) => cell(head))],
       RULE,
@@ -213,6 +214,7 @@ function breakEvenTable({ covers }: CoverVerdict, { scenario }: Link): string {
       ]),
     ]),
   );
+  return [table, ...covers.flatMap(({ cover, breakEven }) => backLines(cover, breakEven))].join("\n");
 }
 
 /** What the weather does to a cover, how it is fixed and what to mind. */

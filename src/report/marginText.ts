@@ -1,6 +1,6 @@
-import type { Link, Verdict } from "../budget/types.ts";
+import type { Budget, Case, Link, Verdict } from "../budget/types.ts";
 import type { MarginReport } from "../study/marginReport.ts";
-import { cell, columns, RULE } from "./columns.ts";
+import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { carriedText } from "./mechanismText.ts";
 import {
   abreast,
@@ -30,18 +30,17 @@ export function pathLines(
   link: Link,
   paint: Paint,
 ): string {
-  const degrees = (value: number) => value.toFixed(1);
   const { from, to } = path;
   const names = [from.name, to.name].filter((name) => name !== undefined && !title.includes(name));
-  const doubt = path.headingErrorDeg >= 0.05 ? `, good to ${degrees(path.headingErrorDeg)} deg` : "";
+  const doubt = path.headingErrorDeg >= 0.05 ? `, good to ${tenth(path.headingErrorDeg)} deg` : "";
   return [
     paint("strong", paragraph(title)),
     paragraph(
       `${names.length > 0 ? `${names.join(" to ")}: ` : ""}${path.distanceKm.toFixed(1)} km at ` +
         `${Number(frequencyGHz.toPrecision(6))} GHz, ${link.scenario.polarization}`,
     ),
-    `heading ${degrees(path.headingDeg)} deg TRUE out, ${degrees(path.backHeadingDeg)} deg TRUE back${doubt}`,
-    `elevation ${degrees(path.elevationDeg)} deg out, ${degrees(path.backElevationDeg)} deg back`,
+    `heading ${tenth(path.headingDeg)} deg TRUE out, ${tenth(path.backHeadingDeg)} deg TRUE back${doubt}`,
+    `elevation ${tenth(path.elevationDeg)} deg out, ${tenth(path.backElevationDeg)} deg back`,
   ].join("\n");
 }
 
@@ -106,10 +105,14 @@ function isBare({ case: { transmitter, receiver } }: ReportBudget): boolean {
 }
 
 /** The cover of both ends, or the transmitter's and the receiver's where they differ. */
-export function coverName({ case: { transmitter, receiver } }: Pick<ReportBudget, "case">): string {
+export function pairName({ transmitter, receiver }: Pick<Case, "transmitter" | "receiver">): string {
   return transmitter.cover === receiver.cover
     ? transmitter.cover
     : `${transmitter.cover} / ${receiver.cover}`;
+}
+
+export function coverName({ case: chosen }: ReportBudget): string {
+  return pairName(chosen);
 }
 
 /** The budgets with the covers that the scenario puts on its ends; where those were not asked for, with the first. */
@@ -122,6 +125,16 @@ export function ownBudgets(report: MarginReport, { scenario }: Link): ReportBudg
   return withCovers(first.case.transmitter.cover, first.case.receiver.cover);
 }
 
+/** Margin, deviation and verdict. */
+export function marginCell(
+  { marginDb, marginSigmaDb, verdict }: Pick<Budget, "marginDb" | "marginSigmaDb" | "verdict">,
+  paint: Paint,
+): Cell {
+  const figures = `${tenth(marginDb)} ±${tenth(marginSigmaDb)} `;
+  const word = verdict.padEnd(6);
+  return cell(figures + word, figures + paint(meanings[verdict], word));
+}
+
 /** Cover by weather for one mode; a cell holds margin, deviation and verdict. */
 export function marginMatrix(report: MarginReport, link: Link, mode: string, paint: Paint = plain): string {
   const budgets = report.budgets.filter((budget) => budget.case.mode === mode);
@@ -129,10 +142,7 @@ export function marginMatrix(report: MarginReport, link: Link, mode: string, pai
   const own = new Set(ownBudgets(report, link).map(coverName));
   const margin = (cover: string, weather: string, paint: Paint) => {
     const budget = budgets.find((one) => coverName(one) === cover && one.case.weather === weather);
-    if (budget === undefined) return cell("-");
-    const figures = `${tenth(budget.marginDb)} ±${tenth(budget.marginSigmaDb)} `;
-    const verdict = budget.verdict.padEnd(6);
-    return cell(figures + verdict, figures + paint(meanings[budget.verdict], verdict));
+    return budget === undefined ? cell("-") : marginCell(budget, paint);
   };
   const weathers = [...new Set(budgets.map(({ case: { weather } }) => weather))];
   return abreast(weathers, (some, measured) =>

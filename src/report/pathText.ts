@@ -5,7 +5,7 @@ import { meanings, pathLines } from "./marginText.ts";
 import { mechanismSentence } from "./mechanismText.ts";
 import { heightCautions, warningText } from "./notes.ts";
 import { profileDrawing } from "./profileDrawing.ts";
-import { type Paint, paragraph, plain, signed, tenth } from "./words.ts";
+import { hundredth, type Paint, paragraph, plain, signed, tenth } from "./words.ts";
 
 /** Obstacles past this are counted only. */
 const MOST_SHOWN = 9;
@@ -73,17 +73,17 @@ function headingsTitle({ date, magneticModel }: PathStudy): string {
 }
 
 function headingsTable({ transmitter, receiver, path }: PathStudy): string {
-  const degrees = (value: number | undefined) => (value === undefined ? "-" : value.toFixed(1));
+  const degrees = (value: number | undefined) => (value === undefined ? "-" : tenth(value));
   const row = (end: string, view: EndView) => [
     cell(end),
     ...[degrees(view.trueDeg), degrees(view.magneticDeg), declinationWords(view.declinationDeg)].map((text) =>
       cell(text),
     ),
-    cell(view.elevationDeg.toFixed(2)),
+    cell(hundredth(view.elevationDeg)),
     cell(
       view.horizon === undefined
         ? "other end in sight"
-        : `${view.horizon.elevationDeg.toFixed(2)} at ${view.horizon.distanceKm.toFixed(1)} km`,
+        : `${hundredth(view.horizon.elevationDeg)} at ${view.horizon.distanceKm.toFixed(1)} km`,
     ),
   ];
   return [

@@ -9,7 +9,7 @@ export const plain: Paint = (_, text) => text;
 /** Widest line of a report. */
 export const LINE_WIDTH = 80;
 
-/** A level or loss to a tenth of a dB; a trace of nothing is 0.0 and never -0.0. */
+/** A level, a loss or an angle to a tenth; a trace of nothing is 0.0 and never -0.0. */
 export function tenth(db: number): string {
   const text = db.toFixed(1);
   return text === "-0.0" ? "0.0" : text;

@@ -2,7 +2,7 @@ import type { Link } from "../budget/types.ts";
 import type { Span } from "../study/span.ts";
 import type { CoverYear, YearOutage } from "../study/yearOutage.ts";
 import { cell, columns, RULE } from "./columns.ts";
-import { pathLines } from "./marginText.ts";
+import { pairName, pathLines } from "./marginText.ts";
 import { cautionLines, warningText } from "./notes.ts";
 import { capital, type Paint, paragraph, plain, tenth } from "./words.ts";
 import { availabilityFigure, hoursFigure, hoursWords, minutesFigure, monthWords } from "./yearWords.ts";
@@ -30,12 +30,6 @@ function isBare({ transmitter, receiver }: CoverYear): boolean {
   return transmitter.cover === "bare" && receiver.cover === "bare";
 }
 
-function nameOf({ transmitter, receiver }: CoverYear): string {
-  return transmitter.cover === receiver.cover
-    ? transmitter.cover
-    : `${transmitter.cover} / ${receiver.cover}`;
-}
-
 /** Rain first, then multipath, then what the cover costs; of the covers that the scenario has on. */
 function answer({ covers, mode, multipath, reserveDb }: YearOutage, { modes }: Link): string[] {
   const own = covers[0]!;
@@ -53,7 +47,7 @@ function answer({ covers, mode, multipath, reserveDb }: YearOutage, { modes }: L
     multipath.occurrencePercent === 0
       ? "Multipath takes no time that counts from so short a path."
       : `Multipath takes ${hoursWords(own.wet.multipathHours)} a year besides.`,
-    ...(under?.costHours === undefined ? [] : [costSentence(nameOf(under), under.costHours)]),
+    ...(under?.costHours === undefined ? [] : [costSentence(pairName(under), under.costHours)]),
     `${capital(label)} is available for ${availabilityWords(own)} of an average year, and down for ` +
       `${monthWords(own.wet.monthMinutes)} of the worst month.`,
     `It has less than its reserve of ${reserveDb} dB for ${hoursWords(own.belowReserve.yearHours)} a year.`,
@@ -62,9 +56,9 @@ function answer({ covers, mode, multipath, reserveDb }: YearOutage, { modes }: L
 
 function rainUnder(under: CoverYear | undefined): string {
   if (under === undefined) return "";
-  if (under.clearMarginDb < 0) return `; under ${nameOf(under)} it fails in clear air already`;
+  if (under.clearMarginDb < 0) return `; under ${pairName(under)} it fails in clear air already`;
   const [wet, dry] = [hoursWords(under.wet.rainHours), hoursWords(under.dry.rainHours)];
-  return `, ${wet} under ${nameOf(under)}${wet === dry ? "" : ` (${dry} if that stayed dry)`}`;
+  return `, ${wet} under ${pairName(under)}${wet === dry ? "" : ` (${dry} if that stayed dry)`}`;
 }
 
 function availabilityWords({ wet }: CoverYear): string {
@@ -95,7 +89,7 @@ function hoursTable({ covers }: YearOutage): string {
     ["cover", "clear air", "dry", "wet", "multipath", "all, wet", "costs"].map((text) => cell(text)),
     RULE,
     ...covers.map((one) => [
-      cell(nameOf(one)),
+      cell(pairName(one)),
       cell(tenth(one.clearMarginDb)),
       cell(hoursFigure(one.dry.rainHours)),
       cell(hoursFigure(one.wet.rainHours)),
@@ -126,7 +120,7 @@ function monthTable({ covers, reserveDb }: YearOutage): string {
     ["cover", "rain", "multipath", "all", "%", `below ${reserveDb} dB`, "at mm/h"].map((text) => cell(text)),
     RULE,
     ...covers.map((one) => [
-      cell(nameOf(one)),
+      cell(pairName(one)),
       cell(minutesFigure(one.wet.rainMonthMinutes)),
       cell(minutesFigure(one.wet.multipathMonthMinutes)),
       cell(minutesFigure(one.wet.monthMinutes)),

@@ -1,20 +1,56 @@
-import { evaluate } from "../budget/evaluate.ts";
-import { withWeather } from "../budget/prepare.ts";
-import type { Case, Link } from "../budget/types.ts";
+import type { Budget, Case, Link, MechanismName } from "../budget/types.ts";
 import { bisect } from "../numeric/roots.ts";
+import { inRain } from "./rainOn.ts";
+
+/** Rates from which and up to which something holds again [mm/h]; `to` is undefined where it holds to the heaviest. */
+export interface RainStretch {
+  readonly fromMmPerH: number;
+  readonly toMmPerH: number | undefined;
+  /** The way that carries the path at its beginning. */
+  readonly mechanism: MechanismName;
+}
+
+/** The rate sought, were the margin one standard deviation less or more [mm/h]; undefined as the rate itself is. */
+export interface RateSpread {
+  readonly lowMmPerH: number | undefined;
+  readonly highMmPerH: number | undefined;
+}
 
 /** Rain rates at which a margin is used up; undefined where none up to `HEAVIEST_MM_PER_H` does it. */
 export interface BreakEven {
-  /** Margin 0 at this rate [mm/h]; 0 where the path fails in the dry already. */
+  /** Margin 0 at this rate for the first time [mm/h]; 0 where the path fails in the dry already. */
   readonly zeroMmPerH: number | undefined;
-  /** Reserve reached at this rate [mm/h]; 0 where the dry path has less. */
+  /** Reserve reached at this rate for the first time [mm/h]; 0 where the dry path has less. */
   readonly reserveMmPerH: number | undefined;
+  /** The verdict is no longer `closes` from this rate on [mm/h]; 0 where the dry path does not close. */
+  readonly closesMmPerH: number | undefined;
+  readonly zeroSpread: RateSpread;
+  readonly reserveSpread: RateSpread;
+  /** Harder rain in which the margin is back: rain that scatters may carry a path that rain has cut. */
+  readonly zeroBack: readonly RainStretch[];
+  readonly reserveBack: readonly RainStretch[];
+  readonly closesBack: readonly RainStretch[];
 }
 
 /** Rain heavier than any hour's [mm/h]. */
 export const HEAVIEST_MM_PER_H = 400;
 /** Rates are told to this [mm/h]; the rain is known far worse. */
-const RATE_STEP_MM_PER_H = 0.05;
+const RATE_STEP_MM_PER_H = 0.01;
+/**
+ * A margin over rain may turn: where rain scatter takes over it rises. The range is searched from this rate [mm/h]
+ * upwards in steps of this ratio, and each change of sign is then closed in.
+ */
+const FIRST_MM_PER_H = 0.1;
+const SCAN_RATIO = 1.13;
+
+const scan: readonly number[] = [
+  0,
+  ...Array.from(
+    { length: Math.ceil(Math.log(HEAVIEST_MM_PER_H / FIRST_MM_PER_H) / Math.log(SCAN_RATIO)) },
+    (_, i) => FIRST_MM_PER_H * SCAN_RATIO ** i,
+  ),
+  HEAVIEST_MM_PER_H,
+];
 
 /**
  * Rain rates, on the path and on the covers together, at which the margin of a case reaches the reserve and 0.
@@ -22,22 +58,57 @@ const RATE_STEP_MM_PER_H = 0.05;
  * The case's weather is kept in all but its rate: extent, wind, temperature, which ends get wet.
  */
 export function breakEven(link: Link, chosen: Case): BreakEven {
-  const { reserveDb } = link.scenario.decision;
   const base = link.scenario.weather[chosen.weather]!;
-  const known = new Map<number, number>();
-  const marginAt = (rate: number): number => {
-    const seen = known.get(rate);
-    if (seen !== undefined) return seen;
-    const weather = { ...base, rainMmPerH: { value: rate }, coversWetAsAtMmPerH: undefined, driedForMin: 0 };
-    const { marginDb } = evaluate(withWeather(link, chosen.weather, weather), chosen);
-    known.set(rate, marginDb);
-    return marginDb;
+  const budgetIn = inRain(link, chosen, chosen.weather, base, "both");
+  return breakEvenOf((rate) => budgetIn(rate, chosen.mode), link.scenario.decision.reserveDb);
+}
+
+/** The same for budgets over any rain. */
+export function breakEvenOf(budgetAt: (rateMmPerH: number) => Budget, reserveDb: number): BreakEven {
+  const open = (keepDb: number, sigmas = 0) =>
+    openRain(budgetAt, ({ marginDb, marginSigmaDb }) => marginDb + sigmas * marginSigmaDb - keepDb);
+  const spread = (keepDb: number): RateSpread => ({
+    lowMmPerH: open(keepDb, -1).firstMmPerH,
+    highMmPerH: open(keepDb, 1).firstMmPerH,
+  });
+  const zero = open(0);
+  const reserve = open(reserveDb);
+  const closes = openRain(budgetAt, ({ verdict }) => (verdict === "closes" ? 1 : -1));
+  return {
+    zeroMmPerH: zero.firstMmPerH,
+    reserveMmPerH: reserve.firstMmPerH,
+    closesMmPerH: closes.firstMmPerH,
+    zeroSpread: spread(0),
+    reserveSpread: spread(reserveDb),
+    zeroBack: zero.back,
+    reserveBack: reserve.back,
+    closesBack: closes.back,
   };
-  const rateFor = (wantedDb: number): number | undefined => {
-    if (marginAt(0) <= wantedDb) return 0;
-    return bisect((rate) => marginAt(rate) - wantedDb, 0, HEAVIEST_MM_PER_H, RATE_STEP_MM_PER_H);
+}
+
+/** Where a figure of the budget first falls to 0, and the stretches of rain in which it is above 0 again. */
+function openRain(
+  budgetAt: (rateMmPerH: number) => Budget,
+  figureOf: (budget: Budget) => number,
+): { readonly firstMmPerH: number | undefined; readonly back: readonly RainStretch[] } {
+  const figureAt = (rateMmPerH: number) => figureOf(budgetAt(rateMmPerH));
+  const stretches: { fromMmPerH: number; toMmPerH: number | undefined; mechanism: MechanismName }[] = [];
+  let isOpen = false;
+  for (const [i, rate] of scan.entries()) {
+    if (figureAt(rate) > 0 === isOpen) continue;
+    const turnMmPerH = i === 0 ? 0 : bisect(figureAt, scan[i - 1]!, rate, RATE_STEP_MM_PER_H)!;
+    if (isOpen) stretches.at(-1)!.toMmPerH = turnMmPerH;
+    else {
+      const mechanism = budgetAt(rate).mechanisms[0]!.name;
+      stretches.push({ fromMmPerH: turnMmPerH, toMmPerH: undefined, mechanism });
+    }
+    isOpen = !isOpen;
+  }
+  const inTheDry = figureAt(0) > 0;
+  return {
+    firstMmPerH: inTheDry ? stretches[0]!.toMmPerH : 0,
+    back: inTheDry ? stretches.slice(1) : stretches,
   };
-  return { zeroMmPerH: rateFor(0), reserveMmPerH: rateFor(reserveDb) };
 }
 
 /** The weather with the most rain among those named; the first of them where all are dry. */

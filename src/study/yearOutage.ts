@@ -8,8 +8,10 @@ import { rainWorstMonth } from "../path/fadingPeriod.ts";
 import { rainFadeValidity } from "../path/rainFade.ts";
 import type { EndName, Scenario, Weather } from "../scenario/types.ts";
 import { type MultipathOfYear, multipathOfYear } from "./multipathOfYear.ts";
+import { type BothEnds, coverPairs, endsUnder, onlyWith } from "./onlyWith.ts";
 import { type RainOfYear, rainOfYear } from "./rainOfYear.ts";
 import { difference, exact, mapSpan, type Span, sum } from "./span.ts";
+import { warningsOnce } from "./warningsOnce.ts";
 
 /** How long a path lies below a margin, in an average year and in its worst month. */
 export interface Outage {
@@ -88,9 +90,9 @@ export function yearOutage(link: Link, mode: string): YearOutage {
   const rain = rainOfYear(scenario, climate, path);
   const { sharesBelow, warnings: multipathWarnings, ...multipath } = multipathOfYear(scenario, climate, path);
   const clear = clearWeather(scenario);
-  const warnings = new Map<string, Warning>();
+  const warnings = warningsOnce();
 
-  const yearOf = (ends: Pick<CoverYear, EndName>, bare: CoverYear | undefined): CoverYear => {
+  const yearOf = (ends: BothEnds, bare: CoverYear | undefined): CoverYear => {
     const own = onlyWith(link, ends);
     const budgetIn = (weather: Weather) => {
       const chosen: Case = { ...ends, weather: RAINING, mode };
@@ -99,7 +101,7 @@ export function yearOutage(link: Link, mode: string): YearOutage {
     const inRain = (rateMmPerH: number, rainFadeDb: number, wets: readonly EndName[]) =>
       budgetIn({ ...clear, rainMmPerH: { value: rateMmPerH }, rainFadeDb, wets });
     const { marginDb: clearMarginDb, mechanisms } = budgetIn(clear);
-    for (const warning of sightWarnings(mechanisms[0]!)) warnings.set(warning.code, warning);
+    warnings.add(sightWarnings(mechanisms[0]!));
     const outage = (keepDb: number, wets: readonly EndName[]): Outage => {
       const left = (rateMmPerH: number, fadeDb: number) => inRain(rateMmPerH, fadeDb, wets).marginDb - keepDb;
       return outageOf(rainBelow(rain, clearMarginDb - keepDb, left), sharesBelow(clearMarginDb - keepDb));
@@ -109,11 +111,7 @@ export function yearOutage(link: Link, mode: string): YearOutage {
       rateMmPerH: rain.rainRate001MmPerH,
       pathFadeDb: rain.deepDb,
     };
-    for (const warning of inRain(rateMmPerH, pathFadeDb, BOTH_ENDS).warnings) {
-      // Covers turn wet in the same rain but fail in another, so that figures alone make no other doubt.
-      const { code, where, message } = warning;
-      warnings.set(`${code} ${where} ${message.replace(/[\d.]+/g, "")}`, warning);
-    }
+    warnings.add(inRain(rateMmPerH, pathFadeDb, BOTH_ENDS).warnings);
     return {
       ...ends,
       clearMarginDb,
@@ -124,14 +122,9 @@ export function yearOutage(link: Link, mode: string): YearOutage {
     };
   };
 
-  const bare = yearOf(endsWith(scenario, "bare", "bare"), undefined);
-  const pairs = [
-    [scenario.transmitter.cover, scenario.receiver.cover] as const,
-    ...Object.keys(scenario.covers).map((cover) => [cover, cover] as const),
-  ];
-  const once = new Map(pairs.map(([sent, heard]) => [JSON.stringify([sent, heard]), [sent, heard] as const]));
-  const covers = [...once.values()].map(([sent, heard]) =>
-    sent === "bare" && heard === "bare" ? bare : yearOf(endsWith(scenario, sent, heard), bare),
+  const bare = yearOf(endsUnder(link, "bare", "bare"), undefined);
+  const covers = coverPairs(link).map((ends) =>
+    ends.transmitter.cover === "bare" && ends.receiver.cover === "bare" ? bare : yearOf(ends, bare),
   );
   const ranges = outside(rainFadeValidity, {
     frequencyGHz: scenario.frequencyGHz,
@@ -149,21 +142,10 @@ export function yearOutage(link: Link, mode: string): YearOutage {
     multipath,
     covers,
     warnings: [
-      ...warnings.values(),
+      ...warnings.all(),
       ...ranges.map(overreachWarning("rain of the year by P.530", "climate")),
       ...multipathWarnings,
     ],
-  };
-}
-
-function endsWith(
-  { transmitter, receiver }: Scenario,
-  sent: string,
-  heard: string,
-): Pick<CoverYear, EndName> {
-  return {
-    transmitter: { feed: transmitter.feed, cover: sent },
-    receiver: { feed: receiver.feed, cover: heard },
   };
 }
 
@@ -193,22 +175,6 @@ function clearWeather({ weather }: Scenario): Weather {
     one.rainMmPerH.value + one.fogGPerM3 + (one.coversWetAsAtMmPerH ?? 0) + one.dewMm.value + one.iceMm ===
       0 && one.snow === undefined;
   return (all.find(isClear) ?? all[0]!).freed;
-}
-
-/** A link with the mouths of one choice alone, so that a weather more costs no more than it must. */
-function onlyWith(link: Link, ends: Pick<CoverYear, EndName>): Link {
-  const only = (end: EndName) => {
-    const { feed, cover } = ends[end];
-    const ready = link.ends[end][feed]!;
-    return {
-      [feed]: {
-        ...ready,
-        mouthUnder: { [cover]: ready.mouthUnder[cover]! },
-        mouth: { [cover]: ready.mouth[cover]! },
-      },
-    };
-  };
-  return { ...link, ends: { transmitter: only("transmitter"), receiver: only("receiver") } };
 }
 
 type RainShare = { readonly percent: Span; readonly atRain: Outage["atRain"] };

@@ -44,7 +44,7 @@ const chain = [
   "NOISE",
   "  290 K in the bandwidth",
   "  receiver's noise",
-  "  antenna at ",
+  "  sky and ground, ",
   "  line's noise",
   "  noise of feed and cover",
   "RESULT",
