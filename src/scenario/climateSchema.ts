@@ -41,7 +41,9 @@ const gradient = described(
   z
     .union([z.string(), z.number()], { error: ({ input }) => instead(input, GRADIENT) })
     .transform((input, context) => {
-      const written = String(input).trim().replace(/^[−–]/, "-");
+      const written = String(input)
+        .trim()
+        .replace(/^[\u2212\u2013]/, "-");
       const [, figure] = /^([+-]?\d+(?:\.\d+)?)\s*(?:N(?:-units)?\/km)?$/.exec(written) ?? [];
       const value = Number(figure);
       if (value >= -2000 && value <= 500) return value;

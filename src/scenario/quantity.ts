@@ -116,7 +116,7 @@ export function unitOf(kind: QuantityKind): Unit {
 export const LONGEST_TEXT = 200;
 
 const numberThenRest = /^([+-]?)(?:(\d+) +(\d+\/\d+)|(\d+\/\d+)|((?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?))(.*)$/i;
-const spreadSign = /\s*(?:\+\/?-|±)\s*/;
+const spreadSign = /\s*(?:\+\/?-|\u00b1)\s*/;
 
 /**
  * Reads what stands in a scenario where a quantity is needed.
@@ -142,16 +142,19 @@ export function readQuantity(
   return readSpread(text, kind);
 }
 
-/** Typographic signs to the plain ones that the grammar knows. */
+/**
+ * Typographic signs to the plain ones that the grammar knows. Patterns have them by number: the bundler leaves patterns
+ * as they are, and the program is read as plain ASCII.
+ */
 export function tidy(text: string): string {
   return text
     .trim()
     .replace(/\s/g, " ")
-    .replace(/[−–]/g, "-")
-    .replace(/μ/g, "µ") // Greek mu to the micro sign
-    .replace(/º/g, "°") // ordinal sign, a common slip
-    .replace(/[′’]/g, "'")
-    .replace(/[″”]|''/g, '"');
+    .replace(/[\u2212\u2013]/g, "-")
+    .replace(/\u03bc/g, "µ") // Greek mu to the micro sign
+    .replace(/\u00ba/g, "°") // ordinal sign, a common slip
+    .replace(/[\u2032\u2019]/g, "'")
+    .replace(/[\u2033\u201d]|''/g, '"');
 }
 
 export function refuse(
@@ -228,12 +231,12 @@ function split(text: string): { number: number; unit: string } | undefined {
   const unit = rest!
     .trim()
     .replace(/ *\/ */g, "/")
-    .replace(/° (?=[CF]$)/i, "°");
+    .replace(/\u00b0 (?=[CF]$)/i, "°");
   return { number: sign === "-" ? -magnitude : magnitude, unit };
 }
 
 function refuseUnit(text: string, written: string, kind: QuantityKind): Refusal {
-  if (!/^[\p{L}°%"'µ][\p{L}\d°/^³-]*$/u.test(written)) {
+  if (!/^[\p{L}\u00b0%"'\u00b5][\p{L}\d\u00b0/^\u00b3-]*$/u.test(written)) {
     return refuse("unreadable", text, kind, undefined, true);
   }
   const strict = withOtherCase(written);

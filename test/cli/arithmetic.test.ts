@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { MarginReport } from "../../src/study/marginReport.ts";
-import { changedDemo, oilskin, temporaryFolder } from "./run.ts";
+import { changedDemo, demo, oilskin, temporaryFolder } from "./run.ts";
 
 const folder = temporaryFolder();
 
@@ -23,5 +23,15 @@ describe("arithmetic in a scenario", () => {
     expect({ status, stdout }).toEqual({ status: 2, stdout: "" });
     expect(stderr).toContain(`${file}:29:47: read "2 * 3/32 on"`);
     expect(stderr).not.toMatch(/^ +at /m);
+  });
+});
+
+describe("typographic signs in a scenario", () => {
+  it("are read by the built program as their plain ones", () => {
+    const plain = changedDemo(folder, "plain.yaml", "dry: {}", "dry: { temperature: -5 degC }");
+    const typographic = changedDemo(folder, "signs.yaml", "dry: {}", "dry: { temperature: \u22125 \u00b0C }");
+    expect(oilskin(["budget", typographic])).toEqual(oilskin(["budget", plain]));
+    const spread = changedDemo(folder, "spread.yaml", "0.22 dB +/- 0.04 dB", "0.22 dB \u00b1 0.04 dB");
+    expect(oilskin(["budget", spread])).toEqual(oilskin(["budget", demo]));
   });
 });

@@ -24,6 +24,13 @@ describe("the package", () => {
     expect(named.filter((file) => !existsSync(join(root, file)))).toEqual([]);
   });
 
+  it("is plain ASCII where the program is read as such: a sign in a pattern would match nothing", () => {
+    for (const bundle of ["program", "quick"]) {
+      const text = readFileSync(join(root, `dist/${bundle}.cjs`), "utf8");
+      expect([...text.matchAll(/.{0,30}[^\0-\x7f]/g)].map(([place]) => place)).toEqual([]);
+    }
+  });
+
   it("declares every package that the library loads", () => {
     const text = readFileSync(join(root, manifest.exports["."]!.import), "utf8");
     const loaded = [...text.matchAll(/^(?:import|export) .*from "([^"]+)"|import\("([^"]+)"\)/gm)]
