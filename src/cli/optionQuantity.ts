@@ -53,20 +53,32 @@ export function listOption(
   unit: string,
   most: number,
 ): number[] {
-  const values = texts.flatMap((text) => {
+  const faults: string[] = [];
+  const read = (text: string): number => {
+    try {
+      return within(option, text, kind, range, `${range[0]} to ${range[1]} ${unit}`);
+    } catch (error) {
+      if (!(error instanceof UserError)) throw error;
+      faults.push(error.message);
+      return Number.NaN;
+    }
+  };
+  const values = texts.flatMap((list) => {
     let following = unit;
-    const parts = text.split(",").map((part) => part.trim());
-    return parts
+    const withUnit = (text: string) => {
+      const reading = readQuantity(text, kind);
+      if (reading.ok) following = reading.unit;
+      return !reading.ok && reading.code === "bare_number" ? `${text} ${following}` : text;
+    };
+    const last = list.split(",").toReversed();
+    return last
+      .map((part) => withUnit(part.trim()))
       .toReversed()
-      .map((part) => {
-        const isBare = /^[+-]?[\d./ e-]+$/i.test(part);
-        if (!isBare) following = part.replace(/^[+-]?[\d./ ]+(e[+-]?\d+)?/i, "").trim();
-        const whole = isBare ? `${part} ${following}` : part;
-        return within(option, whole, kind, range, `${range[0]} to ${range[1]} ${unit}`);
-      })
-      .toReversed();
+      .map(read);
   });
-  if (values.length > most)
-    throw new UserError(`${option}: ${values.length} of them; at most ${most} are shown`);
+  if (faults.length > 0) throw new UserError(faults.join("\n"));
+  if (values.length > most) {
+    throw new UserError(`${option}: ${values.length} values, expected ${most} at most`);
+  }
   return values;
 }

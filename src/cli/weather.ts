@@ -50,7 +50,7 @@ export const weatherCommand = new Command("weather")
       listOption("--rates", options.rates, "rainRateMmPerH", RATES_MM_PER_H, "mm/h", MOST_RATES);
     if (ratesMmPerH?.every((rate) => rate === 0)) {
       throw new UserError(
-        "--rates: no rain is the lowest rung of itself; name a rate above it, such as 2.5 mm/h",
+        "--rates: no rain is always the lowest rung; name a rate above it, such as 2.5 mm/h",
       );
     }
     const extentsKm =

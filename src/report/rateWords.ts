@@ -9,6 +9,11 @@ export function rateFigure(rateMmPerH: number): string {
   return rateMmPerH < 10 ? rateMmPerH.toFixed(1) : rateMmPerH.toFixed(0);
 }
 
+/** A rate or an extent that was asked for, as it was asked for where it is round. */
+export function askedFigure(value: number): string {
+  return String(Number(value.toPrecision(3)));
+}
+
 /** A break-even rate: `46`, `over 400`. */
 export function breakEvenFigure(rateMmPerH: number | undefined): string {
   return rateMmPerH === undefined ? `over ${HEAVIEST_MM_PER_H}` : rateFigure(rateMmPerH);

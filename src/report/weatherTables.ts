@@ -6,7 +6,7 @@ import type { CoverLadder, ModeLadder, WeatherLadder } from "../study/weatherLad
 import { chart } from "./chart.ts";
 import { cell, columns, RULE } from "./columns.ts";
 import { marginCell, meanings, pairName } from "./marginText.ts";
-import { breakEvenFigure, spreadFigure, wayWords } from "./rateWords.ts";
+import { askedFigure, breakEvenFigure, spreadFigure, wayWords } from "./rateWords.ts";
 import { abreast, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** What the rain falls on, as headings say it. */
@@ -20,7 +20,7 @@ export function wordsTable({ rates }: WeatherLadder): string {
     [cell("mm/h"), ...authorities.map(({ authority }) => cell(authority))],
     RULE,
     ...rainy.map(({ rateMmPerH, words }) => [
-      cell(String(rateMmPerH)),
+      cell(askedFigure(rateMmPerH)),
       ...words.map(({ word }) => cell(word)),
     ]),
   ]);
@@ -90,7 +90,7 @@ export function coverTable({ rungs }: CoverLadder, { ground }: Link, paint: Pain
     ],
     RULE,
     ...rungs.both.map(({ rateMmPerH, mechanism }, i) => [
-      cell(String(rateMmPerH)),
+      cell(askedFigure(rateMmPerH)),
       ...rainOns.map((on) => marginCell(rungs[on][i]!, paint)),
       ...(ground === undefined ? [] : [cell(wayWords[mechanism])]),
     ]),
@@ -105,7 +105,7 @@ export function extentsTable(
 ): string {
   const head = ({ kind, extentKm, isOwn }: ExtentColumn) => {
     const words = {
-      stated: `${extentKm} km`,
+      stated: `${askedFigure(extentKm ?? 0)} km`,
       whole: `all ${path.distanceKm.toFixed(1)}`,
       effective: "P.530",
     };
@@ -121,7 +121,7 @@ export function extentsTable(
       [cell("mm/h"), ...some.map((column) => cell(head(column)))],
       RULE,
       ...extents.columns[0]!.rungs.map(({ rateMmPerH }, i) => [
-        cell(String(rateMmPerH)),
+        cell(askedFigure(rateMmPerH)),
         ...some.map(({ rungs }) => {
           const { marginDb, verdict } = rungs[i]!;
           const text = tenth(marginDb);

@@ -4,7 +4,7 @@ import type { ModeLadder, WeatherLadder } from "../study/weatherLadder.ts";
 import { dishCoverText } from "./coversText.ts";
 import { pairName, pathLines } from "./marginText.ts";
 import { handsOnText, warningText } from "./notes.ts";
-import { backLines } from "./rateWords.ts";
+import { askedFigure, backLines } from "./rateWords.ts";
 import { breakEvenTables, coverTable, extentsTable, marginChart, wordsTable } from "./weatherTables.ts";
 import { keptSentence, modeAnswer, waySentence } from "./weatherWords.ts";
 import { capital, listed, type Paint, paragraph, percent, plain, tenth } from "./words.ts";
@@ -33,7 +33,7 @@ function modeText(one: ModeLadder, ladder: WeatherLadder, link: Link, paint: Pai
   const beyond =
     extents.beyondKm.length === 0
       ? ""
-      : `\n${paragraph(`Rain over ${listed(extents.beyondKm.map(String))} km is all of the path.`)}`;
+      : `\n${paragraph(`Rain over ${listed(extents.beyondKm.map(askedFigure))} km is all of the path.`)}`;
   const back = covers.flatMap((cover) => backLines(pairName(cover), cover.breakEven.both));
   return [
     [

@@ -2,7 +2,7 @@ import type { Link } from "../budget/types.ts";
 import type { RainStretch } from "../study/breakEven.ts";
 import type { CoverLadder, ModeLadder, WeatherLadder } from "../study/weatherLadder.ts";
 import { pairName } from "./marginText.ts";
-import { backWords, rainWordsText, rateFigure, wayWords } from "./rateWords.ts";
+import { askedFigure, backWords, rainWordsText, rateFigure, wayWords } from "./rateWords.ts";
 import { capital, listed, tenth } from "./words.ts";
 
 export function isBare({ transmitter, receiver }: CoverLadder): boolean {
@@ -80,7 +80,7 @@ function partsSentence(own: CoverLadder, { weather, rates }: WeatherLadder, { sc
   const taken = (on: keyof CoverLadder["rungs"]) =>
     tenth(own.rungs[on][0]!.marginDb - own.rungs[on][at]!.marginDb);
   const [path, covers, both] = [taken("path"), taken("covers"), taken("both")];
-  const rain = `At ${rates[at]!.rateMmPerH} mm/h rain on the path takes ${path} dB`;
+  const rain = `At ${askedFigure(rates[at]!.rateMmPerH)} mm/h rain on the path takes ${path} dB`;
   if (covers === "0.0") return `${rain}, water on the covers none that could be told.`;
   return `${rain}, water on the covers ${covers} dB and both together ${both} dB.`;
 }
@@ -110,10 +110,10 @@ export function waySentence({ covers }: ModeLadder, { ground }: Link): string {
   const said = spans.map(({ way, first, last }, i) => {
     const rain =
       i === 0
-        ? `up to ${last} mm/h`
+        ? `up to ${askedFigure(last)} mm/h`
         : i === spans.length - 1
-          ? `from ${first} mm/h on`
-          : `from ${first} to ${last} mm/h`;
+          ? `from ${askedFigure(first)} mm/h on`
+          : `from ${askedFigure(first)} to ${askedFigure(last)} mm/h`;
     return i === 0 ? `${way} carries the path ${rain}` : `${way} ${rain}`;
   });
   return `${capital(listed(said))}.`;
