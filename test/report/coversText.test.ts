@@ -10,6 +10,7 @@ import { coversText } from "../../src/report/coversText.ts";
 import { handsOnText } from "../../src/report/notes.ts";
 import { plain } from "../../src/report/words.ts";
 import type { Weather } from "../../src/scenario/types.ts";
+import type { BreakEven } from "../../src/study/breakEven.ts";
 import {
   type CoverJudgement,
   type CoverRow,
@@ -30,6 +31,18 @@ const weathers = {
   dry: weatherOf(),
   storm: weatherOf({ rainMmPerH: { value: 16 } }),
 };
+
+/** A path that rain only hurts. */
+const evenAt = (reserveMmPerH: number, zeroMmPerH: number | undefined): BreakEven => ({
+  zeroMmPerH,
+  reserveMmPerH,
+  closesMmPerH: reserveMmPerH,
+  zeroSpread: { lowMmPerH: zeroMmPerH, highMmPerH: undefined },
+  reserveSpread: { lowMmPerH: reserveMmPerH, highMmPerH: undefined },
+  zeroBack: [],
+  reserveBack: [],
+  closesBack: [],
+});
 
 /** A row of figures typed by hand. */
 const row = (change: Partial<CoverRow>): CoverRow => ({
@@ -64,7 +77,7 @@ function judgement(
     durability: [],
     rippleDb: { transmitter: 0, receiver: 0 },
     repeatabilityDb: 0.07,
-    breakEven: { zeroMmPerH: 40, reserveMmPerH: 22 },
+    breakEven: evenAt(22, 40),
     ...more,
   };
 }
@@ -219,8 +232,15 @@ describe("the tables", () => {
         .split("\n")
         .find((line) => line.startsWith("film"))!
         .replace(/\s+/g, " ");
-    expect(rates({ reserveMmPerH: 4.26, zeroMmPerH: 31.7 })).toBe("film 4.3 mm/h 32 mm/h");
-    expect(rates({ reserveMmPerH: 0, zeroMmPerH: undefined })).toBe("film without rain not by 400 mm/h");
+    expect(rates(evenAt(4.26, 31.7))).toBe("film 4.3 mm/h 32 mm/h");
+    expect(rates(evenAt(0, undefined))).toBe("film without rain not by 400 mm/h");
+    // Below the table a line says where harder rain brings something back, and a path that rain only hurts has none.
+    const text = (breakEven: BreakEven) => flowing(textOf([judgement("film", {}, { breakEven })]));
+    const back = [{ fromMmPerH: 12.4, toMmPerH: 30.6, mechanism: "rain_scatter" }] as const;
+    expect(text({ ...evenAt(0, 3), zeroBack: back })).toContain(
+      "film: something is left from 12 to 31 mm/h (by rain scatter). Outdoors",
+    );
+    expect(text(evenAt(0, 3))).not.toContain("something is left");
   });
 
   it("tell of ripple but where it was measured, or bare", () => {
@@ -340,7 +360,7 @@ describe("the verdict as data", () => {
       `cover, ${i}`,
       { verdict, costDb: 1.25, dryCostDb: { low: 0.1, nominal: 0.2, high: 0.3 } },
       {
-        breakEven: { zeroMmPerH: undefined, reserveMmPerH: 0 },
+        breakEven: evenAt(0, undefined),
       },
     ),
   );
@@ -371,6 +391,6 @@ describe("the verdict as data", () => {
     const read = JSON.parse(coversJson(verdictOf([perfect]))) as CoverVerdict;
     expect(read.covers[0]!.rows[0]!.receiver.returnLossDb.nominal).toBeNull();
     expect(read.worstWeather).toBe("storm");
-    expect(read.covers[0]!.breakEven).toEqual({ zeroMmPerH: 40, reserveMmPerH: 22 });
+    expect(read.covers[0]!.breakEven).toMatchObject({ zeroMmPerH: 40, reserveMmPerH: 22 });
   });
 });
