@@ -5,8 +5,8 @@ import { listed, paragraph } from "./words.ts";
 
 /** A rain rate, to what rain is known to at the best. */
 export function rateFigure(rateMmPerH: number): string {
-  if (rateMmPerH === 0) return "0";
-  return rateMmPerH < 10 ? rateMmPerH.toFixed(1) : rateMmPerH.toFixed(0);
+  if (rateMmPerH < 0.095) return String(Number(rateMmPerH.toPrecision(1)));
+  return rateMmPerH.toFixed(rateMmPerH < 9.95 ? 1 : 0);
 }
 
 /** A rate or an extent that was asked for, as it was asked for where it is round. */
@@ -49,8 +49,9 @@ export const wayWords = {
 export function backWords(stretches: readonly RainStretch[]): string {
   return listed(
     stretches.map(({ fromMmPerH, toMmPerH, mechanism }) => {
-      const to = toMmPerH === undefined ? " on" : ` to ${rateFigure(toMmPerH)}`;
-      return `from ${rateFigure(fromMmPerH)}${to} mm/h (by ${wayWords[mechanism]})`;
+      const from = `from ${rateFigure(fromMmPerH)}`;
+      const rain = toMmPerH === undefined ? `${from} mm/h on` : `${from} to ${rateFigure(toMmPerH)} mm/h`;
+      return `${rain} (by ${wayWords[mechanism]})`;
     }),
   );
 }

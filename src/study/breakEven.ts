@@ -1,6 +1,7 @@
-import type { Budget, Case, Link, MechanismName } from "../budget/types.ts";
+import type { Case, Link, MechanismName } from "../budget/types.ts";
 import { bisect } from "../numeric/roots.ts";
 import { inRain } from "./rainOn.ts";
+import type { Rung } from "./rung.ts";
 
 /** Rates from which and up to which something holds again [mm/h]; `to` is undefined where it holds to the heaviest. */
 export interface RainStretch {
@@ -59,21 +60,21 @@ const scan: readonly number[] = [
  */
 export function breakEven(link: Link, chosen: Case): BreakEven {
   const base = link.scenario.weather[chosen.weather]!;
-  const budgetIn = inRain(link, chosen, chosen.weather, base, "both");
-  return breakEvenOf((rate) => budgetIn(rate, chosen.mode), link.scenario.decision.reserveDb);
+  const rungIn = inRain(link, chosen, [chosen.mode], chosen.weather, base, "both");
+  return breakEvenOf((rate) => rungIn(rate, chosen.mode), link.scenario.decision.reserveDb);
 }
 
-/** The same for budgets over any rain. */
-export function breakEvenOf(budgetAt: (rateMmPerH: number) => Budget, reserveDb: number): BreakEven {
+/** The same for the rungs of any ladder. */
+export function breakEvenOf(rungAt: (rateMmPerH: number) => Rung, reserveDb: number): BreakEven {
   const open = (keepDb: number, sigmas = 0) =>
-    openRain(budgetAt, ({ marginDb, marginSigmaDb }) => marginDb + sigmas * marginSigmaDb - keepDb);
+    openRain(rungAt, ({ marginDb, marginSigmaDb }) => marginDb + sigmas * marginSigmaDb - keepDb);
   const spread = (keepDb: number): RateSpread => ({
     lowMmPerH: open(keepDb, -1).firstMmPerH,
     highMmPerH: open(keepDb, 1).firstMmPerH,
   });
   const zero = open(0);
   const reserve = open(reserveDb);
-  const closes = openRain(budgetAt, ({ verdict }) => (verdict === "closes" ? 1 : -1));
+  const closes = openRain(rungAt, ({ verdict }) => (verdict === "closes" ? 1 : -1));
   return {
     zeroMmPerH: zero.firstMmPerH,
     reserveMmPerH: reserve.firstMmPerH,
@@ -86,12 +87,12 @@ export function breakEvenOf(budgetAt: (rateMmPerH: number) => Budget, reserveDb:
   };
 }
 
-/** Where a figure of the budget first falls to 0, and the stretches of rain in which it is above 0 again. */
+/** Where a figure first falls to 0, and the stretches of rain in which it is above 0 again. */
 function openRain(
-  budgetAt: (rateMmPerH: number) => Budget,
-  figureOf: (budget: Budget) => number,
+  rungAt: (rateMmPerH: number) => Rung,
+  figureOf: (rung: Rung) => number,
 ): { readonly firstMmPerH: number | undefined; readonly back: readonly RainStretch[] } {
-  const figureAt = (rateMmPerH: number) => figureOf(budgetAt(rateMmPerH));
+  const figureAt = (rateMmPerH: number) => figureOf(rungAt(rateMmPerH));
   const stretches: { fromMmPerH: number; toMmPerH: number | undefined; mechanism: MechanismName }[] = [];
   let isOpen = false;
   for (const [i, rate] of scan.entries()) {
@@ -99,7 +100,7 @@ function openRain(
     const turnMmPerH = i === 0 ? 0 : bisect(figureAt, scan[i - 1]!, rate, RATE_STEP_MM_PER_H)!;
     if (isOpen) stretches.at(-1)!.toMmPerH = turnMmPerH;
     else {
-      const mechanism = budgetAt(rate).mechanisms[0]!.name;
+      const { mechanism } = rungAt(rate);
       stretches.push({ fromMmPerH: turnMmPerH, toMmPerH: undefined, mechanism });
     }
     isOpen = !isOpen;

@@ -2,8 +2,8 @@ import type { EndChoice, Link, Warning } from "../budget/types.ts";
 import type { Weather } from "../scenario/types.ts";
 import { type BreakEven, breakEvenOf } from "./breakEven.ts";
 import type { BothEnds } from "./onlyWith.ts";
-import { inRain } from "./rainOn.ts";
-import { type Rung, rungOf } from "./rung.ts";
+import { inRain, plainRung } from "./rainOn.ts";
+import type { Rung } from "./rung.ts";
 
 /** Rain of one extent on path and covers. */
 export interface ExtentColumn {
@@ -48,15 +48,15 @@ export function extentTable(
   const ownKm = base.extentKm === undefined ? undefined : Math.min(base.extentKm, distanceKm);
   const column = (kind: ExtentColumn["kind"], extentKm: number | undefined): ExtentColumn => {
     const weather: Weather = { ...base, extentKm };
-    const budgetIn = inRain(link, ends, name, weather, "both");
-    const budgetAt = (rateMmPerH: number) => budgetIn(rateMmPerH, mode);
-    for (const rate of ratesMmPerH) heard(budgetAt(rate).warnings);
+    const rungIn = inRain(link, ends, [mode], name, weather, "both");
+    const rungAt = (rateMmPerH: number) => rungIn(rateMmPerH, mode);
+    for (const rate of ratesMmPerH) heard(rungAt(rate).warnings);
     return {
       kind,
       extentKm,
       isOwn: extentKm === ownKm,
-      rungs: ratesMmPerH.map((rate) => rungOf(rate, budgetAt(rate))),
-      breakEven: breakEvenOf(budgetAt, reserveDb),
+      rungs: ratesMmPerH.map((rate) => plainRung(rungAt(rate))),
+      breakEven: breakEvenOf(rungAt, reserveDb),
     };
   };
   return {

@@ -1,15 +1,25 @@
 import { evaluate } from "../budget/evaluate.ts";
 import { withWeather } from "../budget/prepare.ts";
-import type { Budget, Link } from "../budget/types.ts";
+import type { Link, Warning } from "../budget/types.ts";
 import type { Weather } from "../scenario/types.ts";
 import { type BothEnds, onlyWith } from "./onlyWith.ts";
+import { type Rung, rungOf } from "./rung.ts";
 
 /** What rain falls on: the path alone, as when the covers lie sheltered; the covers alone, as after a shower; both. */
 export type RainOn = "path" | "covers" | "both";
 export const rainOns: readonly RainOn[] = ["path", "covers", "both"];
 
-/** Budget of one choice in rain of a rate [mm/h]. */
-export type InRain = (rateMmPerH: number, mode: string) => Budget;
+/** What is kept of a budget: thousands of whole ones would fill the memory. */
+export interface RainRung extends Rung {
+  readonly warnings: readonly Warning[];
+}
+
+export function plainRung({ warnings, ...rung }: RainRung): Rung {
+  return rung;
+}
+
+/** One choice of covers in rain of a rate [mm/h]. */
+export type InRain = (rateMmPerH: number, mode: string) => RainRung;
 
 /** A weather with rain of another rate; extent, wind, temperature, the ends that get wet, dew, ice and snow are kept. */
 export function rainedOn(base: Weather, rateMmPerH: number, on: RainOn): Weather {
@@ -22,24 +32,31 @@ export function rainedOn(base: Weather, rateMmPerH: number, on: RainOn): Weather
 }
 
 /**
- * Budgets of one choice of feeds and covers over the rain rate; each rate is worked out once.
+ * One choice of feeds and covers over the rain rate; each rate is worked out once, for all modes.
  *
  * @param name  of the weather that is varied: warnings name it
  * @param base  that weather, or another that is to stand in its place
  */
-export function inRain(link: Link, ends: BothEnds, name: string, base: Weather, on: RainOn): InRain {
+export function inRain(
+  link: Link,
+  ends: BothEnds,
+  modes: readonly string[],
+  name: string,
+  base: Weather,
+  on: RainOn,
+): InRain {
   const own = onlyWith(link, ends);
-  const links = new Map<number, Link>();
-  const budgets = new Map<string, Budget>();
-  const linkAt = (rateMmPerH: number): Link => {
-    const known = links.get(rateMmPerH) ?? withWeather(own, name, rainedOn(base, rateMmPerH, on));
-    links.set(rateMmPerH, known);
-    return known;
-  };
+  const known = new Map<number, readonly RainRung[]>();
   return (rateMmPerH, mode) => {
-    const key = `${rateMmPerH} ${mode}`;
-    const known = budgets.get(key) ?? evaluate(linkAt(rateMmPerH), { ...ends, weather: name, mode });
-    budgets.set(key, known);
-    return known;
+    let rungs = known.get(rateMmPerH);
+    if (rungs === undefined) {
+      const rained = withWeather(own, name, rainedOn(base, rateMmPerH, on));
+      rungs = modes.map((one) => {
+        const budget = evaluate(rained, { ...ends, weather: name, mode: one });
+        return { ...rungOf(rateMmPerH, budget), warnings: budget.warnings };
+      });
+      known.set(rateMmPerH, rungs);
+    }
+    return rungs[modes.indexOf(mode)]!;
   };
 }

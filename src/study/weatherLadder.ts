@@ -3,8 +3,8 @@ import type { EndChoice, Link, PathGeometry, Warning } from "../budget/types.ts"
 import { type BreakEven, breakEvenOf, HEAVIEST_MM_PER_H, rainiest } from "./breakEven.ts";
 import { type BothEnds, coverPairs, endsUnder } from "./onlyWith.ts";
 import { type ExtentTable, extentTable } from "./rainExtents.ts";
-import { type InRain, inRain, type RainOn, rainOns } from "./rainOn.ts";
-import { type Rung, rungOf } from "./rung.ts";
+import { type InRain, inRain, plainRung, type RainOn, rainOns } from "./rainOn.ts";
+import type { Rung } from "./rung.ts";
 import { warningsOnce } from "./warningsOnce.ts";
 
 /** One choice of covers, feeds as the scenario has them. */
@@ -89,7 +89,7 @@ export function weatherLadder(link: Link, choices: LadderChoices = {}): WeatherL
 
   const choice = coverPairs(link).map((ends) => ({
     ends,
-    budgets: byRainOn((on) => inRain(link, ends, weather, base, on)),
+    rungIn: byRainOn((on) => inRain(link, ends, modes, weather, base, on)),
   }));
   const shown = cover === undefined ? choice[0]!.ends : endsUnder(link, cover, cover);
   return {
@@ -103,11 +103,11 @@ export function weatherLadder(link: Link, choices: LadderChoices = {}): WeatherL
       words: rainWords({ rainRateMmPerH: rateMmPerH }),
     })),
     modes: modes.map((mode) => {
-      const ladders = choice.map(({ ends, budgets }) => ladderOf(ends, budgets, mode));
+      const ladders = choice.map(({ ends, rungIn }) => ladderOf(ends, rungIn, mode));
       const curveMmPerH = curveRates(ladders, ratesMmPerH.at(-1)!);
       const covers = ladders.map((ladder, i) => ({
         ...ladder,
-        curveDb: curveMmPerH.map((rate) => choice[i]!.budgets.both(rate, mode).marginDb),
+        curveDb: curveMmPerH.map((rate) => choice[i]!.rungIn.both(rate, mode).marginDb),
       }));
       const extents = extentTable(link, shown, weather, mode, ratesMmPerH, extentsKm, warnings.add);
       return { mode, covers, curveMmPerH, extents };
@@ -115,16 +115,16 @@ export function weatherLadder(link: Link, choices: LadderChoices = {}): WeatherL
     warnings: warnings.all(),
   };
 
-  function ladderOf(ends: BothEnds, budgets: Readonly<Record<RainOn, InRain>>, mode: string) {
+  function ladderOf(ends: BothEnds, rungIn: Readonly<Record<RainOn, InRain>>, mode: string) {
     const rungs = byRainOn((on) =>
       ratesMmPerH.map((rate) => {
-        const budget = budgets[on](rate, mode);
-        warnings.add(budget.warnings);
-        return rungOf(rate, budget);
+        const rung = rungIn[on](rate, mode);
+        warnings.add(rung.warnings);
+        return plainRung(rung);
       }),
     );
     const breakEven = byRainOn((on) =>
-      breakEvenOf((rate) => budgets[on](rate, mode), scenario.decision.reserveDb),
+      breakEvenOf((rate) => rungIn[on](rate, mode), scenario.decision.reserveDb),
     );
     return { ...ends, rungs, breakEven };
   }
