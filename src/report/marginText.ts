@@ -111,7 +111,7 @@ export function pairName({ transmitter, receiver }: Pick<Case, "transmitter" | "
     : `${transmitter.cover} / ${receiver.cover}`;
 }
 
-export function coverName({ case: chosen }: ReportBudget): string {
+export function coverName({ case: chosen }: Pick<ReportBudget, "case">): string {
   return pairName(chosen);
 }
 

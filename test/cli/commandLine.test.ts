@@ -4,7 +4,9 @@ import { describe, expect, it } from "vitest";
 import { materials } from "../../src/cover/materials.ts";
 import { demo, oilskin, root, scenarioFile, scenarioNames, shell, widest } from "./run.ts";
 
-const commands = ["budget", "covers", "compare", "thickness", "check", "new", "materials", "schema"];
+const commands = [
+  ...["budget", "covers", "spread", "weather", "compare", "thickness", "check", "new", "materials", "schema"],
+];
 const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8")) as { version: string };
 const ESCAPE = "\u001b";
 

@@ -103,6 +103,13 @@ describe("the lines on the path", () => {
     return pathLines(marginReport(link, []), link, plain).split("\n");
   };
 
+  it("knows no elevation of minus nothing", () => {
+    const link = prepare(scenarioOf());
+    const level = { ...link.path, elevationDeg: -0.04, backElevationDeg: -0.06 };
+    const lines = pathLines({ ...marginReport(link, []), path: level }, link, plain).split("\n");
+    expect(lines).toContain("elevation 0.0 deg out, -0.1 deg back");
+  });
+
   it("gives distance, frequency, headings and elevations", () => {
     // A degree of the equator is 111.32 km.
     expect(linesOf("Scar to Fell").slice(0, 3)).toEqual([
