@@ -6,7 +6,7 @@ import { pairName, pathLines } from "./marginText.ts";
 import { handsOnText, warningText } from "./notes.ts";
 import { askedFigure, backLines } from "./rateWords.ts";
 import { breakEvenTables, coverTable, extentsTable, marginChart, wordsTable } from "./weatherTables.ts";
-import { keptSentence, modeAnswer, waySentence } from "./weatherWords.ts";
+import { keptSentence, modeAnswer, partsSentence, waySentence } from "./weatherWords.ts";
 import { capital, listed, type Paint, paragraph, percent, plain, tenth } from "./words.ts";
 
 /** The rain ladder: how hard it may rain first, then the rungs behind it. */
@@ -14,8 +14,10 @@ export function weatherText(ladder: WeatherLadder, link: Link, paint: Paint = pl
   const { modes } = ladder;
   const parts = [
     pathLines(ladder, link, paint),
-    ...modes.map((one) => paragraph(modeAnswer(one, ladder, link))),
-    [waySentence(modes[0]!, link), keptSentence(ladder, link)].map((text) => paragraph(text)).join("\n"),
+    ...modes.map((one) => paragraph(modeAnswer(one, link))),
+    [partsSentence(ladder, link), waySentence(modes[0]!, link), keptSentence(ladder, link)]
+      .map((text) => paragraph(text))
+      .join("\n"),
     dishCoverText(link),
     `${paint("strong", "Rain in words")}\n${wordsTable(ladder)}`,
     ...modes.flatMap((one) => modeText(one, ladder, link, paint)),

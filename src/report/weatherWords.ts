@@ -9,15 +9,14 @@ export function isBare({ transmitter, receiver }: CoverLadder): boolean {
   return transmitter.cover === "bare" && receiver.cover === "bare";
 }
 
-/** The answer for a mode: how hard it may rain, what the cover takes of that, and what takes how much. */
-export function modeAnswer({ mode, covers }: ModeLadder, ladder: WeatherLadder, link: Link): string {
+/** The answer for a mode: how hard it may rain, and what the cover takes of that. */
+export function modeAnswer({ mode, covers }: ModeLadder, link: Link): string {
   const own = covers[0]!;
   const bare = covers.find(isBare)!;
   const under = isBare(own) ? "with bare feeds" : `under ${pairName(own)}`;
   return [
     `${capital(link.modes[mode]!.label)} ${fate(own, under)}.`,
     ...(own === bare ? [] : [`Bare, it ${fate(bare)}${coverCost(own, bare)}.`]),
-    partsSentence(own, ladder, link),
   ].join(" ");
 }
 
@@ -71,7 +70,8 @@ function coverCost(own: CoverLadder, bare: CoverLadder): string {
 }
 
 /** What rain on the path, water on the covers and both together take in one rain. */
-function partsSentence(own: CoverLadder, { weather, rates }: WeatherLadder, { scenario }: Link): string {
+export function partsSentence({ weather, rates, modes }: WeatherLadder, { scenario }: Link): string {
+  const own = modes[0]!.covers[0]!;
   const at = tellingRung(
     own,
     rates.map(({ rateMmPerH }) => rateMmPerH),
@@ -81,7 +81,8 @@ function partsSentence(own: CoverLadder, { weather, rates }: WeatherLadder, { sc
     tenth(own.rungs[on][0]!.marginDb - own.rungs[on][at]!.marginDb);
   const [path, covers, both] = [taken("path"), taken("covers"), taken("both")];
   const rain = `At ${askedFigure(rates[at]!.rateMmPerH)} mm/h rain on the path takes ${path} dB`;
-  if (covers === "0.0") return `${rain}, water on the covers none that could be told.`;
+  // A model of wet covers that starts from rain on the path charges nothing for water by itself.
+  if (covers === "0.0" && both === path) return `${rain}, water on the covers none that could be told.`;
   return `${rain}, water on the covers ${covers} dB and both together ${both} dB.`;
 }
 
