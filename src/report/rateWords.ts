@@ -11,7 +11,7 @@ export function rateFigure(rateMmPerH: number): string {
 
 /** A rate or an extent that was asked for, as it was asked for where it is round. */
 export function askedFigure(value: number): string {
-  return String(Number(value.toPrecision(3)));
+  return String(Number(value.toPrecision(4)));
 }
 
 /** A break-even rate: `46`, `over 400`. */

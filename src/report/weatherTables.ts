@@ -80,21 +80,23 @@ function marksOf(names: readonly string[]): string[] {
   });
 }
 
-/** One cover: rate by what the rain falls on. */
+/** One cover: rate by what the rain falls on, and where there is ground, the way that carries the path. */
 export function coverTable({ rungs }: CoverLadder, { ground }: Link, paint: Paint): string {
-  return columns([
-    [
-      cell("mm/h"),
-      ...rainOns.map((on) => cell(onHeads[on])),
-      ...(ground === undefined ? [] : [cell("carried by")]),
-    ],
-    RULE,
-    ...rungs.both.map(({ rateMmPerH, mechanism }, i) => [
-      cell(askedFigure(rateMmPerH)),
-      ...rainOns.map((on) => marginCell(rungs[on][i]!, paint)),
-      ...(ground === undefined ? [] : [cell(wayWords[mechanism])]),
+  const margins = rainOns.map((on) => ({
+    head: onHeads[on],
+    cellAt: (i: number, paint: Paint) => marginCell(rungs[on][i]!, paint),
+  }));
+  const way = { head: "carried by", cellAt: (i: number) => cell(wayWords[rungs.both[i]!.mechanism]) };
+  return abreast(ground === undefined ? margins : [...margins, way], (some, measured) =>
+    columns([
+      [cell("mm/h"), ...some.map(({ head }) => cell(head))],
+      RULE,
+      ...rungs.both.map(({ rateMmPerH }, i) => [
+        cell(askedFigure(rateMmPerH)),
+        ...some.map(({ cellAt }) => cellAt(i, measured ? plain : paint)),
+      ]),
     ]),
-  ]);
+  );
 }
 
 /** Margin by rate and extent, and below it how hard it may rain over each. */

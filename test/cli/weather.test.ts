@@ -54,6 +54,12 @@ describe("oilskin weather", () => {
     },
   );
 
+  it("keeps to 80 columns in the heaviest rain", () => {
+    const text = textOf(ridge, "--rates", "399.5,400", "--extents", "33.25,44.5", "--mode", "cw");
+    expect(text).toMatch(/-\d\d\.\d ±\d\d\.\d fails/);
+    expect(widest(text)).toBeLessThanOrEqual(80);
+  });
+
   it("answers first, in figures and words that are those of the data", () => {
     const [, answer] = textOf(demo).split("\n\n").map(flowing) as [string, string];
     const { modes, weather } = ladderOf(demo);
