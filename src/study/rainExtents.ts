@@ -1,7 +1,7 @@
 import type { EndChoice, Link, Warning } from "../budget/types.ts";
 import type { Weather } from "../scenario/types.ts";
 import { type BreakEven, breakEvenOf } from "./breakEven.ts";
-import type { BothEnds } from "./onlyWith.ts";
+import type { BothEnds } from "./coverPairs.ts";
 import { inRain, plainRung } from "./rainOn.ts";
 import type { Rung } from "./rung.ts";
 

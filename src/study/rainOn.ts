@@ -1,8 +1,9 @@
 import { evaluate } from "../budget/evaluate.ts";
+import { onlyWith } from "../budget/onlyWith.ts";
 import { withWeather } from "../budget/prepare.ts";
 import type { Link, Warning } from "../budget/types.ts";
 import type { Weather } from "../scenario/types.ts";
-import { type BothEnds, onlyWith } from "./onlyWith.ts";
+import type { BothEnds } from "./coverPairs.ts";
 import { type Rung, rungOf } from "./rung.ts";
 
 /** What rain falls on: the path alone, as when the covers lie sheltered; the covers alone, as after a shower; both. */
@@ -45,7 +46,7 @@ export function inRain(
   base: Weather,
   on: RainOn,
 ): InRain {
-  const own = onlyWith(link, ends);
+  const own = onlyWith(link, [ends]);
   const known = new Map<number, readonly RainRung[]>();
   return (rateMmPerH, mode) => {
     let rungs = known.get(rateMmPerH);

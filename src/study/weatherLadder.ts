@@ -1,7 +1,7 @@
 import { rainWords } from "../atmosphere/rainWords.ts";
 import type { EndChoice, Link, PathGeometry, Warning } from "../budget/types.ts";
 import { type BreakEven, breakEvenOf, HEAVIEST_MM_PER_H, rainiest } from "./breakEven.ts";
-import { type BothEnds, coverPairs, endsUnder } from "./onlyWith.ts";
+import { type BothEnds, coverPairs, endsUnder } from "./coverPairs.ts";
 import { type ExtentTable, extentTable } from "./rainExtents.ts";
 import { type InRain, inRain, plainRung, type RainOn, rainOns } from "./rainOn.ts";
 import type { Rung } from "./rung.ts";

@@ -1,4 +1,5 @@
 import { evaluate } from "../budget/evaluate.ts";
+import { onlyWith } from "../budget/onlyWith.ts";
 import { overreachWarning } from "../budget/overreach.ts";
 import { withWeather } from "../budget/prepare.ts";
 import type { Budget, Case, EndChoice, Link, PathGeometry, Warning } from "../budget/types.ts";
@@ -7,8 +8,8 @@ import { bisect } from "../numeric/roots.ts";
 import { rainWorstMonth } from "../path/fadingPeriod.ts";
 import { rainFadeValidity } from "../path/rainFade.ts";
 import type { EndName, Scenario, Weather } from "../scenario/types.ts";
+import { type BothEnds, coverPairs, endsUnder } from "./coverPairs.ts";
 import { type MultipathOfYear, multipathOfYear } from "./multipathOfYear.ts";
-import { type BothEnds, coverPairs, endsUnder, onlyWith } from "./onlyWith.ts";
 import { type RainOfYear, rainOfYear } from "./rainOfYear.ts";
 import { difference, exact, mapSpan, type Span, sum } from "./span.ts";
 import { warningsOnce } from "./warningsOnce.ts";
@@ -93,7 +94,7 @@ export function yearOutage(link: Link, mode: string): YearOutage {
   const warnings = warningsOnce();
 
   const yearOf = (ends: BothEnds, bare: CoverYear | undefined): CoverYear => {
-    const own = onlyWith(link, ends);
+    const own = onlyWith(link, [ends]);
     const budgetIn = (weather: Weather) => {
       const chosen: Case = { ...ends, weather: RAINING, mode };
       return evaluate(withWeather(own, RAINING, weather), chosen);

@@ -4,22 +4,6 @@ import type { EndName } from "../scenario/types.ts";
 /** Feeds and covers of both ends. */
 export type BothEnds = Pick<Case, EndName>;
 
-/** A link with the mouths of one choice alone, so that a weather more costs no more than it must. */
-export function onlyWith(link: Link, ends: BothEnds): Link {
-  const only = (end: EndName) => {
-    const { feed, cover } = ends[end];
-    const ready = link.ends[end][feed]!;
-    return {
-      [feed]: {
-        ...ready,
-        mouthUnder: { [cover]: ready.mouthUnder[cover]! },
-        mouth: { [cover]: ready.mouth[cover]! },
-      },
-    };
-  };
-  return { ...link, ends: { transmitter: only("transmitter"), receiver: only("receiver") } };
-}
-
 /** The scenario's feeds under a cover each. */
 export function endsUnder({ scenario }: Link, sent: string, heard: string): BothEnds {
   return {
