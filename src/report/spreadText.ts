@@ -7,8 +7,8 @@ import { adviceText, rankingTable } from "./spreadAdvice.ts";
 import { agreementText } from "./spreadAgreement.ts";
 import { spreadCautions } from "./spreadCautions.ts";
 import { rangePicture } from "./spreadPicture.ts";
-import { matterWords, scatterWords } from "./spreadWords.ts";
-import { abreast, capital, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { scatterWords } from "./spreadWords.ts";
+import { abreast, capital, lengthOf, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** How sure the verdict is, in words; then margins, covers, what the spread hangs on, and what a budget says. */
 export function spreadText(
@@ -131,14 +131,12 @@ function share(part: number): string {
   return part > 0 && part < 0.0005 ? "<0.1" : (100 * part).toFixed(1);
 }
 
+/** Every cause with its distribution, a line each or two. */
 function causeTable({ causes }: SpreadStudy): string {
-  return columns([
-    ["what", "how it scatters", "by"].map((head) => cell(head)),
-    RULE,
-    ...causes.map(({ label, matter, end, scatter, unit, stated }) => [
-      cell(`${end === undefined ? "" : `${end}: `}${label === "aim" ? matterWords[matter].name : label}`),
-      cell(scatterWords({ scatter, unit })),
-      cell(stated ? "scenario" : "usual"),
-    ]),
-  ]);
+  const lines = causes.map(({ label, end, scatter, unit, stated }) => ({
+    name: end === undefined ? label : `${end}, ${label}`,
+    how: `${scatterWords({ scatter, unit })}${stated ? " (scenario)" : ""}`,
+  }));
+  const width = Math.max(...lines.map(({ name }) => lengthOf(name))) + 2;
+  return lines.map(({ name, how }) => paragraph(how, `  ${name.padEnd(width)}`)).join("\n");
 }
