@@ -134,7 +134,7 @@ function share(part: number): string {
 /** Every cause with its distribution, a line each or two. */
 function causeTable({ causes }: SpreadStudy): string {
   const lines = causes.map(({ label, end, scatter, unit, stated }) => ({
-    name: end === undefined ? label : `${end}, ${label}`,
+    name: end === undefined || label.startsWith(end) ? label : `${end}, ${label}`,
     how: `${scatterWords({ scatter, unit })}${stated ? " (scenario)" : ""}`,
   }));
   const width = Math.max(...lines.map(({ name }) => lengthOf(name))) + 2;

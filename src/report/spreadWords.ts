@@ -53,7 +53,7 @@ function words(scatter: Scatter, unit: Cause["unit"]): string {
   const units = { dB: "dB", K: "K", deg: "deg", share: "%", rate: "mm/h" }[unit];
   switch (scatter.kind) {
     case "normal":
-      if (unit === "share" && scatter.sigma === 1) return "normal, by cover";
+      if (unit === "share" && scatter.sigma === 1) return "by the cover's own figures";
       return `normal, ${figure(scatter.sigma)} ${units}`;
     case "lognormal":
       return `log-normal, factor ${Number(scatter.factor.toPrecision(3))}`;

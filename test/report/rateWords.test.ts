@@ -25,7 +25,13 @@ describe("rates", () => {
   });
 
   it("that were asked for stay as they were written, to four digits", () => {
-    expect([0.5, 16, 12.7, 804.672, 1 / 3].map(askedFigure)).toEqual(["0.5", "16", "12.7", "804.7", "0.3333"]);
+    expect([0.5, 16, 12.7, 804.672, 1 / 3].map(askedFigure)).toEqual([
+      "0.5",
+      "16",
+      "12.7",
+      "804.7",
+      "0.3333",
+    ]);
   });
 
   it("of break-even are bounded by the heaviest rain", () => {
