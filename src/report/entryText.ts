@@ -65,7 +65,7 @@ function entriesAbreast(shown: readonly Column[]): string {
 }
 
 function stageRows(shown: readonly Column[], stage: Stage): Cell[][] {
-  const labelOf = (id: string) => shown.map(({ byId }) => byId.get(id)?.label).find(Boolean) ?? id;
+  const labelOf = (id: string) => sharedLabel(shown.flatMap(({ byId }) => byId.get(id)?.label ?? [])) || id;
   const title =
     stage === "transmitter" || stage === "receiver"
       ? `${stage.toUpperCase()}, cover ${shown[0]!.budget.case[stage].cover}`
@@ -83,6 +83,21 @@ function stageRows(shown: readonly Column[], stage: Stage): Cell[][] {
       }),
     ]),
   ];
+}
+
+/** One label for a row: figures that differ from weather to weather as a range, `rain, 5.0-16.1 km of it`. */
+function sharedLabel(labels: readonly string[]): string {
+  const [first = [], ...others] = labels.map((label) => label.split(" "));
+  if (others.some(({ length }) => length !== first.length)) return first.join(" ");
+  return first
+    .map((word, i) => {
+      const words = [...new Set([word, ...others.map((other) => other[i]!)])];
+      if (words.length === 1) return word;
+      if (words.some((one) => Number.isNaN(Number(one)))) return words.join("/");
+      const rising = words.sort((a, b) => Number(a) - Number(b));
+      return `${rising[0]}-${rising.at(-1)}`;
+    })
+    .join(" ");
 }
 
 /** Ids of a stage in the order of the budgets; an entry that only one weather has keeps its place. */

@@ -77,6 +77,20 @@ describe("the table of entries", () => {
     expect(labels.indexOf("rain")).toBe(labels.indexOf("space") + 1);
   });
 
+  it("tells figures of a label that differ between weathers as a range, and not those of the first", () => {
+    const rain = (weather: string, label: string) =>
+      budgetIn(weather, [entry("path.rain", "path", -4, { label })]);
+    const labelOf = (...labels: readonly string[]) =>
+      entryTable([dry, ...labels.map((label, i) => rain(`rain ${i}`, label))])
+        .split("\n")
+        .find((line) => line.startsWith("  rain"))!
+        .trim()
+        .split(/ {2,}/)[0];
+    expect(labelOf("rain, 16.1 km of it", "rain, 5.0 km of it")).toBe("rain, 5.0-16.1 km of it");
+    expect(labelOf("rain, 8.0 km of it", "rain, 8.0 km of it")).toBe("rain, 8.0 km of it");
+    expect(labelOf("rain, 8.0 km", "rain, all km")).toBe("rain, 8.0/all km");
+  });
+
   it("raises the noise where the receiver adds to it", () => {
     expect(rowOf(table, "thermal")).toEqual(["thermal", "-140.0", "-140.0"]);
     expect(rowOf(table, "receiver")).toEqual(["receiver", "2.0", "-138.0", "2.0", "-138.0"]);
