@@ -54,10 +54,18 @@ export function inRain(
       const rained = withWeather(own, name, rainedOn(base, rateMmPerH, on));
       rungs = modes.map((one) => {
         const budget = evaluate(rained, { ...ends, weather: name, mode: one });
-        return { ...rungOf(rateMmPerH, budget), warnings: budget.warnings };
+        const warnings = budget.warnings.filter((warning) => !isLadders(warning, name));
+        return { ...rungOf(rateMmPerH, budget), warnings };
       });
       known.set(rateMmPerH, rungs);
     }
     return rungs[modes.indexOf(mode)]!;
   };
+}
+
+/** What a rung sets in the weather, or leaves without rain: idle by the ladder's doing and not by the scenario's. */
+const SET_BY_LADDER: readonly string[] = ["extent", "covers_wet_as_at", "dried_for"];
+
+function isLadders({ code, where }: Warning, name: string): boolean {
+  return code === "idle_input" && SET_BY_LADDER.some((key) => where === `weather.${name}.${key}`);
 }

@@ -53,6 +53,23 @@ function budgetWith(scenario: Scenario, weather: Weather): Budget {
   return budgetOf({ ...scenario, weather: { now: weather } }, "now");
 }
 
+describe("doubts of a ladder", () => {
+  const idle = (scenario: Scenario) =>
+    laddersOf(scenario)
+      .warnings.filter(({ code }) => code === "idle_input")
+      .map(({ where }) => where);
+
+  it("name nothing that only the ladder made idle: its rungs without rain have an extent as well", () => {
+    expect(idle(scenarioIn({}))).toEqual([]);
+    expect(idle(scenarioIn({ wets: [] }))).toEqual([]);
+    expect(idle(scenarioIn({ driedForMin: 20, coversWetAsAtMmPerH: 5 }))).toEqual([]);
+  });
+
+  it("still name what the scenario states without effect", () => {
+    expect(idle(scenarioIn({ fogExtentKm: 4 }))).toEqual(["weather.wet.fog_extent"]);
+  });
+});
+
 describe("a rung", () => {
   const scenario = scenarioIn({ windMPerS: 7, temperatureC: 6 });
   const own = firstOf(scenario).covers[0]!;
