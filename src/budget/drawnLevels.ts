@@ -115,7 +115,8 @@ export function causeOf(
   input?: Uncertain,
 ): Cause {
   const scatter = input?.scatter ?? ({ kind: "normal", sigma } as const);
-  return { id, matter, end, label, scatter, unit: "dB", stated: isStated(input), still: stillOf(scatter) };
+  const unit = matter === "power" ? "dBm" : "dB";
+  return { id, matter, end, label, scatter, unit, stated: isStated(input), still: stillOf(scatter) };
 }
 
 export function isStated(input: Uncertain | undefined): boolean {

@@ -48,13 +48,13 @@ export function scatterWords({ scatter, unit }: Pick<Cause, "scatter" | "unit">)
 function words(scatter: Scatter, unit: Cause["unit"]): string {
   const figure = (value: number) => {
     const shown = unit === "share" ? 100 * value : value;
-    return `${Number(shown.toPrecision(2))}`;
+    return `${Number(shown.toPrecision(Math.abs(shown) < 10 ? 2 : 3))}`;
   };
-  const units = { dB: "dB", K: "K", deg: "deg", share: "%", rate: "mm/h" }[unit];
+  const units = { dB: "dB", dBm: "dBm", K: "K", deg: "deg", share: "%", rate: "mm/h" }[unit];
   switch (scatter.kind) {
     case "normal":
       if (unit === "share" && scatter.sigma === 1) return "by the cover's own figures";
-      return `normal, ${figure(scatter.sigma)} ${units}`;
+      return `normal, ${figure(scatter.sigma)} ${unit === "dBm" ? "dB" : units}`; // a difference of levels
     case "lognormal":
       return `log-normal, factor ${Number(scatter.factor.toPrecision(3))}`;
     case "flat":
@@ -64,8 +64,13 @@ function words(scatter: Scatter, unit: Cause["unit"]): string {
     case "mixture":
       return scatter.parts
         .map(({ share, value, scatter: own }) => {
-          const what = own === undefined ? `${figure(value)} ${units}` : words(own, unit);
-          return `${Number((100 * share).toPrecision(3))} % ${what}`;
+          // A normal and a log-normal are told by their width alone; here nothing else says about what.
+          const about = own === undefined || own.kind === "normal" || own.kind === "lognormal";
+          const what = [
+            ...(about ? [`${figure(value)} ${units}`] : []),
+            ...(own === undefined ? [] : [words(own, unit)]),
+          ];
+          return `${Number((100 * share).toPrecision(3))} % ${what.join(", ")}`;
         })
         .join("; ");
   }
