@@ -107,9 +107,13 @@ function advice(
     ...(Math.abs(knownLowDb - lowDb) >= 0.05
       ? [`the 5 % margin would move by ${signed(knownLowDb - lowDb)} dB`]
       : []),
-    ...(Math.abs(points) >= 1 ? [`the chance to close by +${points.toFixed(0)} points`] : []),
+    ...(Math.abs(points) >= 1 ? [`the chance to close by ${pointsWords(Math.round(points))}`] : []),
   ];
   const effect =
     gains.length > 0 ? ` Were it as the scenario has it for sure, in ${one.weather} ${listed(gains)}.` : "";
   return `${capital(name)}: ${advice}.${effect}`;
+}
+
+function pointsWords(points: number): string {
+  return `${points > 0 ? "+" : ""}${points} point${Math.abs(points) === 1 ? "" : "s"}`;
 }

@@ -3,7 +3,7 @@ import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
 import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
 import { coverName } from "./marginText.ts";
 import { matterWords } from "./spreadWords.ts";
-import { listed, paragraph, signed, tenth } from "./words.ts";
+import { listed, paragraph, percent, signed, tenth } from "./words.ts";
 
 /** What a median and a chance may differ by before it is worth a word [dB, share]. */
 const MEDIAN_DB = 0.3;
@@ -69,7 +69,9 @@ function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): str
       : []),
   ];
   const { budget, marginDb, closes } = row;
-  const here = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, chance ${(100 * closes.share).toFixed(0)} for ${(100 * budget.holdProbability).toFixed(0)} %`;
+  const [drawn, summed] = [percent(closes.share), percent(budget.holdProbability)];
+  const chance = drawn === summed ? `chance ${drawn} in both` : `chance ${drawn} for ${summed}`;
+  const here = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, ${chance}`;
   return `${one.weather}, ${coverName(ranking)}: ${here}; because ${reasons.length > 0 ? reasons.join("; ") : "the tails are no normal ones"}.`;
 }
 
@@ -91,9 +93,9 @@ function rateReason(weather: string, { doubts, scenario }: Link): string[] {
 }
 
 function bentReason({ matter, skewness, shiftDb }: MatterOfSpread): string {
-  const { name } = matterWords[matter];
-  const moves = `moves the mean by ${signed(shiftDb)} dB`;
+  const { name, many } = matterWords[matter];
+  const moves = `${many ? "move" : "moves"} the mean by ${signed(shiftDb)} dB`;
   if (Math.abs(skewness) <= SKEW) return `${name} ${moves}`;
-  const tail = `${name} has its long tail towards ${skewness < 0 ? "loss" : "gain"}`;
+  const tail = `${name} ${many ? "have their" : "has its"} long tail towards ${skewness < 0 ? "loss" : "gain"}`;
   return Math.abs(shiftDb) > SHIFT_DB ? `${tail} and ${moves}` : tail;
 }

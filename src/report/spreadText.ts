@@ -52,7 +52,7 @@ const leftOut = paragraph(
 );
 
 function howDrawn({ mode, draws, mostDraws, seed, halfWidth, precision }: SpreadStudy, link: Link): string {
-  const points = (100 * halfWidth).toPrecision(1);
+  const points = Number((100 * halfWidth).toPrecision(1));
   const stop =
     draws < mostDraws
       ? `enough for chances good to ${points} points`
@@ -60,7 +60,7 @@ function howDrawn({ mode, draws, mostDraws, seed, halfWidth, precision }: Spread
         ? `chances good to ${points} points`
         : `chances good to ${points} points, where ${Number((100 * precision).toPrecision(2))} were asked for`;
   return (
-    `${capital(link.modes[mode]!.label)}: ${draws.toLocaleString("en-GB")} draws, ${stop} (95 %), the same draws for all ` +
+    `${capital(link.modes[mode]!.label)}: ${draws.toLocaleString("en-GB")} draw${draws === 1 ? "" : "s"}, ${stop} (95 %), the same draws for all ` +
     `covers and weathers; seed ${seed}.`
   );
 }
@@ -75,9 +75,9 @@ function sentence(rows: readonly SpreadRow[], weather: string): string {
   const lost = 100 * row.lost;
   const won = 100 * row.won;
   const turned =
-    lost + won < 0.1
+    lost + won < 0.05
       ? "the cover changes no answer"
-      : `the cover loses ${countOf(lost)} contacts in a hundred${won >= 0.1 ? ` and wins ${countOf(won)}` : ""}`;
+      : `the cover loses ${countOf(lost)} contacts in a hundred${won >= 0.05 ? ` and wins ${countOf(won)}` : ""}`;
   return `${answer}; against bare feeds ${turned}.`;
 }
 

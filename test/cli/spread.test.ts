@@ -130,6 +130,24 @@ describe("oilskin spread", () => {
     }
   });
 
+  it("speaks of few draws and of likely answers in plain numbers", () => {
+    const one = flowing(textOf(demo, "--draws", "1", "--weather", "dry"));
+    expect(one).toMatch(/: 1 draw, chances good to \d\d points/);
+    const few = flowing(textOf(demo, "--draws", "10", "--weather", "dry"));
+    expect(few).toMatch(/: 10 draws, chances good to \d\d points/);
+    const all = flowing(textOf(demo, ...quick));
+    expect(all).not.toMatch(/chance 100/);
+    expect(all).toMatch(/chance over 99 % (in both|for)/);
+  });
+
+  it("says that the cover loses what its table has as lost, however few", () => {
+    const ridge = `${root}scenarios/over-the-ridge.yaml`;
+    const { rows } = studyOf(ridge, "--weather", "thunderstorm");
+    expect(100 * rows[0]!.lost).toBeCloseTo(0.1, 1);
+    const text = flowing(textOf(ridge, "--weather", "thunderstorm"));
+    expect(text).toContain(`the cover loses ${(100 * rows[0]!.lost).toFixed(1)} contacts in a hundred`);
+  });
+
   it.each([
     [["--draws", "0"], /--draws: read "0", expected a whole number from 1 to 1000000/],
     [["--draws", "-5"], /--draws: read "-5"/],
