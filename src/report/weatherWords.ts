@@ -77,13 +77,24 @@ export function partsSentence({ weather, rates, modes }: WeatherLadder, { scenar
     rates.map(({ rateMmPerH }) => rateMmPerH),
     scenario.weather[weather]!.rainMmPerH.value,
   );
-  const taken = (on: keyof CoverLadder["rungs"]) =>
-    tenth(own.rungs[on][0]!.marginDb - own.rungs[on][at]!.marginDb);
+  const taken = (on: keyof CoverLadder["rungs"]) => own.rungs[on][0]!.marginDb - own.rungs[on][at]!.marginDb;
   const [path, covers, both] = [taken("path"), taken("covers"), taken("both")];
-  const rain = `At ${askedFigure(rates[at]!.rateMmPerH)} mm/h rain on the path takes ${path} dB`;
+  const rain = `At ${askedFigure(rates[at]!.rateMmPerH)} mm/h rain on the path ${change(path)}`;
   // A model of wet covers that starts from rain on the path charges nothing for water by itself.
-  if (covers === "0.0" && both === path) return `${rain}, water on the covers none that could be told.`;
-  return `${rain}, water on the covers ${covers} dB and both together ${both} dB.`;
+  if (tenth(covers) === "0.0" && tenth(both) === tenth(path)) {
+    return `${rain}, water on the covers none that could be told.`;
+  }
+  // Rain that scatters a signal over a hill brings more than it takes.
+  if (path <= -0.05 || both <= -0.05) {
+    return `${rain}, water on the covers ${change(covers)}, and both together ${change(both, "s")}.`;
+  }
+  return `${rain}, water on the covers ${tenth(covers)} dB and both together ${tenth(both)} dB.`;
+}
+
+/** What rain does to a margin that goes down by so much [dB]. */
+function change(lossDb: number, plural = ""): string {
+  const verb = lossDb <= -0.05 ? "bring" : "take";
+  return `${verb}${plural === "" ? "s" : ""} ${tenth(Math.abs(lossDb))} dB`;
 }
 
 /** The rung of the weather's own rain, or the hardest rain that leaves something; never that without rain. */

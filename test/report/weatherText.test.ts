@@ -186,6 +186,22 @@ describe("the answer", () => {
   });
 });
 
+describe("rain that scatters a signal over a hill", () => {
+  it("brings what it does not take", () => {
+    const lifted = coverLadder("film", evenAt(30, 40), {
+      rungs: {
+        path: rungsOf([20, 20.1, 20.6]),
+        covers: rungsOf([20, 19, 16.1]),
+        both: rungsOf([20, 19, 17]),
+      },
+    });
+    const text = flowing(textOf([lifted, coverLadder("bare", evenAt(31, 42))]));
+    expect(text).toContain(
+      "At 60 mm/h rain on the path brings 0.6 dB, water on the covers takes 3.9 dB, and both together take 3.0 dB.",
+    );
+  });
+});
+
 describe("below the answer", () => {
   const covers = [coverLadder("film", evenAt(23, 34)), coverLadder("bare", evenAt(31, 42))];
 
