@@ -1,6 +1,7 @@
 import type { Link } from "../budget/types.ts";
 import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
+import { dishCoverText } from "./coversText.ts";
 import { coverName, meanings, pathLines } from "./marginText.ts";
 import { warningText } from "./notes.ts";
 import { adviceText, rankingTable } from "./spreadAdvice.ts";
@@ -21,6 +22,7 @@ export function spreadText(
   const parts = [
     pathLines(study, link, paint),
     paragraph(howDrawn(study, link)),
+    dishCoverText(link),
     weathers.map((weather) => paragraph(sentence(rowsIn(weather), weather), "- ")).join("\n"),
     ...weathers.map((weather) =>
       [

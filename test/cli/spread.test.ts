@@ -140,6 +140,14 @@ describe("oilskin spread", () => {
     expect(all).toMatch(/chance over 99 % (in both|for)/);
   });
 
+  it("tells of a cover over the dish, which bare feeds have before them as well", () => {
+    const roofed = changedDemo(folder, "roofed.yaml", "dish: tripod,", "dish: tripod, dish_cover: sheet,");
+    expect(flowing(textOf(roofed, ...quick))).toContain(
+      "Over the dish: sheet (receiver). It stays in every margin",
+    );
+    expect(textOf(demo, ...quick)).not.toContain("Over the dish");
+  });
+
   it("says that the cover loses what its table has as lost, however few", () => {
     const ridge = `${root}scenarios/over-the-ridge.yaml`;
     const { rows } = studyOf(ridge, "--weather", "thunderstorm");
