@@ -31,12 +31,13 @@ export function pathLines(
   paint: Paint,
 ): string {
   const { from, to } = path;
-  const names = [from.name, to.name].filter((name) => name !== undefined && !title.includes(name));
+  const names = [from.name, to.name].filter((name) => name !== undefined);
+  const isTitled = names.every((name) => title.toLowerCase().includes(name.toLowerCase()));
   const doubt = path.headingErrorDeg >= 0.05 ? `, good to ${tenth(path.headingErrorDeg)} deg` : "";
   return [
     paint("strong", paragraph(title)),
     paragraph(
-      `${names.length > 0 ? `${names.join(" to ")}: ` : ""}${path.distanceKm.toFixed(1)} km at ` +
+      `${isTitled ? "" : `${names.join(" to ")}: `}${path.distanceKm.toFixed(1)} km at ` +
         `${Number(frequencyGHz.toPrecision(6))} GHz, ${link.scenario.polarization}`,
     ),
     `heading ${tenth(path.headingDeg)} deg TRUE out, ${tenth(path.backHeadingDeg)} deg TRUE back${doubt}`,

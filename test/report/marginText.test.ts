@@ -121,6 +121,11 @@ describe("the lines on the path", () => {
 
   it("names the ends where the title does not", () => {
     expect(linesOf("Contest")[1]).toBe("Scar to Fell: 111.3 km at 10.368 GHz, horizontal");
+    expect(linesOf("Scar in August")[1]).toBe("Scar to Fell: 111.3 km at 10.368 GHz, horizontal");
+  });
+
+  it("takes a name in the title for the same in small letters", () => {
+    expect(linesOf("From Scar to the fell")[1]).toBe("111.3 km at 10.368 GHz, horizontal");
   });
 
   it("says how good the heading is where a locator leaves it open", () => {
