@@ -9,7 +9,7 @@ import { agreementText } from "./spreadAgreement.ts";
 import { spreadCautions } from "./spreadCautions.ts";
 import { rangePicture } from "./spreadPicture.ts";
 import { scatterWords } from "./spreadWords.ts";
-import { abreast, capital, lengthOf, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { abreast, capital, lengthOf, listed, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** How sure the verdict is, in words; then margins, covers, what the spread hangs on, and what a budget says. */
 export function spreadText(
@@ -74,13 +74,14 @@ function sentence(rows: readonly SpreadRow[], weather: string): string {
   const range = `${tenth(marginDb.medianDb)} dB in the middle, ${tenth(marginDb.lowDb)} to ${tenth(marginDb.highDb)} dB in nine draws of ten`;
   const answer = `${capital(weather)}: ${coverName(row)} closes in ${chance(closes.share)} of the draws (${range})`;
   if (row.costDb === undefined) return `${answer}.`;
-  const lost = 100 * row.lost;
-  const won = 100 * row.won;
-  const turned =
-    lost + won < 0.05
-      ? "the cover changes no answer"
-      : `the cover loses ${countOf(lost)} contacts in a hundred${won >= 0.05 ? ` and wins ${countOf(won)}` : ""}`;
-  return `${answer}; against bare feeds ${turned}.`;
+  const turned = [
+    { verb: "loses", hundredth: 100 * row.lost },
+    { verb: "wins", hundredth: 100 * row.won },
+  ].filter(({ hundredth }) => hundredth >= 0.05);
+  const what = turned.map(
+    ({ verb, hundredth }, i) => `${verb} ${countOf(hundredth)}${i === 0 ? " contacts in a hundred" : ""}`,
+  );
+  return `${answer}; against bare feeds the cover ${what.length === 0 ? "changes no answer" : listed(what)}.`;
 }
 
 const countOf = (hundredth: number) => hundredth.toFixed(hundredth < 9.95 ? 1 : 0);

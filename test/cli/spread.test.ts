@@ -154,6 +154,10 @@ describe("oilskin spread", () => {
     expect(100 * rows[0]!.lost).toBeCloseTo(0.1, 1);
     const text = flowing(textOf(ridge, "--weather", "thunderstorm"));
     expect(text).toContain(`the cover loses ${(100 * rows[0]!.lost).toFixed(1)} contacts in a hundred`);
+    const weak = changedDemo(folder, "weak.yaml", "power: 10 mW,", "power: 0.05 mW,");
+    const weakly = flowing(textOf(weak, "--draws", "20000", "--weather", "dry"));
+    expect(weakly).toMatch(/the cover (loses|wins) \d/);
+    expect(weakly).not.toMatch(/(loses|wins) 0\.0 /);
   });
 
   it.each([
