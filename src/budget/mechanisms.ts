@@ -29,6 +29,15 @@ const LEAST_CELL_HEIGHT_KM = 1;
 /** Gain times the square of a beam's width [deg^2]: from memory. */
 const GAIN_BEAMWIDTH2 = 30_000;
 
+/** Falling drops shift and smear what they scatter: common practice, no source. */
+const SCATTER_SPREADS: Warning = {
+  code: "scatter_spreads",
+  message:
+    "rain scatter smears a signal over some 50 Hz and more: a mode narrower than that loses what its narrow filter " +
+    "gains, which is not charged, and voice comes rough",
+  where: "path",
+};
+
 const lineOfSight: Omit<Mechanism, "lossDb"> = {
   name: "line_of_sight",
   label: "line of sight",
@@ -200,7 +209,7 @@ function rainScatter(
       excessDb: lossDb - freeSpaceDb,
       sigmaDb: doubts.rainScatterDb,
       source: "bistatic radar equation, Z = 200 R^1.6",
-      warnings: [],
+      warnings: [SCATTER_SPREADS],
     },
   ];
 }

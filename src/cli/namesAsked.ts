@@ -3,7 +3,7 @@ import { knownName } from "./knownName.ts";
 
 /** An option that takes one name an occurrence and may be given again; it never swallows what follows the name. */
 export function namesOption(flags: string, description: string): Option {
-  return new Option(flags, `${description}; again for more`).argParser(
+  return new Option(flags, `${description}; again, or with commas, for more`).argParser(
     (name: string, before: readonly string[] | undefined) => [...(before ?? []), name],
   );
 }

@@ -1,3 +1,4 @@
+import { sumOf } from "../budget/entry.ts";
 import type { Budget, Case, Link, Verdict } from "../budget/types.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
@@ -57,7 +58,7 @@ export function answer(report: MarginReport, link: Link): string {
     ),
   );
   const first = own.filter(({ case: { mode } }) => mode === modes[0]);
-  const costs = coverCosts(report, first);
+  const costs = [...coverCosts(report, first), ...dishCoverCosts(first, link)];
   const way =
     link.ground === undefined
       ? ["Line of sight is taken: no hill, tree or building in the way."]
@@ -99,6 +100,19 @@ function coverCosts(report: MarginReport, own: readonly ReportBudget[]): string[
   });
   if (costs.length === 0) return [];
   return [`The cover (${coverName(own[0]!)}) takes ${listed(costs)}, both ends together.`];
+}
+
+/** What a cover over a dish takes of the signal; it stays in every case, bare feeds too. */
+function dishCoverCosts(own: readonly ReportBudget[], { scenario }: Link): string[] {
+  return (["transmitter", "receiver"] as const).flatMap((end) => {
+    const { dishCover } = scenario[end];
+    const part = (budget: ReportBudget) =>
+      budget.entries.filter(({ id, stage }) => stage === end && id.includes("dish_cover"));
+    if (dishCover === undefined || own.every((budget) => part(budget).length === 0)) return [];
+    const costs = own.map((budget) => `${tenth(0 - sumOf(part(budget), "db"))} dB in ${budget.case.weather}`);
+    const noise = end === "receiver" ? ", beside the noise that it adds" : "";
+    return `The cover over the ${end}'s dish (${dishCover}) takes ${listed(costs)}${noise}.`;
+  });
 }
 
 function isBare({ case: { transmitter, receiver } }: ReportBudget): boolean {

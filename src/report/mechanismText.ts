@@ -22,7 +22,7 @@ export function mechanismSentence(
 ): string {
   const [best, next] = ways;
   const cost = best!.name === "line_of_sight" ? "" : `, ${tenth(best!.excessDb)} dB beyond free space`;
-  const other = next === undefined ? "" : `; next best ${next.label}, ${tenth(next.marginDb)} dB`;
+  const other = next === undefined ? "" : `; next best ${next.label}, ${tenth(next.marginDb)} dB left`;
   return (
     `${capital(weather)}: ${best!.label} carries the path${cost}; ${mode} ${verdictWords[verdict]} ` +
     `with ${tenth(best!.marginDb)} dB${other}.`
@@ -50,7 +50,7 @@ export function carriedText(budgets: readonly Carried[]): string[] {
     const others = some.flatMap(({ case: { weather }, marginDb, mechanisms: [best, next] }) =>
       next === undefined
         ? []
-        : [`${next.label} in ${weather} (${tenth(marginDb + best!.excessDb - next.excessDb)} dB)`],
+        : [`${next.label} in ${weather} (${tenth(marginDb + best!.excessDb - next.excessDb)} dB left)`],
     );
     const second = others.length === 0 ? "" : `; next best ${listed(others)}`;
     return `${capital(label)} carries the path${where}${cost}${second}.`;

@@ -108,6 +108,15 @@ describe("rain scatter", () => {
     expect(names(over(blocked, {}, pouring))).toContain("rain_scatter");
   });
 
+  it("is told to smear the signal where it carries the path, and there alone", () => {
+    const carried = over(valley({ 30: 3500 }), {}, pouring);
+    expect(carried.mechanisms[0]!.name).toBe("rain_scatter");
+    expect(codesOf(carried)).toContain("scatter_spreads");
+    const other = over(undefined, {}, pouring);
+    expect(other.mechanisms[0]!.name).toBe("line_of_sight");
+    expect(codesOf(other)).not.toContain("scatter_spreads");
+  });
+
   // Bistatic radar equation by hand, 50 mm/h at 30 km from both ends: Z = 200 * 50^1.6 (Marshall and Palmer 1948);
   // eta = pi^5 * 0.93 * Z 1e-18 / lambda^4; the cell is 2 ln 2 / 1.6 * (10 - 1.5 log 50) / ln(50 / 0.4) km wide
   // (P.452-18); beams of 3.43 deg are 1.80 km wide there. The rain of the tropics reaches 5 km; the ridge at 1500 m,

@@ -321,4 +321,19 @@ describe("a scenario without rain", () => {
     expect(stdout).not.toContain("water on it");
     expect(unwrapped(stdout)).not.toContain("long-term statistics of rain");
   });
+
+  it("says what a cover over a dish takes, the sum of its rows", () => {
+    const file = changedDemo(folder, "roofed.yaml", "dish: tripod,", "dish: tripod, dish_cover: sheet,");
+    const report = JSON.parse(oilskin(["budget", file, "--mode", "fm", "--json"]).stdout) as MarginReport;
+    const [first] = report.budgets;
+    const taken = first!.entries
+      .filter(({ id }) => id.startsWith("rx.dish_cover"))
+      .reduce((sum, { db }) => sum - db, 0);
+    expect(taken).toBeGreaterThan(0.2);
+    const text = oilskin(["budget", file]).stdout.replace(/\s+/g, " ");
+    expect(text).toContain(
+      `The cover over the receiver's dish (sheet) takes ${taken.toFixed(1)} dB in ${first!.case.weather}`,
+    );
+    expect(text).toContain("beside the noise that it adds");
+  });
 });

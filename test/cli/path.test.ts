@@ -33,7 +33,7 @@ describe("oilskin path", () => {
   it("answers first: what carries the path in each weather, and what cuts the ray", () => {
     const answer = flowing(textOf("path", ridgeFile, ...onTheDay).split("\n\n")[1]!);
     expect(answer).toMatch(/^Dry: diffraction over terrain carries the path, \d+\.\d dB beyond free space;/);
-    expect(answer).toMatch(/next best troposcatter, -?\d+\.\d dB\./);
+    expect(answer).toMatch(/next best troposcatter, -?\d+\.\d dB left\./);
     expect(answer).toContain("Thunderstorm: rain scatter at mid-path carries the path");
     expect(answer).toMatch(/The ray is cut: it passes \d+ m below the top at 43\.\d km/);
   });
