@@ -88,7 +88,8 @@ function prepareEnds(
   return Object.fromEntries(names.map((name) => [name, prepareEnd(scenario, end, name, path, weathers)]));
 }
 
-function prepareEnd(
+/** One end with one of its feeds, under every cover in every weather. */
+export function prepareEnd(
   scenario: Scenario,
   end: EndName,
   feedName: string,
@@ -114,6 +115,7 @@ function prepareEnd(
     line: lossEntry(heading("line", "line and joints", "scenario"), lineLossDb.value, lineSigma),
     antenna: antenna.entries,
     beamwidthDeg: antenna.beamwidthDeg,
+    farFieldM: antenna.farFieldM,
     mouthUnder: mouths,
     isSheltered: overDish !== undefined,
     dishCoverOver:
@@ -122,18 +124,18 @@ function prepareEnd(
         : dishCoverOver(heading, frequencyGHz, overDish, `covers.${dishCover}`, diameterM, gamma, doubts),
     mouth: mapValues(mouths, () => ({})),
     dishCover: {},
-    warnings: aimWarnings(end, antenna.beamwidthDeg, antenna.farFieldM, path),
+    warnings: aimWarnings(end, antenna, path),
   };
   return Object.entries(weathers).reduce((done, [name, one]) => inWeather(done, end, name, one), ready);
 }
 
-function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
+export function powerEntry(heading: EndHeading, { transmitter: { powerDbm } }: Scenario): Entry {
   const { value, sigma = POWER_SIGMA_DB } = powerDbm;
   return gainEntry(heading("power", "transmitter power", "scenario"), value, sigma);
 }
 
 /** Rain on the covers of one end; a cover may be wet without rain on the path, and dry while it rains. */
-function wetnessAt(end: EndName, { weather, rainLossDb }: PreparedWeather): Wetness | undefined {
+export function wetnessAt(end: EndName, { weather, rainLossDb }: PreparedWeather): Wetness | undefined {
   if (!weather.wets.includes(end)) return undefined;
   return {
     rainRateMmPerH: weather.coversWetAsAtMmPerH ?? weather.rainMmPerH.value,
@@ -152,10 +154,9 @@ function wetnessAt(end: EndName, { weather, rainLossDb }: PreparedWeather): Wetn
 }
 
 /** Doubts about where an end points and how far off the other stands. */
-function aimWarnings(
+export function aimWarnings(
   end: EndName,
-  beamwidthDeg: number | undefined,
-  farFieldM: number | undefined,
+  { beamwidthDeg, farFieldM }: Pick<PreparedEnd, "beamwidthDeg" | "farFieldM">,
   path: PathGeometry,
 ): Warning[] {
   const warnings: Warning[] = [];

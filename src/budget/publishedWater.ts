@@ -32,6 +32,11 @@ export function waterModelOf({ surface, state, wetModel }: Cover): WetModel {
   return wetModel ?? (behaviour(surface, state) === "wetting" ? "film" : "merceret2000");
 }
 
+/** Whether the water on a cover is reckoned from what the rain takes on the path, so that it differs from path to path. */
+export function startsFromPathRain({ wetModel }: Cover): boolean {
+  return wetModel === "kharadly2001" || wetModel === "schleiss2013";
+}
+
 /**
  * Water on a cover by a published model. One that the user names stands as it is; one that the surface chose never
  * exceeds the film, and on a mixed surface is the mean of both. What a shower left dries as a film does; dew, which

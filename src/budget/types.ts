@@ -131,6 +131,8 @@ export interface PreparedEnd {
   readonly line: Entry;
   readonly antenna: readonly Entry[];
   readonly beamwidthDeg: number | undefined;
+  /** Distance at which the far field begins [m]; undefined where the size is not known. */
+  readonly farFieldM: number | undefined;
   /** Each cover by what a weather puts on it, for weathers that come later. */
   readonly mouthUnder: Readonly<Record<string, (wetness: Wetness | undefined) => Mouth>>;
   /** Behind a cover over the dish, which keeps the feed dry. */

@@ -52,12 +52,33 @@ export function geodesicPath(from: Point, to: Point): GeodesicPath {
  * @param share  0 at `from`, 1 at `to`, 0.5 half-way
  */
 export function pointAlong({ from, to, share }: { from: Point; to: Point; share: number }): Point {
+  return pointsAlong({ from, to, shares: [share] })[0]!;
+}
+
+/**
+ * Points of the shortest line between two places, at shares of its length: the line is sought once for all of them.
+ *
+ * Source: as `geodesicPath`
+ *
+ * @param shares  each 0 at `from`, 1 at `to`
+ */
+export function pointsAlong({
+  from,
+  to,
+  shares,
+}: {
+  from: Point;
+  to: Point;
+  shares: readonly number[];
+}): Point[] {
   requirePoint("from", from);
   requirePoint("to", to);
-  requireWithin("share", share, 0, 1);
   const line = wgs84.InverseLine(from.latitude, from.longitude, to.latitude, to.longitude);
-  const { lat2, lon2 } = line.Position(share * line.s13);
-  return { latitude: lat2!, longitude: lon2! };
+  return shares.map((share) => {
+    requireWithin("share", share, 0, 1);
+    const { lat2, lon2 } = line.Position(share * line.s13);
+    return { latitude: lat2!, longitude: lon2! };
+  });
 }
 
 /**

@@ -49,15 +49,7 @@ const BORDER = 1e-6;
  */
 export function locatorToPoint(locator: string): LocatorCell {
   requireLength(locator.length, `locator "${locator}"`);
-  let column = 0;
-  let row = 0;
-  let cells = 1;
-  pairs.slice(0, locator.length / 2).forEach((pair, index) => {
-    column = column * pair.parts + indexOf(locator, 2 * index, pair);
-    row = row * pair.parts + indexOf(locator, 2 * index + 1, pair);
-    cells *= pair.parts;
-  });
-
+  const { column, row, cells } = cellOf(locator);
   const at = (x: number, y: number): Point => ({
     latitude: (180 * y) / cells - 90,
     longitude: (360 * x) / cells - 180,
@@ -75,6 +67,32 @@ export function locatorToPoint(locator: string): LocatorCell {
     halfHeightKm: geodesicPath(middleOfSouth, middleOfNorth).distanceKm / 2,
     halfDiagonalKm: geodesicPath(centre, farCorner).distanceKm,
   };
+}
+
+/** Column from the date line, row from the south pole, and how many cells of that size go round. */
+function cellOf(locator: string): { column: number; row: number; cells: number } {
+  let column = 0;
+  let row = 0;
+  let cells = 1;
+  pairs.slice(0, locator.length / 2).forEach((pair, index) => {
+    column = column * pair.parts + indexOf(locator, 2 * index, pair);
+    row = row * pair.parts + indexOf(locator, 2 * index + 1, pair);
+    cells *= pair.parts;
+  });
+  return { column, row, cells };
+}
+
+/**
+ * Centre of the cell that holds a place: from centre to centre contests count their distances.
+ *
+ * Source: as `locatorToPoint`; the use by contests is common practice, no source
+ *
+ * @param point       as `pointToLocator` takes it
+ * @param characters  of the locator that names the cell: 2, 4, 6, 8 or 10
+ */
+export function squareCentre(point: Point, characters: number): Point {
+  const { column, row, cells } = cellOf(pointToLocator(point, characters));
+  return { latitude: (180 * (row + 0.5)) / cells - 90, longitude: (360 * (column + 0.5)) / cells - 180 };
 }
 
 /**

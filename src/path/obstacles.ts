@@ -1,3 +1,4 @@
+import { wavelengthM } from "../numeric/constants.ts";
 import { fresnelRadius } from "./fresnelRadius.ts";
 import { rayClearance } from "./horizon.ts";
 import { type Profile, pathLengthKm } from "./profile.ts";
@@ -66,26 +67,44 @@ export function passing(sight: Sight, index: number): Passing {
 export function obstacles(sight: Sight): Obstacle[] {
   const { distancesKm } = sight.profile;
   const last = distancesKm.length - 1;
+  const zonesAt = zonesOver(sight);
   const found: Obstacle[] = [];
-  let least: Passing | undefined;
+  let least = 1;
+  let leastZones = Infinity;
   for (let i = 1; i < last; i++) {
-    let worst = passing(sight, i);
-    if (least === undefined || worst.zones < least.zones) least = worst;
-    if (worst.zones >= CLEAR_ZONE_SHARE) continue;
+    let worst = i;
+    let worstZones = zonesAt(i);
     const start = i;
-    while (i + 1 < last) {
-      const next = passing(sight, i + 1);
-      if (next.zones >= CLEAR_ZONE_SHARE) break;
-      i++;
-      if (next.zones < worst.zones) worst = next;
+    if (worstZones < CLEAR_ZONE_SHARE) {
+      for (; i + 1 < last; i++) {
+        const zones = zonesAt(i + 1);
+        if (zones >= CLEAR_ZONE_SHARE) break;
+        if (zones < worstZones) [worst, worstZones] = [i + 1, zones];
+      }
+      // A stretch reaches half a step towards its neighbours.
+      const widthKm =
+        (distancesKm[i + 1]! + distancesKm[i]! - distancesKm[start]! - distancesKm[start - 1]!) / 2;
+      found.push({ ...passing(sight, worst), widthKm });
     }
-    if (worst.zones < least.zones) least = worst;
-    // A stretch reaches half a step towards its neighbours.
-    const widthKm =
-      (distancesKm[i + 1]! + distancesKm[i]! - distancesKm[start]! - distancesKm[start - 1]!) / 2;
-    found.push({ ...worst, widthKm });
+    if (worstZones < leastZones) [least, leastZones] = [worst, worstZones];
   }
-  return found.length > 0 || least === undefined ? found : [{ ...least, widthKm: 0 }];
+  return found.length > 0 ? found : [{ ...passing(sight, least), widthKm: 0 }];
+}
+
+/** `zones` of `passing` at any interior point, without an object for each: a profile has thousands of points. */
+function zonesOver(sight: Sight): (index: number) => number {
+  const { profile, frequencyGHz, txHeightAmslM, rxHeightAmslM, effectiveRadiusKm } = sight;
+  const { distancesKm, heightsM, coverM } = profile;
+  const wholeKm = pathLengthKm(profile);
+  const radius2PerProduct = (1000 * wavelengthM(frequencyGHz)) / wholeKm;
+  return (index) => {
+    const d1Km = distancesKm[index]!;
+    const d2Km = wholeKm - d1Km;
+    const rayM = (txHeightAmslM * d2Km + rxHeightAmslM * d1Km) / wholeKm;
+    const topM = heightsM[index]! + (coverM?.[index] ?? 0);
+    const clearanceM = rayM - topM - (500 * d1Km * d2Km) / effectiveRadiusKm;
+    return clearanceM / Math.sqrt(radius2PerProduct * d1Km * d2Km);
+  };
 }
 
 /** How far antennas must go up [m]: one of the two alone, or both by the same; 0 where nothing is missing. */

@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { geodesicPath } from "../../src/path/geodesic.ts";
-import { locatorToPoint, pointToLocator } from "../../src/path/locator.ts";
+import { locatorToPoint, pointToLocator, squareCentre } from "../../src/path/locator.ts";
 import { describeReference, num } from "../reference.ts";
 
 const length = fc.constantFrom(2, 4, 6, 8, 10);
@@ -158,4 +158,21 @@ describeReference("terrain/maidenhead.csv", (row) => {
   expect(Math.abs(cell.southWest.longitude - num(row, "sw_lon"))).toBeLessThan(1e-9);
   expect(Math.abs(cell.latitude - num(row, "centre_lat"))).toBeLessThan(1e-9);
   expect(Math.abs(cell.longitude - num(row, "centre_lon"))).toBeLessThan(1e-9);
+});
+
+describe("the centre of the square that holds a place", () => {
+  it("is the place that the square's locator names", () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: -90, max: 90, noNaN: true }),
+        fc.double({ min: -180, max: 180, noNaN: true }),
+        fc.constantFrom(2, 4, 6, 8, 10),
+        (latitude, longitude, characters) => {
+          const point = { latitude, longitude };
+          const { latitude: north, longitude: east } = locatorToPoint(pointToLocator(point, characters));
+          expect(squareCentre(point, characters)).toEqual({ latitude: north, longitude: east });
+        },
+      ),
+    );
+  });
 });

@@ -49,6 +49,31 @@ describe("obstacles", () => {
   });
 });
 
+describe("obstacles of any profile", () => {
+  const anyBumps = fc.array(fc.integer({ min: 0, max: 160 }), { minLength: 3, maxLength: 30 });
+
+  it("are found as by looking at each point by itself", () => {
+    fc.assert(
+      fc.property(anyBumps, anyBumps, fc.integer({ min: 50, max: 200 }), (heightsM, trees, txHeightAmslM) => {
+        const bare = sightOver(heightsM, { txHeightAmslM, effectiveRadiusKm: 8500 });
+        const coverM = heightsM.map((_, i) => trees[i] ?? 0);
+        const sight = { ...bare, profile: { ...bare.profile, coverM } };
+        const points = heightsM.slice(2).map((_, i) => passing(sight, i + 1));
+        const worst = points.reduce((a, b) => (b.zones < a.zones ? b : a));
+        const cut = points.filter(({ zones }) => zones < CLEAR_ZONE_SHARE);
+        const found = obstacles(sight);
+        if (cut.length === 0) expect(found).toEqual([{ ...worst, widthKm: 0 }]);
+        else {
+          // Points a kilometre apart: as many kilometres as points are cut.
+          expect(found.reduce((sum, { widthKm }) => sum + widthKm, 0)).toBe(cut.length);
+          expect(Math.min(...found.map(({ zones }) => zones))).toBe(worst.zones);
+          for (const { widthKm, ...one } of found) expect(cut).toContainEqual(one);
+        }
+      }),
+    );
+  });
+});
+
 describe("raising antennas", () => {
   const anySight = fc
     .tuple(

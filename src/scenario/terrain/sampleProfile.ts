@@ -1,4 +1,4 @@
-import { geodesicPath, type Point, pointAlong } from "../../path/geodesic.ts";
+import { geodesicPath, type Point, pointsAlong } from "../../path/geodesic.ts";
 import { faultOf } from "./faults.ts";
 import type {
   ElevationSource,
@@ -52,7 +52,8 @@ export async function sampleProfile({
     return refuse("bad_sampling", `profile of ${count} points, expected ${FEWEST_POINTS} to ${MOST_POINTS}`);
   }
 
-  const places = Array.from({ length: count }, (_, i) => pointAlong({ from, to, share: i / (count - 1) }));
+  const shares = Array.from({ length: count }, (_, i) => i / (count - 1));
+  const places = pointsAlong({ from, to, shares });
   const distancesKm = places.map((_, i) => (distanceKm * i) / (count - 1));
   let heights: Heights;
   try {
