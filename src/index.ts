@@ -123,6 +123,14 @@ export { pathCsv, pathJson } from "./report/pathData.ts";
 export { pathText } from "./report/pathText.ts";
 export { readingsCsv, readingsJson } from "./report/readingsData.ts";
 export { readingsText } from "./report/readingsText.ts";
+export {
+  type RosterLine,
+  rosterCsvHead,
+  rosterCsvLines,
+  rosterJsonLine,
+  rosterLine,
+} from "./report/rosterData.ts";
+export { type RosterTable, rosterText } from "./report/rosterText.ts";
 export { spreadCsv, spreadJson } from "./report/spreadData.ts";
 export { spreadText } from "./report/spreadText.ts";
 export { thicknessCsv, thicknessJson } from "./report/thicknessData.ts";
@@ -144,6 +152,8 @@ export { nearest } from "./scenario/nearest.ts";
 export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/quantity.ts";
 export { type BenchReadings, loadReadings, loadSweeps } from "./scenario/readings.ts";
 export type { FileFault } from "./scenario/readingsFaults.ts";
+export { openRoster, type Roster, type RosterLines, rosterLines } from "./scenario/rosterFile.ts";
+export { type RowFault, type RowForm, rowReader, type Station } from "./scenario/rosterRow.ts";
 export { scenarioJsonSchema } from "./scenario/schema.ts";
 export { TerrainError } from "./scenario/terrain/faults.ts";
 export { openTerrain } from "./scenario/terrain/openTerrain.ts";
@@ -168,6 +178,18 @@ export { materialThickness } from "./study/materialThickness.ts";
 export { pathStudy } from "./study/pathStudy.ts";
 export { type BenchReport, benchReport } from "./study/readings.ts";
 export { coversRead, entryOfCover } from "./study/readingsEntry.ts";
+export { type RosterRow, rosterStudy, scoreDistanceKm } from "./study/roster.ts";
+export { comparing, keepBest, keeps, type Ranked, type SortKey, sortKeys } from "./study/rosterOrder.ts";
+export {
+  driest,
+  mostDemandingFirst,
+  ownCoverFirst,
+  type RosterPlan,
+  type RosterSite,
+  suitedDishes,
+  wettest,
+} from "./study/rosterPlan.ts";
+export { type StationKey, seenStations, stationKey } from "./study/rosterTwice.ts";
 export { spreadOf } from "./study/spread.ts";
 export { thickness } from "./study/thickness.ts";
 export { type LadderChoices, type WeatherLadder, weatherLadder } from "./study/weatherLadder.ts";

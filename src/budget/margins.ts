@@ -1,9 +1,9 @@
-import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
+import { powerToDb } from "../numeric/decibels.ts";
 import { requiredSnrInBandwidth } from "../receiver/modes.ts";
 import { thermalNoiseDbm } from "../receiver/noise.ts";
 import type { Entry } from "./entry.ts";
 import { mechanismsOf } from "./mechanisms.ts";
-import { noiseSide } from "./noiseSide.ts";
+import { noiseTemperatures } from "./noiseSide.ts";
 import type { Case, Link, Mechanism, Verdict } from "./types.ts";
 import { probabilityAboveZero, verdictOf } from "./verdict.ts";
 
@@ -43,11 +43,12 @@ export function margins(
   const receiver = link.ends.receiver[hearer.feed]!;
   const heard = receiver.mouth[hearer.cover]![name]!;
   const overReceiver = receiver.dishCover[name]!;
-  const first = link.modes[modes[0]!]!;
-  const noise = noiseSide(scenario, first, weather, heard, overReceiver);
+  const noise = noiseTemperatures(scenario, weather, heard, overReceiver);
   const byGround = way.name !== "line_of_sight";
-  let snrDb = (byGround ? -way.excessDb : 0) - noise.noiseDbm;
-  let variance = byGround ? way.sigmaDb ** 2 : 0;
+  // Against the noise of 1 Hz: each mode takes its bandwidth off.
+  let snrDb =
+    (byGround ? -way.excessDb : 0) - thermalNoiseDbm({ temperatureK: noise.steps[4], bandwidthHz: 1 });
+  let variance = noise.receiverSigmaDb ** 2 + noise.antennaSigmaDb ** 2 + (byGround ? way.sigmaDb ** 2 : 0);
   const add = ({ db, sigma }: Entry) => {
     snrDb += db;
     variance += sigma * sigma;
@@ -67,18 +68,11 @@ export function margins(
   ]) {
     for (const entry of entries) add(entry);
   }
-  for (const { sigma } of noise.entries) variance += sigma * sigma;
-  const firstDbm = thermalDbm(first.noiseBandwidthHz);
   return modes.map((one) => {
     const mode = link.modes[one]!;
-    const widerDb = thermalDbm(mode.noiseBandwidthHz) - firstDbm;
-    const marginDb = snrDb - widerDb - requiredSnrInBandwidth(mode);
+    const marginDb = snrDb - powerToDb(mode.noiseBandwidthHz) - requiredSnrInBandwidth(mode);
     const marginSigmaDb = Math.sqrt(variance + mode.sigmaDb ** 2);
     const holds = probabilityAboveZero(marginDb, marginSigmaDb);
     return { marginDb, marginSigmaDb, verdict: verdictOf(marginDb, holds, scenario.decision) };
   });
-}
-
-function thermalDbm(bandwidthHz: number): number {
-  return thermalNoiseDbm({ temperatureK: REFERENCE_TEMPERATURE_K, bandwidthHz });
 }

@@ -16,22 +16,31 @@ export interface NoiseSide {
   readonly systemTemperatureK: number;
 }
 
+/** The temperatures behind the noise, which no mode changes. */
+export interface NoiseTemperatures {
+  /** 290 K; with the receiver; with the antenna; behind the line; behind the feed and its cover: the system's [K]. */
+  readonly steps: readonly [number, number, number, number, number];
+  readonly antennaK: number;
+  /** 1-sigma of the noise by the receiver's figure, and by what the antenna sees [dB]. */
+  readonly receiverSigmaDb: number;
+  readonly antennaSigmaDb: number;
+}
+
 /**
- * Noise at the receiver's input, step by step from 290 K in the mode's bandwidth.
+ * Noise temperatures at the receiver's input, step by step from 290 K.
  *
  * The feed's mouth is charged in the form of a matched isolator ahead of the line: a share G_T of the antenna's
  * noise comes through, what the cover absorbs glows at its own temperature, what is reflected comes back from
- * the receiver's side at 290 K. Each step is an entry, so that all of them add up to the system's noise.
+ * the receiver's side at 290 K.
  *
  * Source: noise waves after Bosma 1967 for the mouth; D. M. Pozar, Microwave Engineering, for the line
  */
-export function noiseSide(
+export function noiseTemperatures(
   { receiver, frequencyGHz }: Scenario,
-  mode: Mode,
   weather: PreparedWeather,
   mouth: Mouth,
   over: DishCoverState,
-): NoiseSide {
+): NoiseTemperatures {
   const figureDb = receiver.noiseFigureDb;
   const usual = levelBeamDefault(frequencyGHz);
   const clear = receiver.antennaTemperatureK ?? { value: usual.temperatureK };
@@ -53,14 +62,40 @@ export function noiseSide(
     (1 - over.passed - over.heated) * REFERENCE_TEMPERATURE_K;
   const mouthK =
     passed * apertureK + (matched - passed) * weather.ambientK + (1 - matched) * REFERENCE_TEMPERATURE_K;
+  const systemK = mouthK * linePass + lineK + receiverK;
 
-  const steps = [
-    REFERENCE_TEMPERATURE_K,
-    REFERENCE_TEMPERATURE_K + receiverK,
-    antennaK + receiverK,
-    antennaK * linePass + lineK + receiverK,
-    mouthK * linePass + lineK + receiverK,
-  ] as const;
+  const figureSigma = figureDb.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB;
+  // A dB more of noise figure raises the system by its receiver's part only.
+  const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
+  const dimmed = dbToPower(-weather.hydrometeorLossDb);
+  const antennaSigmaK = (clear.sigma ?? usual.sigmaK) * dimmed * over.passed * passed * linePass;
+  return {
+    steps: [
+      REFERENCE_TEMPERATURE_K,
+      REFERENCE_TEMPERATURE_K + receiverK,
+      antennaK + receiverK,
+      antennaK * linePass + lineK + receiverK,
+      systemK,
+    ],
+    antennaK,
+    receiverSigmaDb: figureSigma * figureWeight,
+    antennaSigmaDb: (powerToDb(Math.E) * antennaSigmaK) / systemK,
+  };
+}
+
+/**
+ * Noise at the receiver's input in the mode's bandwidth: each step of the temperatures is an entry, so that all of
+ * them add up to the system's noise.
+ */
+export function noiseSide(
+  scenario: Scenario,
+  mode: Mode,
+  weather: PreparedWeather,
+  mouth: Mouth,
+  over: DishCoverState,
+): NoiseSide {
+  const found = noiseTemperatures(scenario, weather, mouth, over);
+  const { steps, antennaK } = found;
   const systemK = steps[4];
   const step = (from: number, to: number) => powerToDb(from / to);
 
@@ -68,23 +103,18 @@ export function noiseSide(
     temperatureK: REFERENCE_TEMPERATURE_K,
     bandwidthHz: mode.noiseBandwidthHz,
   });
-  const sky = receiver.antennaTemperatureK ? "scenario" : "level beam: common practice, P.676-13";
-  const figureSigma = figureDb.sigma ?? LABEL_NOISE_FIGURE_SIGMA_DB;
-  // A dB more of noise figure raises the system by its receiver's part only.
-  const figureWeight = (receiverK + REFERENCE_TEMPERATURE_K) / systemK;
-  const dimmed = dbToPower(-weather.hydrometeorLossDb);
-  const antennaSigmaK = (clear.sigma ?? usual.sigmaK) * dimmed * over.passed * passed * linePass;
+  const sky = scenario.receiver.antennaTemperatureK ? "scenario" : "level beam: common practice, P.676-13";
   const entries = [
     gainEntry(heading("thermal", "290 K in the bandwidth", "k T B"), -thermalDbm),
     gainEntry(
       heading("receiver", "receiver's noise", "scenario"),
       step(steps[0], steps[1]),
-      figureSigma * figureWeight,
+      found.receiverSigmaDb,
     ),
     gainEntry(
       heading("antenna", `sky and ground, ${Math.round(antennaK)} K`, sky),
       step(steps[1], steps[2]),
-      (powerToDb(Math.E) * antennaSigmaK) / systemK,
+      found.antennaSigmaDb,
     ),
     gainEntry(heading("line", "line's noise", "Pozar"), step(steps[2], steps[3])),
     gainEntry(heading("cover", "noise of feed and covers", "Bosma 1967"), step(steps[3], steps[4])),

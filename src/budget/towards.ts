@@ -83,6 +83,15 @@ function turnedPath(path: ScenarioPath): ScenarioPath {
   };
 }
 
+/** The same ways from another site of the near end, with all of its parts; `towards` is to follow, for geometry is not worked out. */
+export function fromSite({ out, back }: BothWays, site: Site): BothWays {
+  const at = (link: Link, end: "from" | "to"): Link => ({
+    ...link,
+    scenario: { ...link.scenario, path: { ...link.scenario.path, [end]: site } },
+  });
+  return { out: at(out, "from"), back: at(back, "to") };
+}
+
 /**
  * The same ways towards another station: only what depends on where it stands is worked out anew (geometry, air,
  * ground, aim), the antennas and the mouths under their covers are kept. Equal to `bothWays` of a scenario rewritten

@@ -26,7 +26,7 @@ export function runBundle(folder: string, bundle: Bundle): Script {
   const source = readFileSync(filename, "latin1");
   const script = new Script(source, { filename, ...(cachedData && { cachedData }) });
   const module = { exports: {} };
-  script.runInThisContext()(createRequire(filename), module, module.exports);
+  script.runInThisContext()(createRequire(filename), module, module.exports, folder);
   return script;
 }
 

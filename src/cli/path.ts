@@ -1,9 +1,10 @@
 import { Command, Option } from "commander";
 import { pathCsv, pathJson, pathStudy, pathText, prepare } from "../index.ts";
+import { day } from "./day.ts";
 import { knownName } from "./knownName.ts";
 import { namesAsked, namesOption } from "./namesAsked.ts";
 import { scenarioIn } from "./scenarioFile.ts";
-import { paintFor, print, UserError } from "./terminal.ts";
+import { paintFor, print } from "./terminal.ts";
 
 interface PathOptions {
   readonly weather?: readonly string[];
@@ -26,22 +27,8 @@ export const pathCommand = new Command("path")
     const names = namesAsked("weather", options.weather, Object.keys(link.weathers));
     const { mode = link.scenario.receiver.modes[0]! } = options;
     knownName("mode", mode, Object.keys(link.modes));
-    const study = await pathStudy(
-      link,
-      mode,
-      names,
-      options.date === undefined ? new Date() : day(options.date),
-    );
+    const study = await pathStudy(link, mode, names, day(options.date));
     if (options.json) print(pathJson(study));
     else if (options.csv) print(pathCsv(study));
     else print(pathText(study, link, paintFor(process.stdout)));
   });
-
-/** A calendar day at noon, UTC. */
-function day(text: string): Date {
-  const date = new Date(`${text}T12:00:00Z`);
-  // A day that no month has (31 June) is carried into the next one.
-  if (/^\d{4}-\d\d-\d\d$/.test(text) && date.getTime() > 0 && date.toISOString().startsWith(text))
-    return date;
-  throw new UserError(`--date: read "${text}", expected a day such as 2026-07-01`);
-}

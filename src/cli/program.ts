@@ -8,6 +8,7 @@ import { materialsCommand } from "./materials.ts";
 import { newCommand } from "./new.ts";
 import { pathCommand } from "./path.ts";
 import { readingsCommand } from "./readings.ts";
+import { rosterCommand } from "./roster.ts";
 import { run } from "./run.ts";
 import { schemaCommand } from "./schema.ts";
 import { spreadCommand } from "./spread.ts";
@@ -23,6 +24,7 @@ run([
   weatherCommand,
   yearCommand,
   pathCommand,
+  rosterCommand,
   horizonCommand,
   checkCommand,
   newCommand,

@@ -1,25 +1,71 @@
-import { existsSync, linkSync, renameSync, rmSync, writeFileSync } from "node:fs";
+import { closeSync, existsSync, linkSync, openSync, renameSync, rmSync, writeSync } from "node:fs";
 import { UserError } from "./terminal.ts";
+
+/** A file that is being written under another name. */
+export interface Draft {
+  readonly write: (text: string) => void;
+  /** Gives it its name; nothing is left under the other one. */
+  readonly keep: () => void;
+  /** Gives it up; harmless after `keep`. */
+  readonly drop: () => void;
+}
 
 /**
  * Writes a file whole or not at all: under another name first, then renamed. An existing file is kept unless
  * `force` is set.
  */
 export function writeWhole(file: string, text: string, force: boolean): void {
+  const draft = openDraft(file, force);
+  draft.write(text);
+  draft.keep();
+}
+
+/** The same for a file that is written piece by piece. What fails to be written is given up. */
+export function openDraft(file: string, force: boolean): Draft {
   if (!force && existsSync(file)) throw new UserError(`${file} exists already; --force replaces it`);
   const draft = `${file}.${process.pid}.part`;
-  try {
-    writeFileSync(draft, text, { flag: "wx" });
-    if (force) renameSync(draft, file);
-    else giveNewName(draft, file);
-  } catch (error) {
-    const { code, message } = error as NodeJS.ErrnoException;
-    if (code === "EEXIST") throw new UserError(`${file} exists already; --force replaces it`);
-    if (code === "ENOENT") throw new UserError(`${file} cannot be written: no such folder`);
-    throw new UserError(`${file} cannot be written (${code ?? message})`);
-  } finally {
+  let descriptor: number | undefined;
+  const close = () => {
+    if (descriptor !== undefined) closeSync(descriptor);
+    descriptor = undefined;
+  };
+  const drop = () => {
+    close();
     rmSync(draft, { force: true });
-  }
+  };
+  const attempt = (work: () => void) => {
+    try {
+      work();
+    } catch (error) {
+      drop();
+      throw inOurWords(file, error as NodeJS.ErrnoException);
+    }
+  };
+  attempt(() => {
+    descriptor = openSync(draft, "wx");
+  });
+  return {
+    write: (text) =>
+      attempt(() => {
+        const bytes = Buffer.from(text);
+        for (let done = 0; done < bytes.length; ) done += writeSync(descriptor!, bytes, done);
+      }),
+    keep: () => {
+      attempt(() => {
+        close();
+        if (force) renameSync(draft, file);
+        else giveNewName(draft, file);
+      });
+      drop();
+    },
+    drop,
+  };
+}
+
+function inOurWords(file: string, { code, message }: NodeJS.ErrnoException): UserError {
+  if (code === "EEXIST") return new UserError(`${file} exists already; --force replaces it`);
+  if (code === "ENOENT") return new UserError(`${file} cannot be written: no such folder`);
+  return new UserError(`${file} cannot be written (${code ?? message})`);
 }
 
 /** A link fails where the file has come into being since, which a rename would replace. */

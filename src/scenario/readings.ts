@@ -1,6 +1,6 @@
 import { statSync } from "node:fs";
 import { dirname } from "node:path";
-import type { Progress } from "./readingsCsv.ts";
+import type { Progress } from "./csvText.ts";
 import { type FileFault, faultList } from "./readingsFaults.ts";
 import { portsOf, readSweeps, type SweepFile, unreadable } from "./readingsSweep.ts";
 import type { ReadingsTable } from "./readingsTable.ts";

@@ -1,15 +1,11 @@
-import { closeSync, createReadStream, openSync, readSync, statSync } from "node:fs";
 import { pipeline } from "node:stream/promises";
 import { parse } from "csv-parse";
+import { headLines, isIdle, type Progress, separatorOf, textOf } from "./csvText.ts";
 import type { FaultList } from "./readingsFaults.ts";
 import { type ReadingsTable, tableReader } from "./readingsTable.ts";
 
-/** Told of bytes read, of all; a 200 MB file takes a while. */
-export type Progress = (bytes: number, ofBytes: number) => void;
-
 /** Longest row that can be meant [characters]. */
 const LONGEST_ROW = 10_000;
-const HEAD_BYTES = 65_536;
 
 /**
  * Reads a table of readings from a CSV file, streamed: memory does not grow with the file.
@@ -31,7 +27,7 @@ export async function readCsv(
     bom: true,
     comment: "#",
     comment_no_infix: true,
-    delimiter: separatorOf(path),
+    delimiter: separatorOf(headLines(path).find((one) => !isIdle(one)) ?? ""),
     max_record_size: LONGEST_ROW,
     record_delimiter: ["\r\n", "\n", "\r"],
     relax_column_count: true,
@@ -45,44 +41,12 @@ export async function readCsv(
     },
   });
   try {
-    await pipeline(textOf(path, progress), parser.resume());
+    await pipeline(textOf(path, true, progress), parser.resume());
   } catch (error) {
     faults.add(...faultOf(error as NodeJS.ErrnoException & { lines?: number }, line));
     return undefined;
   }
   return reader.end();
-}
-
-async function* textOf(path: string, progress?: Progress): AsyncGenerator<string> {
-  const decoder = new TextDecoder("utf-8", { fatal: true, ignoreBOM: true });
-  const { size } = statSync(path);
-  let done = 0;
-  for await (const chunk of createReadStream(path, { highWaterMark: 1 << 18 })) {
-    const bytes = chunk as Buffer;
-    if (bytes.includes(0)) throw Object.assign(new Error(), { code: "BINARY" });
-    yield decoder.decode(bytes, { stream: true });
-    done += bytes.length;
-    progress?.(done, size);
-  }
-  yield decoder.decode();
-}
-
-/** The separator of the first line that is no comment: the one that occurs most outside quotes. */
-function separatorOf(path: string): string {
-  const head = Buffer.alloc(HEAD_BYTES);
-  const descriptor = openSync(path, "r");
-  const length = readSync(descriptor, head, 0, HEAD_BYTES, 0);
-  closeSync(descriptor);
-  const lines = head
-    .toString("utf8", 0, length)
-    .replace(/^\ufeff/, "")
-    .split(/\r\n?|\n/);
-  const header = (lines.find((line) => line.trim() !== "" && !line.startsWith("#")) ?? "").replace(
-    /"[^"]*"/g,
-    "",
-  );
-  const separators = [",", ";", "\t"];
-  return separators.reduce((a, b) => (header.split(b).length > header.split(a).length ? b : a));
 }
 
 function faultOf(
