@@ -86,8 +86,9 @@ function linearOf(polarization: Polarization): LinearPolarization {
 /** Sea level all the way, or the lower end's ground where that lies deeper. */
 function smoothEarth({ distanceKm, from, to }: PathGeometry): Profile {
   const levelM = Math.min(0, from.groundM, to.groundM);
-  const distancesKm = Array.from({ length: SMOOTH_POINTS }, (_, i) => (distanceKm * i) / (SMOOTH_POINTS - 1));
-  return { distancesKm, heightsM: distancesKm.map(() => levelM) };
+  const distancesKm = new Array<number>(SMOOTH_POINTS);
+  for (let i = 0; i < SMOOTH_POINTS; i++) distancesKm[i] = (distanceKm * i) / (SMOOTH_POINTS - 1);
+  return { distancesKm, heightsM: new Array<number>(SMOOTH_POINTS).fill(levelM) };
 }
 
 /** Share of the path that a cut of a single clean ridge may span: common practice, no source. */

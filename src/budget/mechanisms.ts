@@ -138,17 +138,27 @@ function troposcatter(
   if (analysis.pathType === "los" || analysis.angularDistanceMrad <= 0) return [];
   const { frequencyGHz } = sight;
   const distanceKm = pathLengthKm(profile);
+  // Field by field: spreading three large objects takes longer than the model.
   const common = {
-    ...sight,
-    ...settings,
-    ...analysis,
+    frequencyGHz,
     distanceKm,
+    N0: settings.N0,
     txGainDbi: sumOf(transmitter.antenna, "db"),
     rxGainDbi: sumOf(receiver.antenna, "db"),
     percent: 50,
   };
-  const wantedDb = troposcatterLoss({ ...common, groundHeightKm: middleGroundM(profile) / 1000 }).lossDb;
-  const cautiousDb = interferenceTroposcatterLoss({ ...common, gasDb: 0 });
+  const wantedDb = troposcatterLoss({
+    ...common,
+    dN: settings.dN,
+    txHeightAmslM: sight.txHeightAmslM,
+    rxHeightAmslM: sight.rxHeightAmslM,
+    effectiveRadiusKm: sight.effectiveRadiusKm,
+    txHorizonMrad: analysis.txHorizonMrad,
+    rxHorizonMrad: analysis.rxHorizonMrad,
+    groundHeightKm: middleGroundM(profile) / 1000,
+  }).lossDb;
+  const { angularDistanceMrad } = analysis;
+  const cautiousDb = interferenceTroposcatterLoss({ ...common, angularDistanceMrad, gasDb: 0 });
   const wanted = wantedDb >= cautiousDb;
   const overreaches = wanted ? outside(troposcatterValidity, { frequencyGHz, distanceKm }) : [];
   return [

@@ -10,10 +10,16 @@ export async function* inOrder<Task, Result>(
   stopped: AbortSignal,
 ): AsyncGenerator<Result> {
   const underWay: Promise<Result>[] = [];
-  const stop = new Promise<undefined>((resolve) => {
-    stopped.addEventListener("abort", () => resolve(undefined), { once: true });
-  });
-  const next = () => Promise.race([underWay.shift()!, stop]);
+  // A race with one promise that outlives all others would keep every result alive for its sake.
+  const next = () => {
+    const result = underWay.shift()!;
+    if (stopped.aborted) return Promise.race([result, undefined]);
+    return new Promise<Result | undefined>((resolve, reject) => {
+      const giveUp = () => resolve(undefined);
+      stopped.addEventListener("abort", giveUp, { once: true });
+      result.then(resolve, reject).finally(() => stopped.removeEventListener("abort", giveUp));
+    });
+  };
   for await (const task of tasks) {
     if (stopped.aborted) break;
     const result = work(task);

@@ -152,7 +152,13 @@ async function work(
   };
   const outcome = await runRoster(job, roster, threads, take, bar, stopping.signal);
   stopping.end();
-  const told = [...notes, ...outcomeNotes(outcome, plan)];
+  const told = [
+    ...(outcome.interrupted
+      ? [`interrupted: the roster goes on after the first ${outcome.done} stations`]
+      : []),
+    ...notes,
+    ...outcomeNotes(outcome, plan),
+  ];
   if (outcome.interrupted && output) return outcome;
   const sorted = kept.map((site) => [...site.best()].sort(order));
   if (format === "table") {

@@ -63,7 +63,8 @@ export async function runRoster(
         rowsLost++;
         continue;
       }
-      done++;
+      if (station.reached) done++;
+      else rowsLost++;
       if (station.groundAssumed) groundAssumed++;
       if (station.noTerrain !== undefined) withoutTerrain++;
       terrainReason ??= station.noTerrain;

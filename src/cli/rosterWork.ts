@@ -39,6 +39,8 @@ export interface WorkedLines {
   readonly stations: readonly {
     readonly line: number;
     readonly key: StationKey;
+    /** Whether there is a path from any site. */
+    readonly reached: boolean;
     /** Those that the filter keeps. */
     readonly kept: readonly Worked[];
     readonly groundAssumed: boolean;
@@ -70,6 +72,7 @@ export async function rosterWork(job: RosterJob): Promise<(rows: RosterLines) =>
       stations.push({
         line,
         key: stationKey(station),
+        reached: rows.length > 0,
         kept: rows.flatMap((row) => worked(row, job)),
         groundAssumed: assumed.ground,
         noTerrain: assumed.noTerrain,

@@ -114,7 +114,9 @@ export interface RosterLine {
   readonly distanceKm: number;
   readonly scoreKm: number;
   readonly terrain: RosterRow["terrain"];
-  /** Margin under the own cover in the last weather, in the most demanding mode of the station [dB]. */
+  /** The mode of the margins: the most demanding of the station. */
+  readonly mode: string;
+  /** Margin under the own cover in the last weather, in that mode [dB]. */
   readonly rankDb: number;
   readonly weathers: readonly {
     readonly way: RosterRow["weathers"][number]["way"];
@@ -150,5 +152,6 @@ export function rosterLine(row: RosterRow, { covers }: Pick<RosterPlan, "covers"
   });
   const { line, name, site, headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain } = row;
   const where = { headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain };
-  return { line, name, site, ...where, rankDb: weathers[weathers.length - 1]!.marginDb, weathers };
+  const { mode } = row.weathers[0]!.covers[0]!.modes[0]!;
+  return { line, name, site, ...where, mode, rankDb: weathers[weathers.length - 1]!.marginDb, weathers };
 }

@@ -4,17 +4,7 @@ import type { RosterPlan, RosterSite } from "../study/rosterPlan.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { cautionLines } from "./notes.ts";
 import type { RosterLine } from "./rosterData.ts";
-import {
-  LINE_WIDTH,
-  lengthOf,
-  listed,
-  type Meaning,
-  type Paint,
-  paragraph,
-  plain,
-  signed,
-  tenth,
-} from "./words.ts";
+import { LINE_WIDTH, lengthOf, listed, type Meaning, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** One letter for each way, so that two of them fit. */
 const letters: Readonly<Record<MechanismName, string>> = {
@@ -67,7 +57,7 @@ export function rosterText(table: RosterTable, paint: Paint = plain): string {
 function answerWords({ plan }: RosterTable): string {
   const { scenario, modes, weathers, covers, bothWays } = plan;
   const [dry, wet] = weathers;
-  const when = wet === undefined ? `in ${dry}` : `dry in ${dry}, wet in ${wet}`;
+  const when = wet === undefined ? `weather "${dry}"` : `dry is "${dry}", wet is "${wet}"`;
   const way = bothWays ? "of the weaker way, out or back" : "of the way out";
   return `margins ${way}, for ${scenario.modes[modes[0]!]!.label}, own cover ${covers[0]}; ${when}.`;
 }
@@ -78,7 +68,7 @@ function siteText(site: RosterSite, lines: readonly RosterLine[], table: RosterT
   const compass =
     declinationDeg === undefined
       ? "no magnetic headings"
-      : `declination ${signed(declinationDeg)} deg on ${date}, taken off the magnetic headings`;
+      : `magnetic heading = true ${shift(-declinationDeg)} deg on ${date}`;
   const count = `${lines.length === 1 ? "1 station" : `${lines.length} stations`}`;
   const title = paint("strong", paragraph(`From ${site.name}: ${count}, by ${sort}; ${compass}`));
   return lines.length === 0 ? title : `${title}\n${tableOf(lines, table, paint)}`;
@@ -151,6 +141,11 @@ function wholeDegrees(deg: number | undefined): string {
   return deg === undefined ? "-" : String(Math.round(deg) % 360);
 }
 
+/** `+ 1.2` or `- 1.2`. */
+function shift(deg: number): string {
+  return `${deg < 0 ? "-" : "+"} ${tenth(Math.abs(deg))}`;
+}
+
 function shortened(text: string, width: number): string {
   return lengthOf(text) <= width ? text : `${[...text].slice(0, width - 1).join("")}…`;
 }
@@ -181,6 +176,9 @@ function legend({ plan, lines }: RosterTable): string {
       : []),
     ...(plan.covers[0] !== "bare" && plan.covers.includes("bare")
       ? [`Cover: what ${plan.covers[0]} takes against a bare mouth in ${wet ?? dry} [dB].`]
+      : []),
+    ...(all.some(({ mode }) => mode !== plan.modes[0])
+      ? ["A station with a mode of its own has its margins in that mode."]
       : []),
     "Best mode: the most demanding that closes; in brackets, thin; -, none.",
     ...(weathers.some(

@@ -104,7 +104,7 @@ export function readRosterHeader(
 /** `Ground [m]`, `ground_m`, `ground-height (m)`: the column, and the unit where one that is known stands behind it. */
 function columnOf(text: string): { column: RosterColumn | undefined; name: string; unit: string } {
   const plain = text.replace(/[\s_-]+/g, " ").trim();
-  const [, before = plain, written = ""] = /^(.+?) ?(?:[[(/] ?| )([^\s[\](]+)[\])]?$/.exec(plain) ?? [];
+  const [, before = plain, written = ""] = /^(.+?) ?(?:[[(/] ?| )([^\s[\]()]+)[\])]?$/.exec(plain) ?? [];
   const column = nameOf(before);
   if (column !== undefined && withUnits.includes(column) && findUnit(written)) {
     return { column, name: before.toLowerCase(), unit: written };

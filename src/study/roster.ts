@@ -128,7 +128,7 @@ export async function rosterStudy(plan: RosterPlan): Promise<(station: Station) 
       }
       const ground = terrain && (await terrain.profileBetween(near.site, station));
       const found = ground?.ok ? ground : undefined;
-      if (ground && !ground.ok) noTerrain ??= ground.faults[0]!.message;
+      if (ground && !ground.ok) noTerrain ??= `${ground.faults[0]!.file}: ${ground.faults[0]!.message}`;
       const underFoot = found?.profile.heightsM[found.profile.heightsM.length - 1];
       if (station.groundM === undefined && underFoot === undefined) assumesGround = true;
       const site = { ...there, groundM: station.groundM ?? underFoot ?? 0 };
@@ -160,7 +160,10 @@ async function terrainOf({ scenario, folder }: RosterPlan): Promise<Terrain | un
 
 async function grounded({ site }: RosterSite, terrain: Terrain | undefined): Promise<Site> {
   if (site.groundM !== undefined) return { ...site, groundM: site.groundM };
-  const heights = await terrain?.elevation?.heightsAt([site.latitude], [site.longitude]);
+  // A broken tile is told of the stations that it keeps from having terrain.
+  const heights = await terrain?.elevation
+    ?.heightsAt([site.latitude], [site.longitude])
+    .catch(() => undefined);
   const known = heights?.heightsM[0] ?? Number.NaN;
   return { ...site, groundM: Number.isNaN(known) ? 0 : known };
 }

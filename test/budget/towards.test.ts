@@ -3,7 +3,7 @@ import { describe, expect, it } from "vitest";
 import { evaluate } from "../../src/budget/evaluate.ts";
 import { carrier, margins } from "../../src/budget/margins.ts";
 import { prepare } from "../../src/budget/prepare.ts";
-import { bothWays, type FarEnd, towards, turned, withFarDish } from "../../src/budget/towards.ts";
+import { bothWays, type FarEnd, fromSite, towards, turned, withFarDish } from "../../src/budget/towards.ts";
 import type { Case, Link } from "../../src/budget/types.ts";
 import type { Scenario } from "../../src/scenario/types.ts";
 import {
@@ -153,6 +153,18 @@ describe("another station at the far end", () => {
     expect(evaluate(out, before.case)).toEqual(anew);
     const water = place === "cover" ? "rx.water_loss" : "rx.dish_cover_water";
     expect(entryOf(anew, water).db).toBeLessThan(entryOf(before, water).db - 0.05);
+  });
+
+  it("may be worked from another site, and is then the scenario that starts there", () => {
+    const scenario = scenarioOf();
+    const far = { site: eastOnEquator(90, { groundM: 40 }) };
+    const site = siteOf({ latitude: 0.4, groundM: 220, positionErrorKm: 0.3 });
+    const anew = rewritten({ ...scenario, path: { ...scenario.path, from: site } }, far);
+    const ways = towards(fromSite(bothWays(scenario), site), far);
+    for (const one of everyCase(ways.out)) {
+      expect(evaluate(ways.out, one)).toEqual(evaluate(prepare(anew), one));
+      expect(evaluate(ways.back, one).marginDb).toBeCloseTo(evaluate(prepare(turned(anew)), one).marginDb, 9);
+    }
   });
 
   it("may have another dish, and is then the scenario that has it", () => {
