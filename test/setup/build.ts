@@ -16,7 +16,7 @@ export default function build(): void {
 
 /** Whether the oldest thing built is younger than the newest thing that it is built from. */
 function isFresh(): boolean {
-  const built = ["oilskin.cjs", "program.cjs", "program.cache", "index.js"].map(
+  const built = ["oilskin.cjs", "program.cjs", "program.cache", "rosterWorker.cjs", "index.js"].map(
     (name) => `${root}dist/${name}`,
   );
   if (!built.every(existsSync)) return false;
