@@ -76,14 +76,17 @@ export const rosterCommand = new Command("roster")
   .addHelpText(
     "after",
     `
-The CSV has a header, in any order: name; locator, or latitude and longitude; and where known ground, height, power,
-dish (a name of the scenario, a diameter or a gain), noise figure, mode, note. Quantities carry units, in the cell or
-in the header ("ground m"). What a row leaves out is as at the scenario's receiver; a partner that states no power has
-the own one; ground not stated is 0 m, or what elevation tiles say. Rows at fault are told on standard error, the rest
-is done, and the exit status is 2.
+The CSV has a header, in any order: name; locator, or latitude and longitude;
+and where known ground, height, power, dish (a name of the scenario, a diameter
+or a gain), noise figure, mode, note. Quantities carry units, in the cell or in
+the header ("ground m"). What a row leaves out is as at the scenario's receiver;
+a partner that states no power has the own one; ground not stated is 0 m, or
+what elevation tiles say. Rows at fault are told on standard error, the rest is
+done, and the exit status is 2.
 
-CSV and JSON lines go out as they are worked out, in a memory that does not grow. A table keeps the ${USUAL_TABLE}
-stations with the most margin; --sort for data holds all of them, ${MOST_SORTED} at the most, or those of --top.`,
+CSV and JSON lines go out as they are worked out, in memory that does not grow.
+A table keeps the ${USUAL_TABLE} stations with the most margin; --sort for data holds all
+of them, ${MOST_SORTED} at the most, or those of --top.`,
   )
   .action(async (file: string, stations: string, options: RosterOptions) => {
     if (options.force && options.output === undefined) throw new UserError("--force goes with --output");

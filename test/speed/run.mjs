@@ -5,8 +5,10 @@
  */
 import { coldStart } from "./coldStart.mjs";
 import { diffraction } from "./diffraction.mjs";
+import { rosterCost, rosterThreads } from "./roster.mjs";
 import { sheetRate } from "./sheets.mjs";
 import { spread } from "./spread.mjs";
 
-for (const measure of [coldStart, sheetRate, diffraction, spread])
+for (const measure of [coldStart, sheetRate, diffraction, spread, rosterThreads, rosterCost]) {
   process.stdout.write(`${await measure()}\n`);
+}
