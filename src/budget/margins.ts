@@ -3,7 +3,7 @@ import { requiredSnrInBandwidth } from "../receiver/modes.ts";
 import { thermalNoiseDbm } from "../receiver/noise.ts";
 import type { Entry } from "./entry.ts";
 import { mechanismsOf } from "./mechanisms.ts";
-import { noiseTemperatures } from "./noiseSide.ts";
+import { type NoiseTemperatures, noiseTemperatures } from "./noiseSide.ts";
 import type { Case, Link, Mechanism, Verdict } from "./types.ts";
 import { probabilityAboveZero, verdictOf } from "./verdict.ts";
 
@@ -44,30 +44,19 @@ export function margins(
   const heard = receiver.mouth[hearer.cover]![name]!;
   const overReceiver = receiver.dishCover[name]!;
   const noise = noiseTemperatures(scenario, weather, heard, overReceiver);
-  const byGround = way.name !== "line_of_sight";
-  // Against the noise of 1 Hz: each mode takes its bandwidth off.
-  let snrDb =
-    (byGround ? -way.excessDb : 0) - thermalNoiseDbm({ temperatureK: noise.steps[4], bandwidthHz: 1 });
-  let variance = noise.receiverSigmaDb ** 2 + noise.antennaSigmaDb ** 2 + (byGround ? way.sigmaDb ** 2 : 0);
-  const add = ({ db, sigma }: Entry) => {
-    snrDb += db;
-    variance += sigma * sigma;
-  };
-  add(transmitter.power!);
-  add(transmitter.line);
-  add(receiver.line);
-  for (const entries of [
-    transmitter.mouth[sender.cover]![name]!.entries,
-    transmitter.antenna,
-    transmitter.dishCover[name]!.entries,
-    weather.entries,
-    link.foliage,
-    overReceiver.entries,
-    receiver.antenna,
-    heard.entries,
-  ]) {
-    for (const entry of entries) add(entry);
-  }
+  const sum = startFrom(noise, way);
+  add(sum, transmitter.power!);
+  add(sum, transmitter.line);
+  add(sum, receiver.line);
+  addAll(sum, transmitter.mouth[sender.cover]![name]!.entries);
+  addAll(sum, transmitter.antenna);
+  addAll(sum, transmitter.dishCover[name]!.entries);
+  addAll(sum, weather.entries);
+  addAll(sum, link.foliage);
+  addAll(sum, overReceiver.entries);
+  addAll(sum, receiver.antenna);
+  addAll(sum, heard.entries);
+  const [snrDb, variance] = [sum[0]!, sum[1]!];
   return modes.map((one) => {
     const mode = link.modes[one]!;
     const marginDb = snrDb - powerToDb(mode.noiseBandwidthHz) - requiredSnrInBandwidth(mode);
@@ -75,4 +64,28 @@ export function margins(
     const holds = probabilityAboveZero(marginDb, marginSigmaDb);
     return { marginDb, marginSigmaDb, verdict: verdictOf(marginDb, holds, scenario.decision) };
   });
+}
+
+/** Signal less noise [dB], and the variance of both [dB^2]: numbers side by side, for nothing is to be thrown away. */
+type Sum = Float64Array;
+
+/** Against the noise of 1 Hz: each mode takes its bandwidth off. */
+function startFrom(noise: NoiseTemperatures, way: Pick<Mechanism, "name" | "excessDb" | "sigmaDb">): Sum {
+  const sum = new Float64Array(2);
+  sum[0] = -thermalNoiseDbm({ temperatureK: noise.steps[4], bandwidthHz: 1 });
+  sum[1] = noise.receiverSigmaDb ** 2 + noise.antennaSigmaDb ** 2;
+  if (way.name !== "line_of_sight") {
+    sum[0] -= way.excessDb;
+    sum[1] += way.sigmaDb ** 2;
+  }
+  return sum;
+}
+
+function add(sum: Sum, { db, sigma }: Entry): void {
+  sum[0]! += db;
+  sum[1]! += sigma * sigma;
+}
+
+function addAll(sum: Sum, entries: readonly Entry[]): void {
+  for (let i = 0; i < entries.length; i++) add(sum, entries[i]!);
 }

@@ -139,26 +139,36 @@ function troposcatter(
   const { frequencyGHz } = sight;
   const distanceKm = pathLengthKm(profile);
   // Field by field: spreading three large objects takes longer than the model.
-  const common = {
+  const { N0, dN } = settings;
+  const { angularDistanceMrad } = analysis;
+  const txGainDbi = sumOf(transmitter.antenna, "db");
+  const rxGainDbi = sumOf(receiver.antenna, "db");
+  const percent = 50;
+  const wantedDb = troposcatterLoss({
     frequencyGHz,
     distanceKm,
-    N0: settings.N0,
-    txGainDbi: sumOf(transmitter.antenna, "db"),
-    rxGainDbi: sumOf(receiver.antenna, "db"),
-    percent: 50,
-  };
-  const wantedDb = troposcatterLoss({
-    ...common,
-    dN: settings.dN,
     txHeightAmslM: sight.txHeightAmslM,
     rxHeightAmslM: sight.rxHeightAmslM,
     effectiveRadiusKm: sight.effectiveRadiusKm,
     txHorizonMrad: analysis.txHorizonMrad,
     rxHorizonMrad: analysis.rxHorizonMrad,
+    txGainDbi,
+    rxGainDbi,
+    N0,
+    dN,
     groundHeightKm: middleGroundM(profile) / 1000,
+    percent,
   }).lossDb;
-  const { angularDistanceMrad } = analysis;
-  const cautiousDb = interferenceTroposcatterLoss({ ...common, angularDistanceMrad, gasDb: 0 });
+  const cautiousDb = interferenceTroposcatterLoss({
+    frequencyGHz,
+    distanceKm,
+    angularDistanceMrad,
+    N0,
+    txGainDbi,
+    rxGainDbi,
+    gasDb: 0,
+    percent,
+  });
   const wanted = wantedDb >= cautiousDb;
   const overreaches = wanted ? outside(troposcatterValidity, { frequencyGHz, distanceKm }) : [];
   return [

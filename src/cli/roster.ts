@@ -106,7 +106,8 @@ of them, ${MOST_SORTED} at the most, or those of --top.`,
     const output =
       options.output === undefined ? undefined : openDraft(options.output, options.force === true);
     try {
-      const job = { plan, form, format } as const;
+      const streamed = format !== "table" && options.sort === undefined && top === undefined;
+      const job = { plan, form, format, streamed } as const;
       const outcome = await work(
         job,
         roster,
@@ -140,12 +141,10 @@ async function work(
   const bar = rateBar(process.stderr, "roster", "stations");
   const stopping = stopOnSignal(output);
   if (format === "csv") await write(rosterCsvHead);
-  const streamed = format !== "table" && sort === undefined && top === undefined;
   const order = comparing(sort ?? (format === "table" ? "heading" : "row"));
   const most = top ?? (format === "table" ? USUAL_TABLE : MOST_SORTED);
   const kept = plan.sites.map(() => keepBest<Worked>(most, comparing("margin")));
-  const take = (one: Worked) => {
-    if (streamed) return write(one.text);
+  const station = (one: Worked) => {
     kept[one.site]!.add(one);
     if (format !== "table" && top === undefined && kept[one.site]!.seen() > MOST_SORTED) {
       throw new UserError(
@@ -153,6 +152,7 @@ async function work(
       );
     }
   };
+  const take = { text: write, station };
   const outcome = await runRoster(job, roster, threads, take, bar, stopping.signal);
   stopping.end();
   const told = [
@@ -252,7 +252,7 @@ function stopOnSignal(output: Draft | undefined): { readonly signal: AbortSignal
   };
 }
 
-function toStandardOutput(text: string): void | Promise<void> {
+function toStandardOutput(text: string | Uint8Array): void | Promise<void> {
   if (process.stdout.write(text)) return;
   return new Promise((resolve) => process.stdout.once("drain", resolve));
 }

@@ -30,17 +30,24 @@ export interface RosterOutcome {
   readonly interrupted: boolean;
 }
 
+/** What gets the stations that the filter keeps, in the order of the file. */
+export interface Taker {
+  /** Where they are streamed: some stations' lines. */
+  readonly text: (text: Uint8Array) => void | Promise<void>;
+  /** Where they are not: one after the other. */
+  readonly station: (worked: Worked) => void;
+}
+
 /**
  * Works out a roster, by itself or spread over threads; what comes out does not depend on how many.
  *
- * @param take     gets the stations that the filter keeps, in the order of the file
  * @param stopped  ends it early
  */
 export async function runRoster(
   job: RosterJob,
   roster: Roster,
   threads: number,
-  take: (worked: Worked) => void | Promise<void>,
+  take: Taker,
   bar: RateBar,
   stopped: AbortSignal,
 ): Promise<RosterOutcome> {
@@ -54,23 +61,34 @@ export async function runRoster(
     if (faults.length < MOST_FAULTS) faults.push(`${roster.path}:${line}:${column}: ${message}`);
   };
   const takeAll = async (worked: WorkedLines) => {
-    const found = worked.faults.map((one) => ({ ...one }));
+    const found = [...worked.faults];
     rowsLost += new Set(found.map(({ line }) => line)).size;
-    for (const { line, key, kept, ...station } of worked.stations) {
-      const first = seen.firstLineOf(key, line);
-      if (first !== undefined) {
-        found.push({ line, column: 1, message: `the same station as in line ${first}, which stands` });
-        rowsLost++;
+    const twice = new Set<number>();
+    for (const [i, line] of worked.lines.entries()) {
+      const first = seen.firstLineOf([worked.keys[2 * i]!, worked.keys[2 * i + 1]!], line);
+      if (first === undefined) {
+        if (worked.reached[i] === 1) done++;
+        else rowsLost++;
+        groundAssumed += worked.groundAssumed[i]!;
         continue;
       }
-      if (station.reached) done++;
-      else rowsLost++;
-      if (station.groundAssumed) groundAssumed++;
-      if (station.noTerrain !== undefined) withoutTerrain++;
-      terrainReason ??= station.noTerrain;
-      found.push(...station.faults);
-      for (const one of kept) await take(one);
+      twice.add(i);
+      rowsLost++;
+      found.push({ line, column: 1, message: `the same station as in line ${first}, which stands` });
     }
+    const counts = ({ station }: { readonly station: number }) => !twice.has(station);
+    found.push(...worked.noPaths.filter(counts));
+    for (const { reason } of worked.noTerrain.filter(counts)) {
+      withoutTerrain++;
+      terrainReason ??= reason;
+    }
+    if (twice.size === 0) await take.text(worked.text);
+    else {
+      for (const [i, end] of worked.ends.entries()) {
+        if (!twice.has(i)) await take.text(worked.text.subarray(worked.ends[i - 1] ?? 0, end));
+      }
+    }
+    for (const one of worked.kept.filter((_, i) => !twice.has(i)).flat()) take.station(one);
     for (const one of found.sort((a, b) => a.line - b.line)) fault(one.line, one.column, one.message);
     bar.tell(worked.share, done);
   };

@@ -12,7 +12,6 @@ import {
   rosterLine,
   rosterStudy,
   rowReader,
-  type StationKey,
   stationKey,
 } from "../index.ts";
 
@@ -23,9 +22,11 @@ export interface RosterJob {
   readonly plan: RosterPlan;
   readonly form: RowForm;
   readonly format: RosterFormat;
+  /** Whether the stations are written as they come, so that nothing of them but their text is needed. */
+  readonly streamed: boolean;
 }
 
-/** A station seen from one site, as it will be printed. */
+/** A station seen from one site, as it will be sorted and printed. */
 export interface Worked extends Ranked {
   readonly site: number;
   /** Lines of CSV or JSON; "" for a table. */
@@ -33,34 +34,50 @@ export interface Worked extends Ranked {
   readonly table: RosterLine | undefined;
 }
 
-/** Some rows of a roster, worked out; in the order of the file. */
+/**
+ * Some rows of a roster, worked out, in the order of the file: by station, in arrays of numbers and one piece of text,
+ * because a million small objects sent from thread to thread would cost more than a tenth of the work.
+ */
 export interface WorkedLines {
   readonly share: number;
-  readonly stations: readonly {
-    readonly line: number;
-    readonly key: StationKey;
-    /** Whether there is a path from any site. */
-    readonly reached: boolean;
-    /** Those that the filter keeps. */
-    readonly kept: readonly Worked[];
-    readonly groundAssumed: boolean;
-    readonly noTerrain: string | undefined;
-    /** Why there is no path from one site or another. */
-    readonly faults: readonly RowFault[];
-  }[];
+  readonly lines: Uint32Array;
+  /** Two halves for each station. */
+  readonly keys: Uint32Array;
+  /** 1 where there is a path from any site; 1 where the ground was taken for 0 m. */
+  readonly reached: Uint8Array;
+  readonly groundAssumed: Uint8Array;
+  /** Why terrain could not be had. */
+  readonly noTerrain: readonly { readonly station: number; readonly reason: string }[];
+  /** What the filter keeps: where streamed, the text of all and its end for each station; else the stations. */
+  readonly text: Uint8Array;
+  readonly ends: Uint32Array;
+  readonly kept: readonly (readonly Worked[])[];
   /** Of rows that could not be read. */
   readonly faults: readonly RowFault[];
+  /** Why there is no path from one site or another. */
+  readonly noPaths: readonly (RowFault & { readonly station: number })[];
 }
 
 /** A function that works out some lines after others. */
 export async function rosterWork(job: RosterJob): Promise<(rows: RosterLines) => Promise<WorkedLines>> {
-  const { plan, form } = job;
+  const { plan, form, streamed } = job;
   const read = rowReader(form);
   const study = await rosterStudy(plan);
-  return async ({ lines, firstLine, share }) => {
-    const stations: WorkedLines["stations"][number][] = [];
+  return async ({ lines: texts, firstLine, share }) => {
+    const [lines, keys, reached, ground, ends]: [number[], number[], number[], number[], number[]] = [
+      [],
+      [],
+      [],
+      [],
+      [],
+    ];
+    const noTerrain: WorkedLines["noTerrain"][number][] = [];
+    const noPaths: WorkedLines["noPaths"][number][] = [];
     const faults: RowFault[] = [];
-    for (const [i, text] of lines.entries()) {
+    const kept: Worked[][] = [];
+    const pieces: Buffer[] = [];
+    let end = 0;
+    for (const [i, text] of texts.entries()) {
       if (text.startsWith("#") || text.trim() === "") continue;
       const line = firstLine + i;
       const { station, faults: found } = read(text, line);
@@ -68,22 +85,40 @@ export async function rosterWork(job: RosterJob): Promise<(rows: RosterLines) =>
         faults.push(...found);
         continue;
       }
-      const { rows, noPaths, assumed } = await study(station);
-      stations.push({
-        line,
-        key: stationKey(station),
-        reached: rows.length > 0,
-        kept: rows.flatMap((row) => worked(row, job)),
-        groundAssumed: assumed.ground,
-        noTerrain: assumed.noTerrain,
-        faults: noPaths.map(({ message }) => ({ line, column: 1, message })),
-      });
+      const seen = await study(station);
+      const index = lines.length;
+      lines.push(line);
+      keys.push(...stationKey(station));
+      reached.push(seen.rows.length > 0 ? 1 : 0);
+      ground.push(seen.assumed.ground ? 1 : 0);
+      if (seen.assumed.noTerrain !== undefined)
+        noTerrain.push({ station: index, reason: seen.assumed.noTerrain });
+      for (const { message } of seen.noPaths) noPaths.push({ station: index, line, column: 1, message });
+      const worked = seen.rows.flatMap((row) => workedOf(row, job));
+      if (streamed) {
+        const piece = Buffer.from(worked.map((one) => one.text).join(""));
+        pieces.push(piece);
+        end += piece.length;
+      } else kept.push(worked);
+      ends.push(end);
     }
-    return { share, stations, faults };
+    return {
+      share,
+      lines: Uint32Array.from(lines),
+      keys: Uint32Array.from(keys),
+      reached: Uint8Array.from(reached),
+      groundAssumed: Uint8Array.from(ground),
+      noTerrain,
+      text: Buffer.concat(pieces),
+      ends: Uint32Array.from(ends),
+      kept,
+      faults,
+      noPaths,
+    };
   };
 }
 
-function worked(row: RosterRow, { plan, format }: RosterJob): Worked[] {
+function workedOf(row: RosterRow, { plan, format }: RosterJob): Worked[] {
   const table = rosterLine(row, plan);
   const { line, name, site, headingDeg, distanceKm, rankDb } = table;
   const best = table.weathers.map((one) => ({ verdict: one.best?.verdict }));

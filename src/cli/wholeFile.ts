@@ -3,7 +3,7 @@ import { UserError } from "./terminal.ts";
 
 /** A file that is being written under another name. */
 export interface Draft {
-  readonly write: (text: string) => void;
+  readonly write: (text: string | Uint8Array) => void;
   /** Gives it its name; nothing is left under the other one. */
   readonly keep: () => void;
   /** Gives it up; harmless after `keep`. */
@@ -47,7 +47,7 @@ export function openDraft(file: string, force: boolean): Draft {
   return {
     write: (text) =>
       attempt(() => {
-        const bytes = Buffer.from(text);
+        const bytes = typeof text === "string" ? Buffer.from(text) : text;
         for (let done = 0; done < bytes.length; ) done += writeSync(descriptor!, bytes, done);
       }),
     keep: () => {
