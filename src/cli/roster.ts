@@ -17,6 +17,7 @@ import { planOf, type RosterOptions } from "./rosterOptions.ts";
 import { type RosterOutcome, runRoster } from "./rosterRun.ts";
 import type { RosterJob, Worked } from "./rosterWork.ts";
 import { scenarioIn } from "./scenarioFile.ts";
+import { stopOnSignal } from "./stopOnSignal.ts";
 import { paintFor, UserError } from "./terminal.ts";
 import { type Draft, openDraft } from "./wholeFile.ts";
 
@@ -28,9 +29,8 @@ const MOST_SORTED = 100_000;
 const FEW_BYTES = 60_000;
 const MOST_WORKERS = 64;
 
-/** Exit status of bad rows, and of an interruption by the keyboard. */
+/** Exit status of bad rows. */
 const BAD_ROWS = 2;
-const INTERRUPTED = 130;
 
 export const rosterCommand = new Command("roster")
   .description("many stations from one site or several: distance, headings, what carries the path, best mode")
@@ -114,7 +114,7 @@ of them, ${MOST_SORTED} at the most, or those of --top.`,
         { ...options, top, threads: threadsFor(roster, plan, asked), notes, date },
         output,
       );
-      if (!outcome.interrupted) output?.keep();
+      if (outcome.interrupted === undefined) output?.keep();
       process.exitCode = tell(outcome, options.output);
     } finally {
       output?.drop();
@@ -139,7 +139,7 @@ async function work(
   const { plan, format } = job;
   const write = output ? output.write : toStandardOutput;
   const bar = rateBar(process.stderr, "roster", "stations");
-  const stopping = stopOnSignal(output);
+  const stopping = stopOnSignal(() => output?.drop());
   if (format === "csv") await write(rosterCsvHead);
   const order = comparing(sort ?? (format === "table" ? "heading" : "row"));
   const most = top ?? (format === "table" ? USUAL_TABLE : MOST_SORTED);
@@ -156,13 +156,13 @@ async function work(
   const outcome = await runRoster(job, roster, threads, take, bar, stopping.signal);
   stopping.end();
   const told = [
-    ...(outcome.interrupted
+    ...(outcome.interrupted !== undefined
       ? [`interrupted: the roster goes on after the first ${outcome.done} stations`]
       : []),
     ...notes,
     ...outcomeNotes(outcome, plan),
   ];
-  if (outcome.interrupted && output) return outcome;
+  if (outcome.interrupted !== undefined && output) return outcome;
   const sorted = kept.map((site) => [...site.best()].sort(order));
   if (format === "table") {
     const left = kept.map((site, i) => site.seen() - sorted[i]!.length).filter((count) => count > 0);
@@ -211,10 +211,10 @@ function tell(
   for (const line of faults) say(line);
   if (faultCount > faults.length) say(`and ${faultCount - faults.length} more`);
   const rows = (count: number) => (count === 1 ? "1 row" : `${count} rows`);
-  if (interrupted) {
+  if (interrupted !== undefined) {
     const kept = output === undefined ? "what is written stands" : `${output} is not written`;
     say(`interrupted after ${done} stations; ${kept}`);
-    return INTERRUPTED;
+    return interrupted;
   }
   if (faultCount > 0) {
     say(
@@ -230,26 +230,6 @@ function threadsFor({ bytes }: Roster, { sites, scenario }: RosterPlan, asked: n
   if (asked !== undefined) return asked;
   const weight = scenario.path.terrain === undefined ? 1 : 20;
   return bytes * sites.length * weight < FEW_BYTES ? 1 : Math.min(MOST_WORKERS, availableParallelism());
-}
-
-/** Ctrl-C and its kin: the first ends the work in order, the second at once. */
-function stopOnSignal(output: Draft | undefined): { readonly signal: AbortSignal; readonly end: () => void } {
-  const controller = new AbortController();
-  const signals = ["SIGINT", "SIGTERM", "SIGHUP"] as const;
-  const stop = () => {
-    if (controller.signal.aborted) {
-      output?.drop();
-      process.exit(INTERRUPTED);
-    }
-    controller.abort();
-  };
-  for (const name of signals) process.on(name, stop);
-  return {
-    signal: controller.signal,
-    end: () => {
-      for (const name of signals) process.off(name, stop);
-    },
-  };
 }
 
 function toStandardOutput(text: string | Uint8Array): void | Promise<void> {

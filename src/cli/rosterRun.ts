@@ -27,7 +27,8 @@ export interface RosterOutcome {
   readonly faultCount: number;
   /** Rows that were not worked out at all. */
   readonly rowsLost: number;
-  readonly interrupted: boolean;
+  /** Exit status of an interruption; undefined where there was none. */
+  readonly interrupted: number | undefined;
 }
 
 /** What gets the stations that the filter keeps, in the order of the file. */
@@ -114,7 +115,7 @@ export async function runRoster(
   if (rows === 0 && faultCount === 0 && !stopped.aborted) {
     fault(roster.headerLine, 1, "a header and no stations below it");
   }
-  const interrupted = stopped.aborted;
+  const interrupted = stopped.aborted ? (stopped.reason as number) : undefined;
   return { done, groundAssumed, withoutTerrain, terrainReason, faults, faultCount, rowsLost, interrupted };
 }
 

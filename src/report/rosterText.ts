@@ -175,7 +175,9 @@ function legend({ plan, lines }: RosterTable): string {
         ]
       : []),
     ...(plan.covers[0] !== "bare" && plan.covers.includes("bare")
-      ? [`Cover: what ${plan.covers[0]} takes against a bare mouth in ${wet ?? dry} [dB].`]
+      ? [
+          `Cover: what ${plan.covers[0]} takes against a bare mouth in ${wet ?? dry} [dB]; rain into a bare mouth is not charged.`,
+        ]
       : []),
     ...(all.some(({ mode }) => mode !== plan.modes[0])
       ? ["A station with a mode of its own has its margins in that mode."]

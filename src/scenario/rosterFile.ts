@@ -73,7 +73,7 @@ export async function* rosterLines(
 ): AsyncGenerator<RosterLines> {
   let line = 0;
   let open = "";
-  let read = 0;
+  let passed = 0;
   let waiting: string[] = [];
   const take = (share: number): RosterLines => {
     const lines = waiting;
@@ -81,18 +81,17 @@ export async function* rosterLines(
     return { firstLine: line - lines.length + 1, lines, share };
   };
   try {
-    for await (const text of textOf(path, false, (done) => {
-      read = done;
-    })) {
+    for await (const text of textOf(path, false)) {
       // A carriage return at the very end may be half of a line's end.
       const whole = open + text;
       const ready = whole.endsWith("\r") ? whole.slice(0, -1) : whole;
       const lines = ready.split(/\r\n|\n|\r/);
       open = lines.pop()! + whole.slice(ready.length);
       for (const one of lines) {
+        passed += one.length + 1; // as good as bytes
         if (++line <= headerLine) continue;
         waiting.push(one);
-        if (waiting.length === atATime) yield take(Math.min(1, read / Math.max(1, bytes)));
+        if (waiting.length === atATime) yield take(Math.min(1, passed / bytes));
       }
       if (open.length > LONGEST_LINE) throw Object.assign(new Error(), { code: "LONG" });
     }

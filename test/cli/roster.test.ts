@@ -298,7 +298,7 @@ describe("where a roster goes", () => {
   const long = fileOf("long.csv", manyRows(60_000));
 
   /** Starts a long roster, and interrupts it once it has something to show. */
-  function interrupted(args: readonly string[], begun: () => boolean) {
+  function interrupted(args: readonly string[], begun: () => boolean, signal: NodeJS.Signals = "SIGINT") {
     const child = spawn(process.execPath, [programFile, "roster", demo, long, ...args]);
     let [stdout, stderr] = ["", ""];
     child.stdout.on("data", (data) => {
@@ -310,7 +310,7 @@ describe("where a roster goes", () => {
     const timer = setInterval(() => {
       if (!begun() && stdout.length < 100_000) return;
       clearInterval(timer);
-      child.kill("SIGINT");
+      child.kill(signal);
     }, 20);
     return new Promise<{ status: number | null; stdout: string; stderr: string }>((resolve) => {
       child.on("close", (status) => {
@@ -333,11 +333,14 @@ describe("where a roster goes", () => {
     );
   });
 
-  it("leaves no file of an interrupted run", async () => {
+  it.each([
+    ["SIGINT", 130],
+    ["SIGTERM", 143],
+  ] as const)("leaves no file of a run that %s ends", async (signal, wanted) => {
     const file = join(folder, "cut.csv");
     const begun = () => readdirSync(folder).some((name) => name.startsWith("cut.csv"));
-    const { status, stderr } = await interrupted(["--csv", "--output", file], begun);
-    expect(status).toBe(130);
+    const { status, stderr } = await interrupted(["--csv", "--output", file], begun, signal);
+    expect(status).toBe(wanted);
     expect(stderr).toContain(`${file} is not written`);
     expect(readdirSync(folder).filter((name) => name.startsWith("cut.csv"))).toEqual([]);
     expect(existsSync(file)).toBe(false);
