@@ -4,6 +4,9 @@ export interface WorkerPool<Task, Result> {
   readonly end: () => Promise<void>;
 }
 
+/** Tasks that a thread has before it: with one alone it would stand idle until the next is handed over. */
+const AT_HAND = 2;
+
 /**
  * @param file     whose function `work` does a task
  * @param threads  how many
@@ -20,6 +23,7 @@ export async function workerPool<Task, Result>(
     name: "work",
     minThreads: threads,
     maxThreads: threads,
+    concurrentTasksPerWorker: AT_HAND,
     workerData: data,
   });
   return {

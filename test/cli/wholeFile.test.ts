@@ -1,7 +1,7 @@
 import { mkdirSync, readdirSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { beforeEach, describe, expect, it, vi } from "vitest";
-import { writeWhole } from "../../src/cli/wholeFile.ts";
+import { openDraft, writeWhole } from "../../src/cli/wholeFile.ts";
 import { temporaryFolder } from "./run.ts";
 
 /** The codes with which the calls of the system are to fail, or what is to happen before them. */
@@ -65,5 +65,37 @@ describe("writing a file whole", () => {
     expect(() => writeWhole(file, "new", true)).toThrow("cannot be written (EIO)");
     expect(readFileSync(file, "utf8")).toBe("old");
     expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+});
+
+describe("a file that is written piece by piece", () => {
+  const folder = temporaryFolder();
+
+  it("has its name only when it is whole", () => {
+    const file = join(folder, "whole.csv");
+    const draft = openDraft(file, false);
+    draft.write("a");
+    draft.write(Buffer.from("\u00e4"));
+    expect(readdirSync(folder)).toEqual([expect.stringMatching(/^whole\.csv\.\d+\.part$/)]);
+    draft.keep();
+    draft.drop();
+    expect(readFileSync(file, "utf8")).toBe("a\u00e4");
+    expect(readdirSync(folder)).toEqual(["whole.csv"]);
+  });
+
+  it("leaves nothing where it is given up", () => {
+    const before = readdirSync(folder);
+    const draft = openDraft(join(folder, "given up.csv"), false);
+    draft.write("a");
+    draft.drop();
+    expect(readdirSync(folder)).toEqual(before);
+  });
+
+  it("is refused at once where there is one already, or no such folder", () => {
+    const file = join(folder, "mine.csv");
+    writeFileSync(file, "mine");
+    expect(() => openDraft(file, false)).toThrow("exists already; --force replaces it");
+    expect(() => openDraft(join(folder, "none", "x.csv"), false)).toThrow("no such folder");
+    expect(readFileSync(file, "utf8")).toBe("mine");
   });
 });

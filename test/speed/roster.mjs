@@ -13,8 +13,8 @@ import {
 const program = new URL("../../dist/oilskin.cjs", import.meta.url).pathname;
 const file = new URL("../../scenarios/hilltop-contest.yaml", import.meta.url).pathname;
 
-const THREADED = 30_000;
-const ROUNDS = 3;
+const THREADED = 50_000;
+const ROUNDS = 4;
 const COUNTS = [100, 10_000, 100_000];
 
 const median = (values) => values.toSorted((a, b) => a - b)[Math.floor(values.length / 2)];
@@ -68,9 +68,12 @@ export function rosterThreads() {
     two.push(seconds("2"));
   }
   rmSync(folder, { recursive: true });
+  // The least of each: a second thread shows only while nobody else has the second core.
+  const least = [Math.min(...one), Math.min(...two)];
   return (
-    `roster of ${THREADED} stations: 1 thread / 2 threads = ${(median(one) / median(two)).toFixed(2)} ` +
-    `(medians ${median(one).toFixed(1)} and ${median(two).toFixed(1)} s, ${availableParallelism()} cores, ${ROUNDS} rounds)`
+    `roster of ${THREADED} stations: 1 thread / 2 threads = ${(least[0] / least[1]).toFixed(2)} ` +
+    `(least ${least.map((time) => time.toFixed(1)).join(" and ")} s, medians ${median(one).toFixed(1)} and ` +
+    `${median(two).toFixed(1)} s, ${availableParallelism()} cores, ${ROUNDS} rounds)`
   );
 }
 
