@@ -94,7 +94,7 @@ export async function runRoster(
     bar.tell(worked.share, done);
   };
   try {
-    const most = TASKS_PER_THREAD * threads;
+    const most = threads === 1 ? 1 : TASKS_PER_THREAD * threads;
     const atOnce = job.plan.scenario.path.terrain === undefined ? ROWS_AT_ONCE : ROWS_WITH_TERRAIN;
     let broken: RosterLines["fault"];
     async function* tasks() {

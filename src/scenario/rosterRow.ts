@@ -108,11 +108,12 @@ export function rowReader({
       const typed = numberWithUnit(textIn(column), columns[column]?.unit ?? "", separator);
       if (typed === "") return undefined;
       const reading = readQuantity(typed, kind, { spread: kind === "powerDbm" || kind === "levelDb" });
-      const message = reading.ok
-        ? outOfRange(reading, kind, { about, range })
-        : `${describeRefusal(reading)}${reading.code === "bare_number" ? `, or name the unit in the header, such as "${column} m"` : ""}`;
-      if (message !== undefined || !reading.ok) return fault(column, headerUnit(message ?? "", kind));
-      return { value: reading.value, sigma: reading.sigma };
+      if (!reading.ok) {
+        const inHeader = `, or name the unit in the header, such as "${column} ${headerUnit(kind)}"`;
+        return fault(column, describeRefusal(reading) + (reading.code === "bare_number" ? inHeader : ""));
+      }
+      const message = outOfRange(reading, kind, { about, range });
+      return message === undefined ? { value: reading.value, sigma: reading.sigma } : fault(column, message);
     };
 
     const name = textIn("name");
@@ -151,10 +152,9 @@ export function rowReader({
   };
 }
 
-/** The hint on a header's unit names one that fits. */
-function headerUnit(message: string, kind: QuantityKind): string {
-  const unit = kind === "powerDbm" ? "W" : kind === "levelDb" ? "dB" : "m";
-  return message.replace(/ m"$/, ` ${unit}"`);
+/** A unit that people put in a header. */
+function headerUnit(kind: QuantityKind): string {
+  return kind === "powerDbm" ? "W" : kind === "levelDb" ? "dB" : "m";
 }
 
 /** A plain number under a heading with a unit gets that unit; beside semicolons and tabs a decimal comma is a point. */
