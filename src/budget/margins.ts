@@ -66,12 +66,15 @@ export function margins(
   });
 }
 
-/** Signal less noise [dB], and the variance of both [dB^2]: numbers side by side, for nothing is to be thrown away. */
+/** Signal less noise [dB], and the variance of both [dB^2]. */
 type Sum = Float64Array;
+
+/** One for all: making such an array takes longer than filling it. */
+const sumOfMargins: Sum = new Float64Array(2);
 
 /** Against the noise of 1 Hz: each mode takes its bandwidth off. */
 function startFrom(noise: NoiseTemperatures, way: Pick<Mechanism, "name" | "excessDb" | "sigmaDb">): Sum {
-  const sum = new Float64Array(2);
+  const sum = sumOfMargins;
   sum[0] = -thermalNoiseDbm({ temperatureK: noise.steps[4], bandwidthHz: 1 });
   sum[1] = noise.receiverSigmaDb ** 2 + noise.antennaSigmaDb ** 2;
   if (way.name !== "line_of_sight") {

@@ -84,6 +84,10 @@ a partner that states no power has the own one; ground not stated is 0 m, or
 what elevation tiles say. Rows at fault are told on standard error, the rest is
 done, and the exit status is 2.
 
+The table shows the margin of the most demanding mode under the own cover, and
+the best mode for either; --mode and --cover choose others, data have them all.
+Covers are those of the own feed: the partner's stays as in the scenario.
+
 CSV and JSON lines go out as they are worked out, in memory that does not grow.
 A table keeps the ${USUAL_TABLE} stations with the most margin; --sort for data holds all
 of them, ${MOST_SORTED} at the most, or those of --top.`,

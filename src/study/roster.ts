@@ -1,7 +1,7 @@
 import { carrier, type Margin, margins } from "../budget/margins.ts";
 import { type BothWays, bothWays, fromSite, towards, withFarDish } from "../budget/towards.ts";
 import type { Case, MechanismName, Verdict } from "../budget/types.ts";
-import { geodesicPath, type Point } from "../path/geodesic.ts";
+import { geodesicPath, type Point, sphereDistanceKm } from "../path/geodesic.ts";
 import { locatorToPoint, pointToLocator, squareCentre } from "../path/locator.ts";
 import type { Station } from "../scenario/rosterRow.ts";
 import { samePlace } from "../scenario/siteSchema.ts";
@@ -96,7 +96,9 @@ export async function rosterStudy(plan: RosterPlan): Promise<(station: Station) 
   const { scenario } = plan;
   const terrain = await terrainOf(plan);
   const sites = await Promise.all(
-    plan.sites.map(async (one) => ({ ...one, site: await grounded(one, terrain) })),
+    plan.sites.map(async (one) => {
+      return { ...one, site: await grounded(one, terrain), centre: scoringCentre(one.site) };
+    }),
   );
   const ways = bothWays(patternOf(scenario, plan.weathers));
   const fitted = new Map<string, BothWays>();
@@ -173,6 +175,8 @@ function pathFault(
   there: Site,
 ): string | undefined {
   if (samePlace(site, there)) return `the same place as ${name}: no path from there`;
+  // The exact length is worked out with the path; the sphere's is good to 0.6 %.
+  if (sphereDistanceKm(site, there) < 0.99 * LONGEST_PATH_KM) return undefined;
   const { distanceKm } = geodesicPath(site, there);
   if (distanceKm <= LONGEST_PATH_KM) return undefined;
   return (
@@ -184,7 +188,7 @@ function pathFault(
 function placed(
   station: Station,
   site: Site,
-  near: { readonly name: string; readonly site: Site; readonly declinationDeg: number | undefined },
+  near: Omit<RosterSite, "site"> & { readonly site: Site; readonly centre: Point },
   index: number,
   { out: { path } }: BothWays,
 ) {
@@ -200,7 +204,7 @@ function placed(
     longitude,
     groundM: site.groundM,
     distanceKm: path.distanceKm,
-    scoreKm: scoreDistanceKm(near.site, station),
+    scoreKm: betweenCentres(near.centre, scoringCentre(station)),
     headingDeg: path.headingDeg,
     magneticDeg: declinationDeg === undefined ? undefined : (path.headingDeg - declinationDeg + 360) % 360,
     backHeadingDeg: path.backHeadingDeg,
@@ -218,11 +222,15 @@ export function scoreDistanceKm(
   a: Point & { readonly locator?: string | undefined },
   b: Point & { readonly locator?: string | undefined },
 ): number {
-  const [from, to] = [a, b].map((end) =>
-    end.locator !== undefined && end.locator.length < SCORING_CHARACTERS
-      ? locatorToPoint(end.locator)
-      : squareCentre(end, SCORING_CHARACTERS),
-  ) as [Point, Point];
+  return betweenCentres(scoringCentre(a), scoringCentre(b));
+}
+
+function scoringCentre(end: Point & { readonly locator?: string | undefined }): Point {
+  const short = end.locator !== undefined && end.locator.length < SCORING_CHARACTERS;
+  return short ? locatorToPoint(end.locator!) : squareCentre(end, SCORING_CHARACTERS);
+}
+
+function betweenCentres(from: Point, to: Point): number {
   const same = from.latitude === to.latitude && from.longitude === to.longitude;
   return same ? 1 : Math.max(1, Math.round(geodesicPath(from, to).distanceKm));
 }

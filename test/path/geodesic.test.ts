@@ -1,6 +1,13 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { geodesicPath, headingUncertaintyDeg, pointAlong, pointsTowards } from "../../src/path/geodesic.ts";
+import {
+  geodesicPath,
+  headingUncertaintyDeg,
+  pointAlong,
+  pointsAlong,
+  pointsTowards,
+  sphereDistanceKm,
+} from "../../src/path/geodesic.ts";
 import { describeReference, num } from "../reference.ts";
 
 const place = fc.record({
@@ -29,6 +36,32 @@ describe("geodesic", () => {
       geodesicPath({ latitude, longitude: 5 }, { latitude: latitude + 1 / 60, longitude: 5 }).distanceKm;
     expect(Math.abs(minute(0) - 1.8429)).toBeLessThan(0.0001);
     expect(Math.abs(minute(89.9) - 1.8616)).toBeLessThan(0.0001);
+  });
+
+  it("has its points sought together where they are sought one by one", () => {
+    const [from, to] = [
+      { latitude: 50, longitude: 3 },
+      { latitude: 58, longitude: -40 },
+    ];
+    const shares = [0, 0.1, 0.5, 1];
+    expect(pointsAlong({ from, to, shares })).toEqual(shares.map((share) => pointAlong({ from, to, share })));
+    expect(() => pointsAlong({ from, to, shares: [0.5, 1.1] })).toThrow(RangeError);
+  });
+
+  it("is as long as a great circle of the mean sphere, within 0.6 %", () => {
+    fc.assert(
+      fc.property(place, place, (a, b) => {
+        fc.pre(Math.abs(a.latitude - b.latitude) > 1e-6);
+        const { distanceKm } = geodesicPath(a, b);
+        expect(Math.abs(sphereDistanceKm(a, b) - distanceKm)).toBeLessThan(0.006 * distanceKm);
+      }),
+    );
+    // A quarter of the equator of that sphere: pi / 2 times its radius.
+    expect(sphereDistanceKm({ latitude: 0, longitude: 170 }, { latitude: 0, longitude: -100 })).toBeCloseTo(
+      10007.557,
+      3,
+    );
+    expect(sphereDistanceKm({ latitude: 7, longitude: 8 }, { latitude: 7, longitude: 8 })).toBe(0);
   });
 
   it("is the same line from either end", () => {
