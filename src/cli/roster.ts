@@ -12,6 +12,7 @@ import {
   suitedDishes,
 } from "../index.ts";
 import { faultsError } from "./benchFile.ts";
+import { namesOption } from "./namesAsked.ts";
 import { rateBar } from "./progress.ts";
 import { planOf, type RosterOptions } from "./rosterOptions.ts";
 import { type RosterOutcome, runRoster } from "./rosterRun.ts";
@@ -57,10 +58,9 @@ export const rosterCommand = new Command("roster")
     "--towards <headings>",
     "only stations at true headings from one clockwise to another, such as 330..20",
   )
-  .option("--mode <names...>", "these modes in place of the scenario's")
-  .option(
-    "--cover <names...>",
-    "the own feed under these covers, the first in the table (bare goes with them)",
+  .addOption(namesOption("--mode <name>", "this mode in place of the scenario's"))
+  .addOption(
+    namesOption("--cover <name>", "the own feed under this cover, bare beside it; the first is in the table"),
   )
   .option("--dry <weather>", "the dry weather (default: the first without rain)")
   .option("--wet <weather>", "the wet weather (default: the one with the most rain)")

@@ -17,6 +17,7 @@ import {
 import { faultsError } from "./benchFile.ts";
 import { day } from "./day.ts";
 import { knownName } from "./knownName.ts";
+import { namesAsked } from "./namesAsked.ts";
 import { quantityOption } from "./optionQuantity.ts";
 import { UserError } from "./terminal.ts";
 
@@ -56,18 +57,19 @@ export async function planOf(
   for (const name of [options.dry, options.wet]) {
     if (name !== undefined) knownName("weather", name, Object.keys(scenario.weather));
   }
-  for (const name of options.mode ?? []) knownName("mode", name, Object.keys(scenario.modes));
-  for (const name of options.cover ?? []) knownName("cover", name, Object.keys(scenario.covers));
+  const modes =
+    options.mode === undefined
+      ? scenario.receiver.modes
+      : namesAsked("mode", options.mode, Object.keys(scenario.modes));
+  const coversAsked = namesAsked("cover", options.cover, Object.keys(scenario.covers));
   const dry = options.dry ?? driest(scenario);
   const wet = options.wet ?? wettest(scenario);
   if (wet === undefined) notes.push("the scenario has no weather with rain: there is no wet half");
-  const own = options.cover?.[0];
+  const own = options.cover && coversAsked[0];
   const pattern = await withTerrainOf(scenario, folder, notes);
   const asked =
     own === undefined ? pattern : { ...pattern, transmitter: { ...pattern.transmitter, cover: own } };
-  const covers = ownCoverFirst(asked).filter(
-    (name) => options.cover === undefined || name === "bare" || options.cover.includes(name),
-  );
+  const covers = ownCoverFirst(asked).filter((name) => name === "bare" || coversAsked.includes(name));
   if (scenario.path.foliageM)
     notes.push("trees of the scenario's path are left out: they stand on that path");
   const sites = await sitesOf(scenario, options.sites, date, notes);
@@ -77,7 +79,7 @@ export async function planOf(
       folder,
       sites,
       weathers: wet === undefined || wet === dry ? [dry] : [dry, wet],
-      modes: mostDemandingFirst(scenario, options.mode ?? scenario.receiver.modes),
+      modes: mostDemandingFirst(scenario, modes),
       covers,
       bothWays: options.oneWay === undefined,
       filter: {

@@ -43,7 +43,11 @@ export function judgedQuantity(
   return reading.ok ? (outOfRange(reading, kind, options) ?? reading) : describeRefusal(reading);
 }
 
-function outOfRange(read: Quantity, kind: QuantityKind, { about, range }: FieldOptions): string | undefined {
+export function outOfRange(
+  read: Quantity,
+  kind: QuantityKind,
+  { about, range }: FieldOptions,
+): string | undefined {
   const [low, high] = range;
   const { value, sigma = 0 } = read;
   const unit = kinds[kind].usual[0]!;
