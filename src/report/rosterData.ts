@@ -16,7 +16,14 @@ const perWeather = [
 /** The header of a roster's flat table. */
 export const rosterCsvHead = `${csvFormatRow([
   ...["from", "name", "row", "locator", "latitude", "longitude", "ground_m", "distance_km", "score_km"],
-  ...["heading_true_deg", "heading_magnetic_deg", "heading_error_deg", "back_heading_true_deg", "terrain"],
+  ...[
+    "heading_true_deg",
+    "heading_magnetic_deg",
+    "heading_error_deg",
+    "back_heading_true_deg",
+    "terrain",
+    "doubts",
+  ],
   ...["cover", "mode"],
   ...["dry", "wet"].flatMap((when) => perWeather.map((column) => `${when}_${column}`)),
 ])}\n`;
@@ -32,7 +39,7 @@ export function rosterCsvLines(row: RosterRow): string {
       digits(row.magneticDeg, 2),
       digits(row.headingErrorDeg, 2),
     ],
-    ...[digits(row.backHeadingDeg, 2), row.terrain ?? ""],
+    ...[digits(row.backHeadingDeg, 2), row.terrain ?? "", codesOf(row).join(" ")],
   ]);
   const first = row.weathers[0]!;
   let lines = "";
@@ -63,7 +70,7 @@ function weatherCells({ weathers }: RosterRow, weather: number, cover: number, m
 
 /** A station as one line of JSON. */
 export function rosterJsonLine(row: RosterRow): string {
-  const { latitude, longitude, weathers, site: _, line, ...station } = row;
+  const { latitude, longitude, weathers, doubts: _, site: __, line, ...station } = row;
   const figures = Object.fromEntries(
     Object.entries(station).map(([key, value]) => [
       key,
@@ -74,6 +81,7 @@ export function rosterJsonLine(row: RosterRow): string {
     ...{ from: row.from, name: row.name, row: line, locator: row.locator },
     ...{ latitude: rounded(latitude, 6), longitude: rounded(longitude, 6) },
     ...figures,
+    doubts: codesOf(row),
     weathers: weathers.map(({ weather, way, covers }) => ({
       weather,
       way,
@@ -92,6 +100,10 @@ export function rosterJsonLine(row: RosterRow): string {
     })),
   };
   return `${JSON.stringify(shown)}\n`;
+}
+
+function codesOf({ doubts }: RosterRow): string[] {
+  return doubts.map(({ code }) => code);
 }
 
 function rounded(value: number, decimals: number): number {
@@ -114,6 +126,7 @@ export interface RosterLine {
   readonly distanceKm: number;
   readonly scoreKm: number;
   readonly terrain: RosterRow["terrain"];
+  readonly doubts: RosterRow["doubts"];
   /** The mode of the margins: the most demanding of the station. */
   readonly mode: string;
   /** Margin under the own cover in the last weather, in that mode [dB]. */
@@ -150,8 +163,9 @@ export function rosterLine(row: RosterRow, { covers }: Pick<RosterPlan, "covers"
       bareBest: open.best,
     };
   });
-  const { line, name, site, headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain } = row;
-  const where = { headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain };
+  const { line, name, site, headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain, doubts } =
+    row;
+  const where = { headingDeg, magneticDeg, headingErrorDeg, distanceKm, scoreKm, terrain, doubts };
   const { mode } = row.weathers[0]!.covers[0]!.modes[0]!;
   return { line, name, site, ...where, mode, rankDb: weathers[weathers.length - 1]!.marginDb, weathers };
 }

@@ -46,12 +46,34 @@ export function rosterText(table: RosterTable, paint: Paint = plain): string {
     ].join("\n"),
     ...plan.sites.map((site, i) => siteText(site, lines[i] ?? [], table, paint)),
     legend(table),
-    ...(notes.length > 0
-      ? [[paint("strong", "Notes"), ...notes.map((note) => paragraph(note, "  - "))].join("\n")]
-      : []),
+    noteText([...notes, ...doubtNotes(lines.flat())], paint),
     [paint("strong", "Caution"), cautionLines()].join("\n"),
   ];
-  return `${parts.join("\n\n")}\n`;
+  return `${parts.filter((part) => part !== "").join("\n\n")}\n`;
+}
+
+function noteText(notes: readonly string[], paint: Paint): string {
+  if (notes.length === 0) return "";
+  return [paint("strong", "Notes"), ...notes.map((note) => paragraph(note, "  - "))].join("\n");
+}
+
+/** Doubts that the table itself shows: by its ways, its headings and its marks of terrain. */
+const shownAlready: readonly string[] = ["beyond_horizon", "locator_too_short", "terrain_gap"];
+
+/** Every other doubt about the paths once, with the first station that it is about. */
+function doubtNotes(lines: readonly RosterLine[]): string[] {
+  const byCode = new Map<string, { count: number; name: string; message: string }>();
+  for (const { name, doubts } of lines) {
+    for (const { code, message } of doubts) {
+      const known = byCode.get(code);
+      if (known) known.count++;
+      else if (!shownAlready.includes(code)) byCode.set(code, { count: 1, name, message });
+    }
+  }
+  return [...byCode.values()].map(({ count, name, message }) => {
+    const others = count === 1 ? "" : ` and ${count - 1} more`;
+    return `${name}${others}: ${message}`;
+  });
 }
 
 function answerWords({ plan }: RosterTable): string {

@@ -1,6 +1,6 @@
 import { carrier, type Margin, margins } from "../budget/margins.ts";
 import { type BothWays, bothWays, fromSite, towards, withFarDish } from "../budget/towards.ts";
-import type { Case, MechanismName, Verdict } from "../budget/types.ts";
+import type { Case, Mechanism, MechanismName, Verdict, Warning } from "../budget/types.ts";
 import { geodesicPath, type Point, sphereDistanceKm } from "../path/geodesic.ts";
 import { locatorToPoint, pointToLocator, squareCentre } from "../path/locator.ts";
 import type { Station } from "../scenario/rosterRow.ts";
@@ -62,7 +62,11 @@ export interface RosterRow {
   /** `none` where terrain was asked for and does not reach the station; undefined where none was. */
   readonly terrain: "whole" | "gaps" | "none" | undefined;
   readonly weathers: readonly WeatherRow[];
+  /** Where a model is asked beyond its range, and other doubts about this path; each code once. */
+  readonly doubts: readonly Doubt[];
 }
+
+export type Doubt = Pick<Warning, "code" | "message">;
 
 /** A station that has no path from a site, and why. */
 export interface NoPath {
@@ -142,10 +146,12 @@ export async function rosterStudy(plan: RosterPlan): Promise<(station: Station) 
         noiseFigureDb: station.noiseFigureDb,
       });
       const covered = found && (found.gaps.length > 0 ? "gaps" : "whole");
+      const ways = plan.weathers.map((weather) => carrierIn(plan, both, weather));
       rows.push({
         ...placed(station, site, near, i, both),
         terrain: terrain && (covered ?? "none"),
-        weathers: plan.weathers.map((weather) => inWeather(plan, both, weather, station.mode)),
+        weathers: ways.map((way, k) => inWeather(plan, both, plan.weathers[k]!, way, station.mode)),
+        doubts: doubtsAbout(plan, both, ways),
       });
     }
     return { rows, noPaths, assumed: { ground: assumesGround, noTerrain } };
@@ -235,26 +241,49 @@ function betweenCentres(from: Point, to: Point): number {
   return same ? 1 : Math.max(1, Math.round(geodesicPath(from, to).distanceKm));
 }
 
+/** The own feed under a cover calls the partner's. */
+function outward({ scenario }: RosterPlan, weather: string, cover: string): Omit<Case, "mode"> {
+  const { transmitter: own, receiver: partner } = scenario;
+  return {
+    weather,
+    transmitter: { feed: own.feed, cover },
+    receiver: { feed: partner.feed, cover: partner.cover },
+  };
+}
+
+function carrierIn(plan: RosterPlan, { out }: BothWays, weather: string): Mechanism {
+  return carrier(out, outward(plan, weather, plan.scenario.transmitter.cover));
+}
+
+function doubtsAbout({ scenario }: RosterPlan, { out }: BothWays, ways: readonly Mechanism[]): Doubt[] {
+  const found = new Map<string, Doubt>();
+  for (const warnings of [
+    out.warnings,
+    out.ends.transmitter[scenario.transmitter.feed]!.warnings,
+    out.ends.receiver[scenario.receiver.feed]!.warnings,
+    ...Object.values(out.weathers).map((weather) => weather.warnings),
+    ...ways.map((way) => way.warnings),
+  ]) {
+    for (const { code, message } of warnings) if (!found.has(code)) found.set(code, { code, message });
+  }
+  return [...found.values()];
+}
+
 function inWeather(
   plan: RosterPlan,
   { out, back }: BothWays,
   weather: string,
+  way: Mechanism,
   only: string | undefined,
 ): WeatherRow {
-  const { transmitter: own, receiver: partner } = plan.scenario;
   const modes = only === undefined ? plan.modes : [only];
-  const far = { feed: partner.feed, cover: partner.cover };
-  const outward = (cover: string): Omit<Case, "mode"> => {
-    return { weather, transmitter: { feed: own.feed, cover }, receiver: far };
-  };
-  const way = carrier(out, outward(own.cover));
   return {
     weather,
     way: way.name,
     covers: plan.covers.map((cover) => {
-      const chosen = outward(cover);
+      const chosen = outward(plan, weather, cover);
       const heard = margins(out, chosen, modes, way);
-      const homeward = { weather, transmitter: far, receiver: chosen.transmitter };
+      const homeward = { weather, transmitter: chosen.receiver, receiver: chosen.transmitter };
       const hears = plan.bothWays ? margins(back, homeward, modes, way) : undefined;
       const rows = modes.map((mode, i) => modeRow(mode, heard[i]!, hears?.[i]));
       return { cover, modes: rows, best: bestOf(rows) };

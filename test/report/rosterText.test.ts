@@ -50,6 +50,7 @@ const row: RosterRow = {
   backHeadingDeg: 244.9,
   headingErrorDeg: 0,
   terrain: undefined,
+  doubts: [{ code: "near_field", message: "the far field begins at 200 m" }],
   weathers: [
     {
       weather: "clear",
@@ -171,6 +172,13 @@ describe("the table of a roster", () => {
     expect(text).toContain("  - one note");
   });
 
+  it("tells every doubt about the paths once, but those that it shows", () => {
+    const beyond = { code: "beyond_horizon", message: "past the horizon" };
+    const text = flowing(textOf([row, { ...row, name: "Second", doubts: [...row.doubts, beyond] }]));
+    expect(text).toContain("- Plover, Edge and 1 more: the far field begins at 200 m");
+    expect(text).not.toContain("past the horizon");
+  });
+
   it("says that no station is left", () => {
     expect(textOf([])).toContain("From own hill: 0 stations");
   });
@@ -205,6 +213,7 @@ describe("a roster as data", () => {
       heading_error_deg: "0",
       back_heading_true_deg: "244.9",
       terrain: "",
+      doubts: "near_field",
       cover: "old lid",
       mode: "cw",
       dry_weather: "clear",
@@ -240,7 +249,13 @@ describe("a roster as data", () => {
     const text = rosterJsonLine(row);
     expect(text.endsWith("}\n") && text.indexOf("\n") === text.length - 1).toBe(true);
     const found = JSON.parse(text);
-    expect(found).toMatchObject({ name: "Plover, Edge", row: 4, headingDeg: 63.142, scoreKm: 123 });
+    expect(found).toMatchObject({
+      name: "Plover, Edge",
+      row: 4,
+      headingDeg: 63.142,
+      scoreKm: 123,
+      doubts: ["near_field"],
+    });
     expect(found.weathers[1].covers[0]).toMatchObject({
       cover: "old lid",
       best: { mode: "cw", verdict: "thin" },

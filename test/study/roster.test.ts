@@ -217,6 +217,17 @@ describe("a station of a roster", () => {
     expect((await study(stationOf())).assumed.ground).toBe(false);
   });
 
+  it("carries the doubts of its budget", async () => {
+    const near = stationOf({ latitude: 53.0001, groundM: 400, longitude: -2, dish: { diameterM: 3 } });
+    const { doubts } = await rowOf(planOf(), near);
+    expect(doubts.map(({ code }) => code)).toContain("near_field");
+    const far = await rowOf(planOf(), stationOf({ latitude: 57, positionErrorKm: 40 }));
+    expect(far.doubts.map(({ code }) => code)).toEqual(
+      expect.arrayContaining(["beyond_horizon", "locator_too_short"]),
+    );
+    expect((await rowOf(planOf(), stationOf({ groundM: 700 }))).doubts).toEqual([]);
+  });
+
   it("is seen from every site", async () => {
     const second = siteOf({ latitude: 54, longitude: -2, groundM: 100 });
     const plan = planOf({
