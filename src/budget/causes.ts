@@ -36,9 +36,12 @@ export interface Cause {
   readonly unit: "dB" | "dBm" | "K" | "deg" | "share" | "rate";
   /** True where the scenario states it, false where common practice stands in. */
   readonly stated: boolean;
-  /** Probability at which the cause has the value that a budget takes. */
+  /** Probability at which the cause has the value that a budget takes; `STILL` where its distribution has no such place. */
   readonly still: number;
 }
+
+/** In the place of a probability: the value that a budget takes, which a mixture or a one-sided loss never has. */
+export const STILL = -1;
 
 /** Draws by block: what the causes are, where their random numbers lie, and what is made of them, step by step. */
 export interface Sketch {
@@ -52,7 +55,7 @@ export function newSketch(block: number): Sketch {
   return { block, causes: [], uniforms: [], steps: [] };
 }
 
-/** The cause's random numbers, block by block, strictly inside (0, 1); a cause met again is the same one. */
+/** The cause's random numbers, block by block, strictly inside (0, 1) or `STILL`; a cause met again is the same one. */
 export function uniformsOf(sketch: Sketch, cause: Cause): Float64Array {
   const known = sketch.causes.findIndex(({ id }) => id === cause.id);
   if (known >= 0) return sketch.uniforms[known]!;
@@ -75,7 +78,7 @@ export function normalsOf(sketch: Sketch, cause: Cause): Float64Array {
   return column(sketch, (out) => normalDeviates(uniforms, out));
 }
 
-/** Values of an input that scatters about a nominal one. */
+/** Values of an input that scatters about a nominal one, which it has where it is `STILL`. */
 export function valuesOf(
   sketch: Sketch,
   nominal: number,
@@ -83,7 +86,10 @@ export function valuesOf(
   uniforms: Float64Array,
 ): Float64Array {
   const fill = scatterColumn(nominal, scatter);
-  return column(sketch, (out) => fill(uniforms, out));
+  return column(sketch, (out) => {
+    fill(uniforms, out);
+    for (let i = 0; i < out.length; i++) if (uniforms[i] === STILL) out[i] = nominal;
+  });
 }
 
 /** Normal deviates that hang together with those of the other end: r of one, sqrt(1 - r^2) of its own. */
@@ -111,15 +117,18 @@ export function tiedUniforms(
   const rest = Math.sqrt(1 - correlation * correlation);
   return column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      const deviate = correlation * normalDeviate(other[i]!) + rest * normalDeviate(own[i]!);
+      if (own[i] === STILL && other[i] === STILL) {
+        out[i] = STILL;
+        continue;
+      }
+      const deviate = correlation * deviateOf(other[i]!) + rest * deviateOf(own[i]!);
       out[i] = Math.min(LARGEST, Math.max(1 - LARGEST, normalCdf(deviate)));
     }
   });
 }
 
-/** Probability at which a scatter has the value that stands for it in a budget, where it has one. */
-export function stillOf(scatter: Scatter): number {
-  return scatter.kind === "exponential" ? 1 - Math.exp(-1) : 0.5; // a mean, a median or a middle
+function deviateOf(probability: number): number {
+  return probability === STILL ? 0 : normalDeviate(probability);
 }
 
 const LARGEST = 1 - 2 ** -40;

@@ -1,5 +1,5 @@
 import type { EndName, Scenario } from "../scenario/types.ts";
-import { type Cause, column, type Sketch, stillOf, tiedUniforms, uniformsOf } from "./causes.ts";
+import { type Cause, column, type Sketch, tiedUniforms, uniformsOf } from "./causes.ts";
 import type { Doubts } from "./doubts.ts";
 import type { PreparedEnd } from "./types.ts";
 
@@ -31,7 +31,7 @@ export function aimLevels(
     const offset = scenario.dish[name]!.pointingOffsetDeg / beamwidthDeg;
     const mean = 24 * error * error;
     const scatter = { kind: "exponential", mean } as const;
-    const still = stillOf(scatter);
+    const still = 1 - Math.exp(-1); // the mean of an exponential
     const cause: Cause = {
       id: entry.id,
       matter: "aim",

@@ -4,7 +4,7 @@ import {
   column,
   PREFIX,
   type Sketch,
-  stillOf,
+  STILL,
   tiedUniforms,
   uniformsOf,
   valuesOf,
@@ -41,7 +41,7 @@ export function drawnFeed(
       scatter,
       unit: "dB",
       stated: isStated(stated),
-      still: stillOf(scatter),
+      still: STILL,
     };
   };
   const { returnLossDb } = scenario.feeds[feeds[end]]!;

@@ -6,7 +6,7 @@ import {
   logSpread,
   type Matter,
   type Sketch,
-  stillOf,
+  STILL,
   tiedUniforms,
   uniformsOf,
   valuesOf,
@@ -116,7 +116,7 @@ export function causeOf(
 ): Cause {
   const scatter = input?.scatter ?? ({ kind: "normal", sigma } as const);
   const unit = matter === "power" ? "dBm" : "dB";
-  return { id, matter, end, label, scatter, unit, stated: isStated(input), still: stillOf(scatter) };
+  return { id, matter, end, label, scatter, unit, stated: isStated(input), still: STILL };
 }
 
 export function isStated(input: Uncertain | undefined): boolean {
@@ -154,7 +154,7 @@ function tiltLevel({ spread }: Scenario, { tiltLossDb }: Doubts): Level[] {
     scatter: tiltLossDb.scatter ?? { kind: "normal", sigma: tiltLossDb.sigma ?? 0 },
     unit: "dB",
     stated: spread?.tiltLossDb !== undefined,
-    still: 1e-12,
+    still: STILL,
   };
   return [{ cause, nominal: 0, sign: -1, least: 0 }];
 }
@@ -191,7 +191,7 @@ function operatorLevels({ scenario, modes, doubts }: Link, mode: string): Level[
     },
     unit: "dB",
     stated: scenario.spread?.blunder !== undefined,
-    still: (1 - chance) / 2,
+    still: STILL,
   };
   return [
     ...(sigmaDb > 0 ? [{ cause: threshold, nominal: 0, sign: -1 as const }] : []),

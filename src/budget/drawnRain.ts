@@ -1,4 +1,4 @@
-import { column, normalsOf, type Sketch, stillOf, uniformsOf, valuesOf } from "./causes.ts";
+import { column, normalsOf, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
 import { RAIN_NODES, type RainGrid, rainGrid } from "./rainGrid.ts";
 import type { Link } from "./types.ts";
@@ -23,7 +23,7 @@ export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain |
     scatter: grid.scatter,
     unit: "rate",
     stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
-    still: stillOf(grid.scatter),
+    still: STILL,
   });
   const rates = valuesOf(sketch, grid.rateMmPerH, grid.scatter, uniforms);
   const { stepLog } = grid;

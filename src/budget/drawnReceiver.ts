@@ -1,5 +1,5 @@
 import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
-import { column, type Sketch, stillOf, uniformsOf, valuesOf } from "./causes.ts";
+import { column, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
 import { NEPERS } from "./drawnWeather.ts";
 import { LABEL_NOISE_FIGURE_SIGMA_DB } from "./noiseSide.ts";
@@ -32,7 +32,7 @@ export function drawnReceiver(sketch: Sketch, { scenario }: Link, lineLossDb: Fl
     scatter,
     unit: "dB",
     stated: isStated(input),
-    still: stillOf(scatter),
+    still: STILL,
   });
   const values = valuesOf(sketch, input.value, scatter, uniforms);
   return {

@@ -5,7 +5,7 @@ import {
   logSpread,
   normalsOf,
   type Sketch,
-  stillOf,
+  STILL,
   uniformsOf,
   valuesOf,
 } from "./causes.ts";
@@ -118,7 +118,7 @@ function clearSky(sketch: Sketch, { scenario }: Link): Float64Array {
     scatter,
     unit: "K",
     stated: isStated(receiver.antennaTemperatureK),
-    still: stillOf(scatter),
+    still: STILL,
   });
   const values = valuesOf(sketch, input.value, scatter, uniforms);
   return column(sketch, (out) => {
