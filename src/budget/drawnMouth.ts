@@ -30,7 +30,7 @@ export function drawnMouth(
   nodes: readonly Mouth[],
   rain: DrawnRain | undefined,
 ): DrawnMouth {
-  const mouth = nodes[(nodes.length - 1) / 2]!;
+  const mouth = nodes[rain?.grid.middle ?? 0]!;
   const { coverMismatchDb, coverHeatDb, beat: nominalBeat, scatter } = mouth.parts;
   const { stackIsSigma, planeWaveDb, readingDb } = scatter;
   const heatIsDrawn = coverHeatDb > 0 && scatter.heatShare > 0;

@@ -1,6 +1,6 @@
 import { column, normalsOf, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
-import { RAIN_NODES, type RainGrid, rainGrid } from "./rainGrid.ts";
+import { type RainGrid, rainGrid } from "./rainGrid.ts";
 import type { Link } from "./types.ts";
 
 /** Rain rates of the grid's nodes, and where between them each draw lies. */
@@ -26,14 +26,18 @@ export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain |
     still: STILL,
   });
   const rates = valuesOf(sketch, grid.rateMmPerH, grid.scatter, uniforms);
-  const { stepLog } = grid;
-  const last = 2 * RAIN_NODES;
+  const { stepLog, least, middle, links } = grid;
+  const last = links.length - 1;
+  const leastRatio = Math.exp((least - middle) * stepLog);
   const node = new Int32Array(sketch.block);
   const share = new Float64Array(sketch.block);
   sketch.steps.push(() => {
     for (let i = 0; i < node.length; i++) {
-      const ratio = Math.max(1e-6, rates[i]! / grid.rateMmPerH);
-      const place = Math.min(last, Math.max(0, RAIN_NODES + Math.log(ratio) / stepLog));
+      const ratio = rates[i]! / grid.rateMmPerH;
+      const place =
+        ratio > leastRatio
+          ? Math.min(last, least + Math.log(ratio / leastRatio) / stepLog)
+          : least * Math.max(0, ratio / leastRatio); // between none and the least rate in proportion
       const lower = Math.min(last - 1, Math.floor(place));
       node[i] = lower;
       share[i] = place - lower;

@@ -4,7 +4,7 @@ import { withWeather } from "./prepare.ts";
 import type { Link } from "./types.ts";
 
 /** Nodes to either side of the weather's own rate. */
-export const RAIN_NODES = 8;
+const RAIN_NODES = 8;
 /** Rates drawn more seldom than this at either end are taken at the grid's end. */
 const RAREST = 1e-4;
 /** Widest step: a grid from a hundredth to a hundredfold. */
@@ -15,8 +15,11 @@ export interface RainGrid {
   readonly rateMmPerH: number;
   readonly scatter: Scatter;
   readonly stepLog: number;
-  /** The link in 2 RAIN_NODES + 1 such weathers of one name, the scenario's own in the middle. */
+  /** The link in such weathers of one name: in none of that rain where draws may bring it to nothing, then by rate. */
   readonly links: readonly Link[];
+  /** Place among them of the least rate above 0, and of the scenario's own. */
+  readonly least: number;
+  readonly middle: number;
 }
 
 /**
@@ -36,21 +39,31 @@ export function rainGrid(link: Link, name: string): RainGrid | undefined {
       : value > 0 && sigma !== undefined
         ? { kind: "normal", sigma }
         : { kind: "lognormal", factor };
-  const quantile = scatterQuantile(rateMmPerH, scatter);
-  const reach = [RAREST, 1 - RAREST].map((p) => {
-    const ratio = quantile(p) / rateMmPerH;
+  const reach = extremes(rateMmPerH, scatter).map((rate) => {
+    const ratio = rate / rateMmPerH;
     return ratio > 0 ? Math.min(WIDEST_LOG, Math.abs(Math.log(ratio))) : WIDEST_LOG;
   });
   const stepLog = Math.max(...reach) / RAIN_NODES;
   if (!(stepLog > 1e-9)) return undefined;
-  const links = Array.from({ length: 2 * RAIN_NODES + 1 }, (_, i) => {
-    const times = Math.exp((i - RAIN_NODES) * stepLog);
-    if (i === RAIN_NODES) return link;
-    return withWeather(link, name, {
+  const at = (times: number) =>
+    withWeather(link, name, {
       ...weather,
       rainMmPerH: { value: value * times },
       coversWetAsAtMmPerH: weather.coversWetAsAtMmPerH && weather.coversWetAsAtMmPerH * times,
     });
-  });
-  return { rateMmPerH, scatter, stepLog, links };
+  const byRate = Array.from({ length: 2 * RAIN_NODES + 1 }, (_, i) =>
+    i === RAIN_NODES ? link : at(Math.exp((i - RAIN_NODES) * stepLog)),
+  );
+  // A film thins with the third root of the rate: a hundredth of the rain still leaves a fifth of it.
+  const dry = Math.max(...reach) === WIDEST_LOG ? [at(0)] : [];
+  const least = dry.length;
+  return { rateMmPerH, scatter, stepLog, links: [...dry, ...byRate], least, middle: least + RAIN_NODES };
+}
+
+/** Least and largest rate worth a node; the parts of a mixture follow in any order, so that each is looked at. */
+function extremes(value: number, scatter: Scatter): number[] {
+  if (scatter.kind !== "mixture") return [RAREST, 1 - RAREST].map(scatterQuantile(value, scatter));
+  return scatter.parts.flatMap((part) =>
+    part.share === 0 ? [] : part.scatter === undefined ? [part.value] : extremes(part.value, part.scatter),
+  );
 }

@@ -148,6 +148,24 @@ describe("one cause moved is the engine with that input changed", () => {
     expectMoves(at(8), at(8 * 1.15 ** Z), "rain.rate", P, 0.005);
   });
 
+  it("rain rate of a mixture: none at all, and the rarest part though others stand about it", () => {
+    const covers = {
+      bare: coverOf(),
+      film: coverOf({ layers: [layerOf(0.5, 2.5, 0.002)], surface: "wetting" }),
+    };
+    const rain = (value: number, rates: readonly number[]) => {
+      const scatter = {
+        kind: "mixture",
+        parts: rates.map((rate) => ({ share: 1 / rates.length, value: rate })),
+      } as const;
+      return scenarioOf({ covers, weather: { now: weatherOf({ rainMmPerH: { value, scatter } }) } });
+    };
+    const only = (value: number) =>
+      scenarioOf({ covers, weather: { now: weatherOf({ rainMmPerH: { value } }) } });
+    expectMoves(rain(12, [0, 12, 24]), only(0), "rain.rate", 0.2, 0.005, caseOf(only(0), "now"));
+    expectMoves(rain(36, [10, 88, 10]), only(88), "rain.rate", 0.5, 0.05, caseOf(only(0), "now"));
+  });
+
   it("length of path in the rain", () => {
     const over = (extentKm: number) => ({
       ...plain,
