@@ -25,6 +25,7 @@ export function rankingTable({ rankings }: SpreadStudy): string {
     const percent = found.varianceShare < LEAST_SHARE ? "<2" : `${Math.round(100 * found.varianceShare)}`;
     return `${percent} % ${found.rankCorrelation.toFixed(2)} ±${tenth(found.sigmaDb)}`;
   };
+  if (told.length === 0) return "Nothing: no input scatters.";
   return abreast(rankings, (some) =>
     columns([
       [cell("share, rank, dB"), ...some.map((ranking) => cell(ranking.case.weather))],
@@ -55,7 +56,7 @@ export function adviceText({ rankings }: SpreadStudy): string {
   return [...comparisons, ...advices].map((line) => paragraph(line, "- ")).join("\n");
 }
 
-function comparison({ case: { weather }, matters }: SpreadRanking): string {
+function comparison({ case: { weather, transmitter, receiver }, matters }: SpreadRanking): string {
   const deviation = (some: readonly MatterOfSpread[]) => Math.hypot(...some.map(({ sigmaDb }) => sigmaDb));
   const covers = matters.filter(({ matter }) => COVER.includes(matter));
   const [first] = matters.filter(({ matter }) => !COVER.includes(matter));
@@ -63,8 +64,11 @@ function comparison({ case: { weather }, matters }: SpreadRanking): string {
   const { name, many } = matterWords[first.matter];
   const verb = many ? "matter" : "matters";
   const own = deviation(covers);
-  if (own < 0.05)
-    return `${capital(weather)}: the cover adds nothing to the spread; ${matterWords[first.matter].name} leads.`;
+  if (own < 0.05) {
+    const isBare = transmitter.cover === "bare" && receiver.cover === "bare";
+    const what = isBare ? "the feeds are bare" : "the cover adds nothing to the spread";
+    return `${capital(weather)}: ${what}; ${name} ${many ? "lead" : "leads"}.`;
+  }
   const times = first.sigmaDb / own;
   const wet = covers.some(({ matter, sigmaDb }) => matter === "water" && sigmaDb > 0.05);
   const what = wet ? "the cover and its water" : "the cover";
@@ -110,7 +114,7 @@ function advice(
     ...(Math.abs(points) >= 1 ? [`the chance to close by ${pointsWords(Math.round(points))}`] : []),
   ];
   const effect =
-    gains.length > 0 ? ` Were it as the scenario has it for sure, in ${one.weather} ${listed(gains)}.` : "";
+    gains.length > 0 ? ` Were it as the scenario has it for sure, ${listed(gains)} (${one.weather}).` : "";
   return `${capital(name)}: ${advice}.${effect}`;
 }
 

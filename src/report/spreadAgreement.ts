@@ -1,4 +1,5 @@
-import type { Link } from "../budget/types.ts";
+import type { Case, Link } from "../budget/types.ts";
+import type { EndName } from "../scenario/types.ts";
 import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
 import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
 import { coverName } from "./marginText.ts";
@@ -16,6 +17,12 @@ const SHIFT_DB = 0.1;
 export function agreementText(study: SpreadStudy, link: Link): string {
   const apart = study.rows.filter((row) => differs(row));
   const count = `${study.rows.length} case${study.rows.length === 1 ? "" : "s"}`;
+  if (apart.length === 0 && study.rows.length === 1) {
+    return paragraph(
+      `Against \`oilskin budget\`: the verdict agrees, the median to ${tenth(MEDIAN_DB)} dB and the chance to ` +
+        `${100 * CHANCE} points.`,
+    );
+  }
   if (apart.length === 0) {
     return paragraph(
       `Against \`oilskin budget\`: verdicts of all ${count} agree, medians to ${tenth(MEDIAN_DB)} dB and chances to ` +
@@ -24,12 +31,12 @@ export function agreementText(study: SpreadStudy, link: Link): string {
   }
   const turned = apart.filter(({ verdict, budget }) => verdict !== budget.verdict);
   const lines = [
-    `Against \`oilskin budget\`, which adds the deviations as root-sum-square: ${apart.length} of ${count} differ by more ` +
+    `Against \`oilskin budget\`, which adds the deviations as root-sum-square: ${study.rows.length === 1 ? "" : `${apart.length} of `}${count} ${apart.length === 1 ? "differs" : "differ"} by more ` +
       `than ${tenth(MEDIAN_DB)} dB or ${100 * CHANCE} points; ` +
       (turned.length === 0
-        ? "the verdicts are the same."
+        ? `the verdict${study.rows.length === 1 ? " is" : "s are"} the same.`
         : `verdicts differ in ${listed(turned.map((row) => `${row.case.weather} under ${coverName(row)} (${row.budget.verdict} there, ${row.verdict} here)`))}.`),
-    ...study.rankings.map((ranking) => reasonText(ranking, study, link)).filter((line) => line !== ""),
+    ...reasonTexts(apart, study.rankings, link),
   ];
   return [paragraph(lines[0]!), ...lines.slice(1).map((line) => paragraph(line, "- "))].join("\n");
 }
@@ -43,15 +50,19 @@ function differs({ marginDb, closes, verdict, budget }: SpreadRow): boolean {
   );
 }
 
-function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): string {
-  const { case: one, matters } = ranking;
-  const row = study.rows.find(
-    ({ case: other }) =>
-      other.weather === one.weather &&
-      other.transmitter.cover === one.transmitter.cover &&
-      other.receiver.cover === one.receiver.cover,
-  )!;
-  if (!differs(row)) return "";
+/** In each weather why its ranked case parts from the budget, or the first that does. */
+function reasonTexts(apart: readonly SpreadRow[], rankings: readonly SpreadRanking[], link: Link): string[] {
+  const weathers = [...new Set(apart.map(({ case: { weather } }) => weather))];
+  return weathers.map((weather) => {
+    const rows = apart.filter((row) => row.case.weather === weather);
+    const ranked = rankings.find(({ case: one }) => one.weather === weather);
+    const own = rows.find((row) => ranked !== undefined && coverName(row) === coverName(ranked));
+    return own === undefined ? reasonText(rows[0]!, [], link) : reasonText(own, ranked!.matters, link);
+  });
+}
+
+function reasonText(row: SpreadRow, matters: readonly MatterOfSpread[], link: Link): string {
+  const { case: one } = row;
   const whole = Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
   const reasons = [
     ...blunderReason(link),
@@ -62,9 +73,7 @@ function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): str
         return (counts && Math.abs(skewness) > SKEW) || Math.abs(shiftDb) > SHIFT_DB;
       })
       .map(bentReason),
-    ...(one.transmitter.cover !== "bare" &&
-    one.receiver.cover !== "bare" &&
-    matters.some(({ matter }) => matter === "water")
+    ...(link.doubts.correlation.water !== 0 && isWet(link, one, "transmitter") && isWet(link, one, "receiver")
       ? ["water at both ends is tied, which a root-sum-square takes as independent"]
       : []),
   ];
@@ -72,7 +81,15 @@ function reasonText(ranking: SpreadRanking, study: SpreadStudy, link: Link): str
   const [drawn, summed] = [percent(closes.share), percent(budget.holdProbability)];
   const chance = drawn === summed ? `chance ${drawn} in both` : `chance ${drawn} for ${summed}`;
   const here = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, ${chance}`;
-  return `${one.weather}, ${coverName(ranking)}: ${here}; because ${reasons.length > 0 ? reasons.join("; ") : "the tails are no normal ones"}.`;
+  return `${one.weather}, ${coverName(row)}: ${here}; because ${reasons.length > 0 ? reasons.join("; ") : "the tails are no normal ones"}.`;
+}
+
+/** Whether water costs anything at an end. */
+function isWet({ ends }: Link, { weather, ...one }: Case, end: EndName): boolean {
+  const ready = ends[end][one[end].feed]!;
+  const { waterMismatchDb, waterHeatDb } = ready.mouth[one[end].cover]![weather]!.parts;
+  const overDish = ready.dishCover[weather]!.entries.some(({ id }) => id.endsWith("dish_cover_water"));
+  return waterMismatchDb !== 0 || waterHeatDb !== 0 || overDish;
 }
 
 function blunderReason({ doubts: { blunder } }: Link): string[] {

@@ -27,8 +27,11 @@ export function rangePicture(rows: readonly SpreadRow[], reserveDb: number): str
     const from = Math.max(0, Math.min(width - text.length, at));
     for (const [i, character] of [...text].entries()) axis[from + i] = character;
   };
-  write(`${Math.round(high)} dB`, width);
-  if (low < 0 && place(0) > `${Math.round(low)}`.length) write(`${Math.round(low)}`, 0);
+  const most = `${Math.round(high)} dB`;
+  const roomAbove = place(0) + 1 < width - most.length;
+  if (roomAbove) write(most, width);
+  const least = roomAbove ? `${Math.round(low)}` : `${Math.round(low)} dB`;
+  if (low < 0 && place(0) > least.length) write(least, 0);
   write("0", place(0));
   return [...lines, `${" ".repeat(head)}${axis.join("")}`.trimEnd()].join("\n");
 }

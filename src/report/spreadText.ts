@@ -1,5 +1,5 @@
 import type { Link } from "../budget/types.ts";
-import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
+import type { Chance, SpreadRow, SpreadStudy } from "../study/spread.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { dishCoverText } from "./coversText.ts";
 import { coverName, meanings, pathLines } from "./marginText.ts";
@@ -54,13 +54,14 @@ const leftOut = paragraph(
 );
 
 function howDrawn({ mode, draws, mostDraws, seed, halfWidth, precision }: SpreadStudy, link: Link): string {
-  const points = Number((100 * halfWidth).toPrecision(1));
+  const within = Number((100 * halfWidth).toPrecision(1));
+  const points = `${within} point${within === 1 ? "" : "s"}`;
   const stop =
     draws < mostDraws
-      ? `enough for chances good to ${points} points`
+      ? `enough for chances good to ${points}`
       : halfWidth <= precision
-        ? `chances good to ${points} points`
-        : `chances good to ${points} points, where ${Number((100 * precision).toPrecision(2))} were asked for`;
+        ? `chances good to ${points}`
+        : `chances good to ${points}, where ${Number((100 * precision).toPrecision(2))} were asked for`;
   return (
     `${capital(link.modes[mode]!.label)}: ${draws.toLocaleString("en-GB")} draw${draws === 1 ? "" : "s"}, ${stop} (95 %), the same draws for all ` +
     `covers and weathers; seed ${seed}.`
@@ -72,7 +73,7 @@ function sentence(rows: readonly SpreadRow[], weather: string): string {
   const [row] = rows as [SpreadRow];
   const { marginDb, closes } = row;
   const range = `${tenth(marginDb.medianDb)} dB in the middle, ${tenth(marginDb.lowDb)} to ${tenth(marginDb.highDb)} dB in nine draws of ten`;
-  const answer = `${capital(weather)}: ${coverName(row)} closes in ${chance(closes.share)} of the draws (${range})`;
+  const answer = `${capital(weather)}: ${coverName(row)} closes in ${chance(closes)} of the draws (${range})`;
   if (row.costDb === undefined) return `${answer}.`;
   const turned = [
     { verb: "loses", hundredth: 100 * row.lost },
@@ -87,9 +88,10 @@ function sentence(rows: readonly SpreadRow[], weather: string): string {
 const countOf = (hundredth: number) => hundredth.toFixed(hundredth < 9.95 ? 1 : 0);
 
 /** A drawn probability to a tenth of a per cent, and no surer than the draws are. */
-export function chance(share: number): string {
-  if (share > 0.9995) return "over 99.9 %";
-  if (share < 0.0005) return "under 0.1 %";
+export function chance({ share, low, high }: Chance): string {
+  if (low > 0.999) return "over 99.9 %";
+  if (high < 0.001) return "under 0.1 %";
+  if (share === 0 || share === 1) return share === 0 ? "none" : "all";
   return `${(100 * share).toFixed(1)} %`;
 }
 

@@ -101,7 +101,7 @@ export function spreadOf(link: Link, chosen: readonly Case[], sampling: Sampling
     (one) => one.transmitter.cover === transmitter.cover && one.receiver.cover === receiver.cover,
   );
   const warnings = new Map<string, Warning>();
-  for (const one of chosen) {
+  for (const one of cases) {
     for (const warning of budgetOf.get(keyOf(one))!.warnings)
       warnings.set(`${warning.code} ${warning.where} ${warning.message}`, warning);
   }
