@@ -22,12 +22,14 @@ export function wayLevel(
   const { transmitter, receiver } = ends;
   const ways = mechanismsOf(link, link.weathers[name]!, transmitter, receiver);
   const best = ways[0]!;
-  if (best.sigmaDb === 0) return undefined;
+  if (best.name === "line_of_sight") return undefined;
   const drawn = ways.map((way) => {
     const atNodes =
       way.name === "rain_scatter" && rain !== undefined ? scatterByRate(ends, name, rain) : [way.excessDb];
     const excess = atRate(sketch, atNodes.length > 1 ? rain : undefined, atNodes);
-    return { sigmaDb: way.sigmaDb, leastDb: leastOf(way), normals: normalsOf(sketch, wayCause(way)), excess };
+    const { sigmaDb } = way;
+    const normals = sigmaDb > 0 ? normalsOf(sketch, wayCause(way)) : new Float64Array(sketch.block);
+    return { sigmaDb, leastDb: leastOf(way), normals, excess };
   });
   return column(sketch, (out) => {
     out.fill(CLOSED_DB);
