@@ -33,7 +33,7 @@ export interface Cause {
   readonly label: string;
   readonly scatter: Scatter;
   /** Of the figures in `scatter`; "share" is a part of the nominal value. */
-  readonly unit: "dB" | "dBm" | "K" | "deg" | "share" | "rate";
+  readonly unit: "dB" | "dBm" | "K" | "deg" | "share" | "rate" | "mm";
   /** True where the scenario states it, false where common practice stands in. */
   readonly stated: boolean;
   /** Probability at which the cause has the value that a budget takes; `STILL` where its distribution has no such place. */

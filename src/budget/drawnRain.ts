@@ -1,4 +1,4 @@
-import { column, normalsOf, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
+import { type Cause, column, normalsOf, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
 import { type RainGrid, rainGrid } from "./rainGrid.ts";
 import type { Link } from "./types.ts";
@@ -10,22 +10,24 @@ export interface DrawnRain {
   readonly share: Float64Array;
 }
 
-/** Where the drawn rain rates lie among the grid's nodes; one random number makes it rain alike in all weathers. */
+/** Where the drawn rates or films of dew lie among the grid's nodes; one random number makes it rain alike in all weathers. */
 export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain | undefined {
   const grid = rainGrid(link, name);
   if (grid === undefined) return undefined;
   const { rainMmPerH } = link.scenario.weather[name]!;
-  const uniforms = uniformsOf(sketch, {
-    id: "rain.rate",
-    matter: "rain",
-    end: undefined,
-    label: "rain rate",
-    scatter: grid.scatter,
-    unit: "rate",
-    stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
-    still: STILL,
-  });
-  const rates = valuesOf(sketch, grid.rateMmPerH, grid.scatter, uniforms);
+  const common = { end: undefined, scatter: grid.scatter, still: STILL };
+  const cause: Cause =
+    grid.of === "dew"
+      ? { ...common, id: "dew", matter: "water", label: "dew on the covers", unit: "mm", stated: true }
+      : {
+          ...common,
+          id: "rain.rate",
+          matter: "rain",
+          label: "rain rate",
+          unit: "rate",
+          stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
+        };
+  const rates = valuesOf(sketch, grid.nominal, grid.scatter, uniformsOf(sketch, cause));
   const { stepLog, least, middle, links } = grid;
   const last = links.length - 1;
   const leastRatio = Math.exp((least - middle) * stepLog);
@@ -33,7 +35,7 @@ export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain |
   const share = new Float64Array(sketch.block);
   sketch.steps.push(() => {
     for (let i = 0; i < node.length; i++) {
-      const ratio = rates[i]! / grid.rateMmPerH;
+      const ratio = rates[i]! / grid.nominal;
       const place =
         ratio > leastRatio
           ? Math.min(last, least + Math.log(ratio / leastRatio) / stepLog)

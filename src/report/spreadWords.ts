@@ -50,7 +50,7 @@ function words(scatter: Scatter, unit: Cause["unit"]): string {
     const shown = unit === "share" ? 100 * value : value;
     return `${Number(shown.toPrecision(Math.abs(shown) < 10 ? 2 : 3))}`;
   };
-  const units = { dB: "dB", dBm: "dBm", K: "K", deg: "deg", share: "%", rate: "mm/h" }[unit];
+  const units = { dB: "dB", dBm: "dBm", K: "K", deg: "deg", share: "%", rate: "mm/h", mm: "mm" }[unit];
   switch (scatter.kind) {
     case "normal":
       if (unit === "share" && scatter.sigma === 1) return "by the cover's own figures";
