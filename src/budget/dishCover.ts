@@ -12,13 +12,20 @@ import type { Cover } from "../scenario/types.ts";
 import type { EndHeading } from "./antennaEntries.ts";
 import { depositOn, isDry, type Surface } from "./deposit.ts";
 import type { Doubts } from "./doubts.ts";
-import { layerAt, thicknessWarnings } from "./dryCover.ts";
+import { hasStackSpread, heatShareOf, layerAt, thicknessWarnings, withLossKept } from "./dryCover.ts";
 import { type Entry, lossEntry } from "./entry.ts";
 import { sheetOf } from "./mouthpiece.ts";
 import { publishedWater, waterModelOf } from "./publishedWater.ts";
 import type { DishCoverState, Warning, Wetness } from "./types.ts";
 
-export const NO_DISH_COVER: DishCoverState = { entries: [], passed: 1, heated: 0, warnings: [] };
+export const NO_DISH_COVER: DishCoverState = {
+  entries: [],
+  passed: 1,
+  heated: 0,
+  stack: undefined,
+  stackIsSigma: false,
+  warnings: [],
+};
 
 /**
  * Part of a big sheet's reflected amplitude that the dish gathers back into its feed: nothing where the sheet is
@@ -58,11 +65,24 @@ export function dishCoverOver(
     : layeredEntries(heading, dry, [through(stack("low")), through(stack("high"))], {
         gamma,
         reflection: abs(sheetOf(frequencyGHz, layers).reflection),
-        heatShare: doubts.coverLossShare,
+        heatShare: heatShareOf(cover.layers, doubts.coverLossShare, (some) => {
+          const { reflectedDb, heatDb } = through(some);
+          return { heatDb, wholeDb: reflectedDb + heatDb };
+        }),
       });
   const warnings = [...thicknessWarnings(frequencyGHz, cover, where), ...gainWarnings(cover, where)];
+  const wholeAt = (figure: keyof Bounded) => {
+    const { reflectedDb, heatDb } = through(withLossKept(cover.layers, figure));
+    return reflectedDb + heatDb - dry.reflectedDb - dry.heatDb;
+  };
+  const isSpread = cover.measured === undefined && hasStackSpread(cover);
+  const common = {
+    stack: isSpread ? { low: wholeAt("low"), high: wholeAt("high") } : undefined,
+    stackIsSigma: cover.layers.some(({ statedSpread }) => statedSpread),
+    warnings,
+  };
   return (wetness) => {
-    if (wetness === undefined || isDry(wetness)) return stateOf(dryEntries, dry, warnings);
+    if (wetness === undefined || isDry(wetness)) return { ...common, ...stateOf(dryEntries, dry) };
     const water = waterOver(frequencyGHz, cover, layers, diameterM, wetness, where);
     const { low, nominal, high } = water.lossDb;
     const label = `${water.noun} on the dish cover`;
@@ -75,7 +95,8 @@ export function dishCoverOver(
       reflectedDb: dry.reflectedDb + water.reflectedDb,
       heatDb: dry.heatDb + nominal - water.reflectedDb,
     };
-    return stateOf([...dryEntries, entry], wet, [...warnings, ...water.warnings]);
+    const all = [...warnings, ...water.warnings];
+    return { ...common, ...stateOf([...dryEntries, entry], wet), warnings: all };
   };
 }
 
@@ -209,9 +230,8 @@ function surfaceOf({ domeRadiusMm, slopeMm }: Cover, diameterM: number): Surface
 function stateOf(
   entries: readonly Entry[],
   { reflectedDb, heatDb }: Loss,
-  warnings: readonly Warning[],
-): DishCoverState {
+): Pick<DishCoverState, "entries" | "passed" | "heated"> {
   const entered = Math.min(1, dbToPower(-reflectedDb));
   const passed = entered * dbToPower(-heatDb);
-  return { entries, passed, heated: Math.max(0, entered - passed), warnings };
+  return { entries, passed, heated: Math.max(0, entered - passed) };
 }

@@ -69,6 +69,7 @@ export function drawingOf(link: Link, cases: readonly Case[], block = 1024): Dra
   const heardCover = (oneBatch: boolean) =>
     drawnCover(sketch, used, "receiver", all("receiver"), over("receiver"), sentCover, oneBatch);
   const [heardOther, heardTwin] = [heardCover(false), heardCover(true)];
+  const overBoth = link.scenario.transmitter.dishCover === link.scenario.receiver.dishCover;
   const weathers = new Map<string, DrawnWeather>();
   for (const { weather } of cases) {
     if (!weathers.has(weather)) weathers.set(weather, drawnWeather(sketch, used, ends, weather));
@@ -88,7 +89,7 @@ export function drawingOf(link: Link, cases: readonly Case[], block = 1024): Dra
       sent: mouth("transmitter", sentFeed, sentCover),
       heard: mouth("receiver", heardFeed, oneBatch ? heardTwin : heardOther),
       overSender: drawnDish(sketch, used, feeds, "transmitter", weather, sentCover),
-      overReceiver: drawnDish(sketch, used, feeds, "receiver", weather, heardTwin),
+      overReceiver: drawnDish(sketch, used, feeds, "receiver", weather, overBoth ? heardTwin : heardOther),
     });
   });
   const { causes, uniforms, steps } = sketch;

@@ -21,8 +21,9 @@ export interface DrawnCover {
   readonly stackNormal: Float64Array;
   /** The same as flat numbers from -1 to 1. */
   readonly stackFlat: Float64Array;
-  /** What the heat is off by, as a factor. */
+  /** What the heat is off by, as a factor, where it scatters by the usual share. */
   readonly heatTimes: Float64Array;
+  readonly heatShare: number;
   /** Standard normal deviates. */
   readonly planeWave: Float64Array;
   readonly reading: Float64Array;
@@ -86,9 +87,13 @@ export function drawnCover(
     const tie = part === "water" ? correlation.water : oneBatch ? correlation.cover : 0;
     return other?.parts.has(part) && tie !== 0 ? tied(sketch, other[part], own, tie) : own;
   };
-  const hasStack = mouths.some(({ parts: { scatter } }) => scatter.stack !== undefined);
+  const hasStack =
+    mouths.some(({ parts: { scatter } }) => scatter.stack !== undefined) ||
+    over.some((state) => state.stack !== undefined);
   const stack = hasStack ? stackOf() : new Float64Array(sketch.block).fill(0.5);
-  const hasSigma = mouths.some(({ parts: { scatter } }) => scatter.stackIsSigma);
+  const hasSigma =
+    mouths.some(({ parts: { scatter } }) => scatter.stackIsSigma) ||
+    over.some(({ stackIsSigma }) => stackIsSigma);
   const heat = normals(
     "heat",
     ({ coverHeatDb, scatter }) => coverHeatDb > 0 && scatter.heatShare > 0,
@@ -107,6 +112,7 @@ export function drawnCover(
     }),
     heat,
     heatTimes: factors(heat, coverLossShare),
+    heatShare: coverLossShare,
     planeWave: normals(
       "planeWave",
       ({ scatter }) => scatter.planeWaveDb > 0,

@@ -1,6 +1,7 @@
 import type { EndName } from "../scenario/types.ts";
 import { column, logSpread, type Sketch } from "./causes.ts";
 import type { DrawnCover } from "./drawnCover.ts";
+import { addBent } from "./drawnMouth.ts";
 import { atRate } from "./drawnRain.ts";
 import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
 import type { DishCoverState, Link } from "./types.ts";
@@ -14,7 +15,7 @@ export interface DrawnDish {
   readonly passed: Float64Array | undefined;
 }
 
-/** Heat and water of a cover over the dish: of the same make as the covers of feeds, so of the same chance. */
+/** Heat, water, permittivity and thickness of a cover over the dish: of the same make as the covers of feeds, so of the same chance. */
 export function drawnDish(
   sketch: Sketch,
   link: Link,
@@ -46,6 +47,10 @@ export function drawnDish(
     else for (let i = 0; i < out.length; i++) out[i] = heat.db * (Math.exp(heatSpread * drawn.heat[i]!) - 1);
     for (let i = 0; i < out.length; i++) out[i]! += drawn.waterTimes[i]! * water[i]! - waterDb;
   });
+  if (nominal.stack !== undefined) {
+    const { low, high } = nominal.stack;
+    addBent(sketch, excessDb, nominal.stackIsSigma ? drawn.stackNormal : drawn.stackFlat, low, high);
+  }
   return {
     excessDb,
     nominal,

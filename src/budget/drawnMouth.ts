@@ -1,4 +1,4 @@
-import { column, type Sketch } from "./causes.ts";
+import { column, logSpread, type Sketch } from "./causes.ts";
 import type { DrawnCover } from "./drawnCover.ts";
 import type { DrawnFeed } from "./drawnFeed.ts";
 import { atRate, type DrawnRain } from "./drawnRain.ts";
@@ -33,6 +33,7 @@ export function drawnMouth(
   const mouth = nodes[rain?.grid.middle ?? 0]!;
   const { coverMismatchDb, coverHeatDb, beat: nominalBeat, scatter } = mouth.parts;
   const { stackIsSigma, planeWaveDb, readingDb } = scatter;
+  const heatSpread = logSpread(scatter.heatShare);
   const heatIsDrawn = coverHeatDb > 0 && scatter.heatShare > 0;
   const mismatchDb = column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
@@ -45,7 +46,9 @@ export function drawnMouth(
   });
   const heatDb = column(sketch, (out) => {
     if (!heatIsDrawn) out.fill(coverHeatDb);
-    else for (let i = 0; i < out.length; i++) out[i] = coverHeatDb * drawn.heatTimes[i]!;
+    else if (scatter.heatShare === drawn.heatShare)
+      for (let i = 0; i < out.length; i++) out[i] = coverHeatDb * drawn.heatTimes[i]!;
+    else for (let i = 0; i < out.length; i++) out[i] = coverHeatDb * Math.exp(heatSpread * drawn.heat[i]!);
   });
   if (scatter.stack !== undefined) {
     const [low, high] = [scatter.stack("low"), scatter.stack("high")];
@@ -85,7 +88,13 @@ export function drawnMouth(
 }
 
 /** Adds a line that bends at nought: so much a unit below, so much above. */
-function addBent(sketch: Sketch, to: Float64Array, places: Float64Array, low: number, high: number): void {
+export function addBent(
+  sketch: Sketch,
+  to: Float64Array,
+  places: Float64Array,
+  low: number,
+  high: number,
+): void {
   sketch.steps.push(() => {
     for (let i = 0; i < to.length; i++)
       to[i]! += Math.max(0, -places[i]!) * low + Math.max(0, places[i]!) * high;

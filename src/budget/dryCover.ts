@@ -60,6 +60,10 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
       Math.max(covered[part].high, least[part].high, most[part].high),
     );
   const dissipationDb = plus(range("dissipationDb"), range("sidewaysLossDb"));
+  const heatShare = heatShareOf(cover.layers, doubts.coverLossShare, (layers) => {
+    const { dissipationDb, sidewaysLossDb, transducerLossDb } = cascade(mouth, sheetBefore(mouth, layers));
+    return { heatDb: dissipationDb.nominal + sidewaysLossDb.nominal, wholeDb: transducerLossDb.nominal };
+  });
   const sheetLossDb = Math.max(0, covered.transducerLossDb.nominal - feedMismatchDb);
   const near = nearMouth({ frequencyGHz, apertureMm: mouthWidthMm(feed), gapMm: cover.gapMm, sheetLossDb });
   // A cover of no thickness is no cover, and has no doubt of its own.
@@ -69,13 +73,13 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
     mismatchSigmaDb: covered.phaseSpreadDb,
     dissipationDb,
     dissipationSigmaDb: Math.hypot(
-      doubts.coverLossShare * Math.max(0, dissipationDb.nominal), // no loss may round below 0
+      heatShare * Math.max(0, dissipationDb.nominal), // no loss may round below 0
       planeWaveSigmaDb,
     ),
     scatter: {
       stack: hasStackSpread(cover) ? (end) => stackShift(mouth, covered, end) : undefined,
       stackIsSigma: cover.layers.some(({ statedSpread }) => statedSpread),
-      heatShare: doubts.coverLossShare,
+      heatShare,
       planeWaveDb: planeWaveSigmaDb,
       readingDb: 0,
     },
@@ -87,19 +91,44 @@ function layeredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, w
   };
 }
 
-function hasStackSpread({ layers }: Cover): boolean {
+/**
+ * One standard deviation of the heat as a share of it: the usual one, or by the loss tangents whose spread the user
+ * stated, and the usual one of what is left without them. A lossier sheet reflects less, so that the whole is looked
+ * at where one is made so.
+ */
+export function heatShareOf(
+  layers: readonly CoverLayer[],
+  usualShare: number,
+  lossOf: (layers: readonly Layer[]) => { readonly heatDb: number; readonly wholeDb: number },
+): number {
+  if (!layers.some(({ statedLossTangent }) => statedLossTangent)) return usualShare;
+  const at = (figure: keyof Bounded | undefined) =>
+    lossOf(
+      layers.map((layer) => {
+        const { statedLossTangent, lossTangent } = layer;
+        const there = figure === undefined ? 0 : lossTangent[figure];
+        return { ...layerAt(layer, "nominal"), ...(statedLossTangent && { lossTangent: there }) };
+      }),
+    );
+  const { heatDb } = at("nominal");
+  if (!(heatDb > 0)) return usualShare;
+  const statedDb = (at("high").wholeDb - at("low").wholeDb) / 2;
+  return Math.hypot(statedDb, usualShare * Math.max(0, at(undefined).heatDb)) / heatDb;
+}
+
+export function hasStackSpread({ layers }: Cover): boolean {
   return layers.some(
     ({ permittivity: { low, high }, thicknessSigmaMm = 0 }) => low !== high || thicknessSigmaMm > 0,
   );
 }
 
-/** Loss tangents are left as they are: what they scatter by is drawn as a share of the heat. */
+/** Layers with permittivity and thickness at an end of their spread; what loss tangents scatter by is drawn with the heat. */
+export function withLossKept(layers: readonly CoverLayer[], figure: keyof Bounded): Layer[] {
+  return layers.map((layer) => ({ ...layerAt(layer, figure), lossTangent: layer.lossTangent.nominal }));
+}
+
 function stackShift(mouth: Mouthpiece, nominal: CoveredFeed, end: "low" | "high"): StackShift {
-  const layers = mouth.cover.layers.map((layer) => ({
-    ...layerAt(layer, end),
-    lossTangent: layer.lossTangent.nominal,
-  }));
-  const there = cascade(mouth, sheetBefore(mouth, layers));
+  const there = cascade(mouth, sheetBefore(mouth, withLossKept(mouth.cover.layers, end)));
   const change = (part: "mismatchLossDb" | "dissipationDb" | "sidewaysLossDb") =>
     there[part].nominal - nominal[part].nominal;
   return {

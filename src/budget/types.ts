@@ -122,6 +122,9 @@ export interface DishCoverState {
   /** Shares of the power that come through, and that heat cover and water; the rest is sent back. */
   readonly passed: number;
   readonly heated: number;
+  /** What permittivity and thickness at the ends of their spread change of the dry cover's loss [dB]; undefined where they have none. */
+  readonly stack: Readonly<Record<"low" | "high", number>> | undefined;
+  readonly stackIsSigma: boolean;
   readonly warnings: readonly Warning[];
 }
 

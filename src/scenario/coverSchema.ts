@@ -39,6 +39,7 @@ const layer = group(
     thicknessMm: thickness.value,
     thicknessSigmaMm: thickness.sigma,
     statedSpread: spreads.some((sigma) => sigma !== undefined) || undefined,
+    statedLossTangent: loss_tangent?.sigma !== undefined || undefined,
   };
   if (material === "air") {
     return { material, ...common, permittivity: eps ?? exactly(1), lossTangent: loss ?? exactly(0) };

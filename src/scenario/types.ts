@@ -124,6 +124,8 @@ export interface CoverLayer {
   readonly lossTangent: Bounded;
   /** True where the user typed a spread of permittivity, loss tangent or thickness: bounds are then 1 sigma. */
   readonly statedSpread?: boolean | undefined;
+  /** True where the spread of the loss tangent is the user's: it stands in the place of the usual doubt of the heat. */
+  readonly statedLossTangent?: boolean | undefined;
 }
 
 export interface MeasuredCover {
