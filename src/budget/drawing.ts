@@ -49,13 +49,14 @@ export function drawingOf(link: Link, cases: readonly Case[], block = 1024): Dra
   };
 
   const sketch = newSketch(block);
-  const levels = commonLevel(sketch, used, ends, mode);
+  const levels = commonLevel(sketch, used, ends, feeds, mode);
   const receiverNoise = drawnReceiver(sketch, used, levels.receiverLineDb);
-  const [sentFeed, heardFeed] = [
-    drawnFeed(sketch, used, feeds, "transmitter"),
-    drawnFeed(sketch, used, feeds, "receiver"),
-  ];
   const all = (end: EndName) => cases.map((one) => mouthOf(used, feeds, end, one));
+  const beats = (end: EndName) => all(end).some(({ parts }) => parts.beat > 0);
+  const [sentFeed, heardFeed] = [
+    drawnFeed(sketch, used, feeds, "transmitter", beats("transmitter")),
+    drawnFeed(sketch, used, feeds, "receiver", beats("receiver")),
+  ];
   const over = (end: EndName) => Object.values(ends[end].dishCover);
   const sentCover = drawnCover(
     sketch,

@@ -1,5 +1,6 @@
+import { normalCdf } from "../numeric/normal.ts";
 import { normalDeviates } from "../numeric/normalDeviate.ts";
-import type { EndName } from "../scenario/types.ts";
+import type { EndName, Uncertain } from "../scenario/types.ts";
 import {
   type Cause,
   column,
@@ -7,9 +8,11 @@ import {
   normalsOf,
   PREFIX,
   type Sketch,
+  STILL,
   tied,
   tiedUniforms,
   uniformsOf,
+  valuesOf,
 } from "./causes.ts";
 import type { DishCoverState, Link, Mouth } from "./types.ts";
 
@@ -53,6 +56,28 @@ const dishEntry: Readonly<Record<CoverPart, string>> = {
  * @param other     the other end's: the water of both hangs together
  * @param oneBatch  true where the sheets of both ends are one cover of the scenario, so that they do too
  */
+/** What a reading is off by [dB], from its standard normal deviates: normally, or as the scenario says that it scatters. */
+export function readingOff(
+  sketch: Sketch,
+  deviates: Float64Array,
+  sigmaDb: number,
+  input: Uncertain | undefined,
+): Float64Array {
+  const scatter = input?.scatter;
+  if (input === undefined || scatter === undefined || scatter.kind === "normal") {
+    return column(sketch, (out) => {
+      for (let i = 0; i < out.length; i++) out[i] = sigmaDb * deviates[i]!;
+    });
+  }
+  const places = column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) out[i] = deviates[i] === 0 ? STILL : normalCdf(deviates[i]!);
+  });
+  const values = valuesOf(sketch, input.value, scatter, places);
+  return column(sketch, (out) => {
+    for (let i = 0; i < out.length; i++) out[i] = values[i]! - input.value;
+  });
+}
+
 export function drawnCover(
   sketch: Sketch,
   { doubts, scenario: { spread } }: Link,

@@ -1,6 +1,6 @@
 import type { EndName } from "../scenario/types.ts";
 import { column, logSpread, type Sketch } from "./causes.ts";
-import type { DrawnCover } from "./drawnCover.ts";
+import { type DrawnCover, readingOff } from "./drawnCover.ts";
 import { addBent } from "./drawnMouth.ts";
 import { atRate } from "./drawnRain.ts";
 import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
@@ -32,7 +32,8 @@ export function drawnDish(
     return { db: -(entry?.db ?? 0), sigma: entry?.sigma ?? 0 };
   };
   const heat = lossOf(nominal, ".dish_cover_heat");
-  const isRead = link.scenario.covers[link.scenario[end].dishCover!]!.measured !== undefined;
+  const { measured } = link.scenario.covers[link.scenario[end].dishCover!]!;
+  const readOff = measured && readingOff(sketch, drawn.reading, heat.sigma, measured.insertionLossDb);
   const waterDb = lossOf(nominal, "_water").db;
   const nodes = rain?.grid.links ?? [link];
   const water = atRate(
@@ -43,7 +44,7 @@ export function drawnDish(
   // A dish cover's own heat may scatter by another share than that of covers before a feed: by its entry's sigma.
   const heatSpread = heat.db > 0 ? logSpread(heat.sigma / heat.db) : 0;
   const excessDb = column(sketch, (out) => {
-    if (isRead) for (let i = 0; i < out.length; i++) out[i] = heat.sigma * drawn.reading[i]!;
+    if (readOff) out.set(readOff);
     else for (let i = 0; i < out.length; i++) out[i] = heat.db * (Math.exp(heatSpread * drawn.heat[i]!) - 1);
     for (let i = 0; i < out.length; i++) out[i]! += drawn.waterTimes[i]! * water[i]! - waterDb;
   });

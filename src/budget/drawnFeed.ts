@@ -22,12 +22,17 @@ export interface DrawnFeed {
   readonly nominalDb: number;
 }
 
-/** Return loss of a feed, and the phase between it and whatever cover it has. */
+/**
+ * Return loss of a feed, and the phase between it and whatever cover it has.
+ *
+ * @param beats  whether that phase does anything under any cover of the study
+ */
 export function drawnFeed(
   sketch: Sketch,
   { scenario, doubts }: Link,
   feeds: Readonly<Record<EndName, string>>,
   end: EndName,
+  beats: boolean,
 ): DrawnFeed {
   const cause = (of: EndName): Cause => {
     const { returnLossSpread: stated } = scenario.feeds[feeds[of]]!;
@@ -40,7 +45,7 @@ export function drawnFeed(
       label: "return loss of the feed",
       scatter,
       unit: "dB",
-      stated: isStated(stated),
+      stated: isStated(stated) || scenario.spread?.feedReturnLossDb !== undefined,
       still: STILL,
     };
   };
@@ -50,7 +55,7 @@ export function drawnFeed(
     end === "transmitter"
       ? own
       : tiedUniforms(sketch, uniformsOf(sketch, cause("transmitter")), own, doubts.correlation.returnLoss);
-  const phases = uniformsOf(sketch, {
+  const phase: Cause = {
     id: `${PREFIX[end]}.phase`,
     matter: "cover",
     end,
@@ -59,7 +64,8 @@ export function drawnFeed(
     unit: "deg",
     stated: false,
     still: 0.25, // where the phase adds next to nothing
-  });
+  };
+  const phases = beats ? uniformsOf(sketch, phase) : new Float64Array(sketch.block);
   const values = valuesOf(sketch, returnLossDb, cause(end).scatter, uniforms);
   const gammaRatio = column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {

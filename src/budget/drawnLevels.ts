@@ -40,10 +40,13 @@ export function commonLevel(
   sketch: Sketch,
   link: Link,
   ends: EndsInUse,
+  feeds: Readonly<Record<EndName, string>>,
   mode: string,
 ): { level: Float64Array; receiverLineDb: Float64Array } {
   const { scenario, doubts } = link;
-  const own = [...endLevels(scenario, ends, "transmitter"), ...endLevels(scenario, ends, "receiver")];
+  const own = (["transmitter", "receiver"] as const).flatMap((end) =>
+    endLevels(scenario, ends, end, feeds[end]),
+  );
   const shared = [...pathLevels(link), ...tiltLevel(scenario, doubts), ...operatorLevels(link, mode)];
   const ownColumns = own.map((level) => levelColumn(sketch, level, tiedToTwin(sketch, level, own, doubts)));
   const lineIndex = own.findIndex(({ cause }) => cause.id === "rx.line");
@@ -81,9 +84,9 @@ function tiedToTwin(sketch: Sketch, level: Level, all: readonly Level[], doubts:
 }
 
 /** Power, line and gain of one end; its aim stands in `drawnAim.ts`. */
-function endLevels(scenario: Scenario, ends: EndsInUse, end: EndName): Level[] {
+function endLevels(scenario: Scenario, ends: EndsInUse, end: EndName, feed: string): Level[] {
   const { power, line, antenna } = ends[end];
-  const { lineLossDb, dish: dishName, feed } = scenario[end];
+  const { lineLossDb, dish: dishName } = scenario[end];
   const dish = dishName === undefined ? undefined : scenario.dish[dishName]!;
   const gainDbi = dish === undefined ? scenario.feeds[feed]?.gainDbi : dish.gainDbi;
   const gains = antenna.filter(({ id }) => !id.endsWith(".pointing"));
@@ -124,7 +127,7 @@ export function isStated(input: Uncertain | undefined): boolean {
 }
 
 /** Where a short locator leaves the stations, and the trees near them. */
-function pathLevels({ weathers, foliage }: Link): Level[] {
+function pathLevels({ scenario, weathers, foliage }: Link): Level[] {
   const place = Object.values(weathers)[0]!.entries.find(({ id }) => id === "path.free_space")!;
   const reach = FLAT_REACH * place.sigma;
   const placeCause: Cause = {
@@ -137,7 +140,12 @@ function pathLevels({ weathers, foliage }: Link): Level[] {
     ...(reach > 0 ? [{ cause: placeCause, nominal: 0, sign: -1 as const }] : []),
     ...foliage.map((trees): Level => {
       const scatter: Scatter = { kind: "lognormal", factor: Math.exp(logSpread(trees.sigma / -trees.db)) };
-      const cause: Cause = { ...causeOf(trees, "trees", undefined), scatter, unit: "share" };
+      const cause: Cause = {
+        ...causeOf(trees, "trees", undefined),
+        scatter,
+        unit: "share",
+        stated: scenario.spread?.foliageDb !== undefined,
+      };
       return { cause, nominal: -trees.db, sign: -1 };
     }),
   ];

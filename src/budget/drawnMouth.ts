@@ -1,5 +1,5 @@
 import { column, logSpread, type Sketch } from "./causes.ts";
-import type { DrawnCover } from "./drawnCover.ts";
+import { type DrawnCover, readingOff } from "./drawnCover.ts";
 import type { DrawnFeed } from "./drawnFeed.ts";
 import { atRate, type DrawnRain } from "./drawnRain.ts";
 import type { Mouth } from "./types.ts";
@@ -35,14 +35,12 @@ export function drawnMouth(
   const { stackIsSigma, planeWaveDb, readingDb } = scatter;
   const heatSpread = logSpread(scatter.heatShare);
   const heatIsDrawn = coverHeatDb > 0 && scatter.heatShare > 0;
+  const readOff = readingDb > 0 ? readingOff(sketch, drawn.reading, readingDb, scatter.reading) : undefined;
   const mismatchDb = column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      out[i] =
-        feed.mismatchDb[i]! +
-        coverMismatchDb +
-        planeWaveDb * drawn.planeWave[i]! +
-        readingDb * drawn.reading[i]!;
+      out[i] = feed.mismatchDb[i]! + coverMismatchDb + planeWaveDb * drawn.planeWave[i]!;
     }
+    if (readOff !== undefined) for (let i = 0; i < out.length; i++) out[i]! += readOff[i]!;
   });
   const heatDb = column(sketch, (out) => {
     if (!heatIsDrawn) out.fill(coverHeatDb);

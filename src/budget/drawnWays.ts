@@ -28,7 +28,7 @@ export function wayLevel(
       way.name === "rain_scatter" && rain !== undefined ? scatterByRate(ends, name, rain) : [way.excessDb];
     const excess = atRate(sketch, atNodes.length > 1 ? rain : undefined, atNodes);
     const { sigmaDb } = way;
-    const normals = sigmaDb > 0 ? normalsOf(sketch, wayCause(way)) : new Float64Array(sketch.block);
+    const normals = sigmaDb > 0 ? normalsOf(sketch, wayCause(way, link)) : new Float64Array(sketch.block);
     return { sigmaDb, leastDb: leastOf(way), normals, excess };
   });
   return column(sketch, (out) => {
@@ -47,7 +47,9 @@ function leastOf({ name }: Mechanism): number {
   return name === "diffraction" ? 0 : Number.NEGATIVE_INFINITY;
 }
 
-function wayCause({ name, label, sigmaDb }: Mechanism): Cause {
+function wayCause({ name, label, sigmaDb }: Mechanism, { scenario: { spread = {} } }: Link): Cause {
+  const { diffractionDb, troposcatterDb, rainScatterDb } = spread;
+  const stated = { diffraction: diffractionDb, troposcatter: troposcatterDb, rain_scatter: rainScatterDb };
   return {
     id: `path.${name}`,
     matter: "ground",
@@ -55,7 +57,7 @@ function wayCause({ name, label, sigmaDb }: Mechanism): Cause {
     label,
     scatter: { kind: "normal", sigma: sigmaDb },
     unit: "dB",
-    stated: false,
+    stated: name !== "line_of_sight" && stated[name] !== undefined,
     still: 0.5,
   };
 }

@@ -41,10 +41,9 @@ export function drawnWeather(sketch: Sketch, link: Link, ends: EndsInUse, name: 
   const rainLoss = rainDb > 0 ? rainLossOf(sketch, link, name, rain) : constant(sketch, 0);
   const fogTimes =
     fogDb > 0
-      ? valuesOf(sketch, 1, fogCause(doubts.fogShare).scatter, uniformsOf(sketch, fogCause(doubts.fogShare)))
+      ? valuesOf(sketch, 1, fogCause(link).scatter, uniformsOf(sketch, fogCause(link)))
       : constant(sketch, 1);
-  const gas =
-    gasDb > 0 && doubts.gasShare > 0 ? normalsOf(sketch, gasCause(doubts.gasShare)) : constant(sketch, 0);
+  const gas = gasDb > 0 && doubts.gasShare > 0 ? normalsOf(sketch, gasCause(link)) : constant(sketch, 0);
   const way = wayLevel(sketch, link, ends, name, rain) ?? constant(sketch, 0);
   const clear = clearSky(sketch, link);
   const gasSigmaDb = gasDb * doubts.gasShare;
@@ -76,8 +75,8 @@ function constant({ block }: Sketch, value: number): Float64Array {
   return new Float64Array(block).fill(value);
 }
 
-function fogCause(share: number): Cause {
-  const scatter = { kind: "lognormal", factor: Math.exp(logSpread(share)) } as const;
+function fogCause({ doubts, scenario }: Link): Cause {
+  const scatter = { kind: "lognormal", factor: Math.exp(logSpread(doubts.fogShare)) } as const;
   return {
     id: "path.fog",
     matter: "air",
@@ -85,13 +84,13 @@ function fogCause(share: number): Cause {
     label: "fog",
     scatter,
     unit: "share",
-    stated: false,
+    stated: scenario.spread?.fogShare !== undefined,
     still: 0.5,
   };
 }
 
-function gasCause(share: number): Cause {
-  const scatter = { kind: "normal", sigma: share } as const;
+function gasCause({ doubts, scenario }: Link): Cause {
+  const scatter = { kind: "normal", sigma: doubts.gasShare } as const;
   return {
     id: "path.gas",
     matter: "air",
@@ -99,7 +98,7 @@ function gasCause(share: number): Cause {
     label: "gas",
     scatter,
     unit: "share",
-    stated: false,
+    stated: scenario.spread?.gasShare !== undefined,
     still: 0.5,
   };
 }

@@ -202,7 +202,7 @@ function measuredDry(mouth: Mouthpiece, doubts: Doubts, feedMismatchDb: number, 
     mismatchSigmaDb: sigma,
     dissipationDb: exactly(split.dissipationDb),
     dissipationSigmaDb: 0,
-    scatter: { ...NO_SCATTER, readingDb: sigma },
+    scatter: { ...NO_SCATTER, readingDb: sigma, reading: insertionLossDb },
     beat: 0, // it was read at the phase that there is
     layers,
     covered: { ...covered, returnLossDb: exactly(split.coveredReturnLossDb) },

@@ -1,6 +1,6 @@
 import type { Bounded } from "../cover/bounded.ts";
 import type { Mode } from "../receiver/modes.ts";
-import type { EndName, Scenario, Site, Snow, Weather } from "../scenario/types.ts";
+import type { EndName, Scenario, Site, Snow, Uncertain, Weather } from "../scenario/types.ts";
 import type { Doubts } from "./doubts.ts";
 import type { Entry } from "./entry.ts";
 import type { GroundPath } from "./groundPath.ts";
@@ -165,6 +165,8 @@ export interface CoverScatter {
   /** Of a plane wave before a mouth that is none. */
   readonly planeWaveDb: number;
   readonly readingDb: number;
+  /** How the reading scatters, where it is not normal. */
+  readonly reading?: Uncertain | undefined;
 }
 
 /** A mouth taken apart for drawing: what its entries hold, and how each part may differ. */

@@ -10,7 +10,7 @@ const LEAST_SHARE = 0.02;
 /** Matters worth advice in one weather. */
 const MOST_ADVICE = 2;
 
-const COVER: readonly Matter[] = ["cover", "water"];
+export const COVER: readonly Matter[] = ["cover", "water"];
 
 /** Matter by weather: share of the variance and rank correlation, the largest first. */
 export function rankingTable({ rankings }: SpreadStudy): string {
@@ -105,7 +105,7 @@ function advice(
   { matter, knownLowDb, knownCloses }: MatterOfSpread,
   { case: one, lowDb, closes }: SpreadRanking,
 ): string {
-  const { name, advice } = matterWords[matter];
+  const { name, many, advice } = matterWords[matter];
   const points = 100 * (knownCloses - closes);
   const gains = [
     ...(Math.abs(knownLowDb - lowDb) >= 0.05
@@ -114,7 +114,9 @@ function advice(
     ...(Math.abs(points) >= 1 ? [`the chance to close by ${pointsWords(Math.round(points))}`] : []),
   ];
   const effect =
-    gains.length > 0 ? ` Were it as the scenario has it for sure, ${listed(gains)} (${one.weather}).` : "";
+    gains.length > 0
+      ? ` Were ${many ? "they" : "it"} as the scenario has ${many ? "them" : "it"} for sure, ${listed(gains)} (${one.weather}).`
+      : "";
   return `${capital(name)}: ${advice}.${effect}`;
 }
 

@@ -3,6 +3,7 @@ import type { EndName } from "../scenario/types.ts";
 import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
 import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
 import { coverName } from "./marginText.ts";
+import { COVER } from "./spreadAdvice.ts";
 import { matterWords } from "./spreadWords.ts";
 import { listed, paragraph, percent, signed, tenth } from "./words.ts";
 
@@ -57,7 +58,15 @@ function reasonTexts(apart: readonly SpreadRow[], rankings: readonly SpreadRanki
     const rows = apart.filter((row) => row.case.weather === weather);
     const ranked = rankings.find(({ case: one }) => one.weather === weather);
     const own = rows.find((row) => ranked !== undefined && coverName(row) === coverName(ranked));
-    return own === undefined ? reasonText(rows[0]!, [], link) : reasonText(own, ranked!.matters, link);
+    const matters = ranked?.matters ?? [];
+    // Another cover's share in it is not ranked; all else is alike.
+    return own === undefined
+      ? reasonText(
+          rows[0]!,
+          matters.filter(({ matter }) => !COVER.includes(matter)),
+          link,
+        )
+      : reasonText(own, matters, link);
   });
 }
 

@@ -1,7 +1,9 @@
 import { describe, expect, it } from "vitest";
+import { prepare } from "../../src/budget/prepare.ts";
 import { exactly } from "../../src/cover/bounded.ts";
 import type { Uncertain } from "../../src/scenario/types.ts";
-import { coverOf, dishOf, feedOf, layerOf, weatherOf } from "../budget/scenarios.ts";
+import { spreadOf } from "../../src/study/spread.ts";
+import { caseOf, coverOf, dishOf, feedOf, layerOf, weatherOf } from "../budget/scenarios.ts";
 import {
   type Change,
   exact,
@@ -179,6 +181,36 @@ const overDish: typeof fields = [
     }),
   ],
 ];
+
+describe("a reading that scatters otherwise", () => {
+  const sheet = (insertionLossDb: Uncertain) => coverOf({ measured: { insertionLossDb } });
+  const flat = {
+    value: 1,
+    sigma: 0.6 / Math.sqrt(3),
+    scatter: { kind: "flat", low: 0.4, high: 1.6 },
+  } as const;
+  const rangeOf = (change: Change) => {
+    const link = prepare(quietScenario(change));
+    const chosen = [caseOf(link.scenario, "now")];
+    const { lowDb, highDb } = spreadOf(link, chosen, { draws: 16_384, seed: 5, precision: 1e-9 }).rows[0]!
+      .marginDb;
+    return highDb - lowDb;
+  };
+
+  it("is drawn so, before a feed and over a dish: nine tenths of a flat range, where a normal one spans 3.3 sigma", () => {
+    expect(rangeOf({ ...on("sheet"), covers: { bare: coverOf(), sheet: sheet(flat) } })).toBeCloseTo(
+      0.9 * 1.2,
+      1,
+    );
+    const over = { transmitter: { dishCover: "sheet" }, covers: { bare: coverOf(), sheet: sheet(flat) } };
+    expect(rangeOf(over)).toBeCloseTo(0.9 * 1.2, 1);
+    const normal = { value: 1, sigma: 0.6 / Math.sqrt(3) };
+    expect(rangeOf({ ...over, covers: { bare: coverOf(), sheet: sheet(normal) } })).toBeCloseTo(
+      3.29 * normal.sigma,
+      1,
+    );
+  });
+});
 
 describe("the spread of a field, stated as value +/- sigma", () => {
   it.each([...fields, ...overDish])(
