@@ -221,6 +221,24 @@ describe("one cause moved is the engine with that input changed", () => {
     expect(all.reduce((sum, db) => sum + db, 0) / 64).toBeCloseTo(marginDb, 4);
   });
 
+  it("a phase drawn is a phase known, at either end: the same margins in order, level and noise together", () => {
+    for (const end of ["transmitter", "receiver"] as const) {
+      const plate = { bare: coverOf(), plate: coverOf({ layers: [layerOf(4, 3, 0.02)] }) };
+      const at = (phaseDeg?: number) => ({
+        ...scenarioOf({ ...bare, covers: plate, [end]: { cover: "plate", feed: "own" } }),
+        feeds: { stub: feedOf(), own: feedOf({ returnLossDb: 10, phaseDeg }) },
+      });
+      const chosen = caseOf(at(), "dry");
+      const id = end === "transmitter" ? "tx.phase" : "rx.phase";
+      const turns = Array.from({ length: 180 }, (_, i) => (i + 0.5) / 180);
+      const rising = (some: readonly number[]) => some.toSorted((a, b) => a - b);
+      const drawn = rising(turns.map((turn) => marginsAt(at(), [chosen], id, turn)[0]!.moved));
+      const known = rising(turns.map((turn) => evaluate(prepare(at(360 * turn)), chosen).marginDb));
+      expect(known.at(-1)! - known[0]!).toBeGreaterThan(1);
+      for (const [i, margin] of drawn.entries()) expect(Math.abs(margin - known[i]!)).toBeLessThan(0.02);
+    }
+  });
+
   it("water on the covers by a factor that both ends share where they are tied wholly", () => {
     const scenario = {
       ...scenarioOf({
