@@ -55,9 +55,12 @@ export function newSketch(block: number): Sketch {
   return { block, causes: [], uniforms: [], steps: [] };
 }
 
-/** The cause's random numbers, block by block, strictly inside (0, 1) or `STILL`; a cause met again is the same one. */
+/**
+ * The cause's random numbers, block by block, strictly inside (0, 1) or `STILL`; a cause met again is the same one. Another
+ * label makes it another way to scatter by the numbers of one stream.
+ */
 export function uniformsOf(sketch: Sketch, cause: Cause): Float64Array {
-  const known = sketch.causes.findIndex(({ id }) => id === cause.id);
+  const known = sketch.causes.findIndex(({ id, label }) => id === cause.id && label === cause.label);
   if (known >= 0) return sketch.uniforms[known]!;
   const uniforms = new Float64Array(sketch.block).fill(cause.still);
   sketch.causes.push(cause);

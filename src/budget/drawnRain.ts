@@ -18,12 +18,19 @@ export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain |
   const common = { end: undefined, scatter: grid.scatter, still: STILL };
   const cause: Cause =
     grid.of === "dew"
-      ? { ...common, id: "dew", matter: "water", label: "dew on the covers", unit: "mm", stated: true }
+      ? {
+          ...common,
+          id: "dew",
+          matter: "water",
+          label: `dew on the covers, ${name}`,
+          unit: "mm",
+          stated: true,
+        }
       : {
           ...common,
           id: "rain.rate",
           matter: "rain",
-          label: "rain rate",
+          label: isStated(rainMmPerH) ? `rain rate, ${name}` : "rain rate",
           unit: "rate",
           stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
         };

@@ -4,6 +4,7 @@ import { drawingOf } from "../../src/budget/drawing.ts";
 import { prepare } from "../../src/budget/prepare.ts";
 import { normalCdf } from "../../src/numeric/normal.ts";
 import { proportionInterval } from "../../src/numeric/proportion.ts";
+import { rankCorrelation, variance } from "../../src/numeric/ranking.ts";
 import type { Scenario, SpreadSettings } from "../../src/scenario/types.ts";
 import { spreadOf } from "../../src/study/spread.ts";
 import { sampleOf } from "../../src/study/spreadSampling.ts";
@@ -262,6 +263,19 @@ describe("the study", () => {
       expect(same.marginDb).toEqual(row.marginDb);
       expect(same.costDb).toEqual(row.costDb);
     }
+  });
+
+  it("lets the rain of two weathers rise and fall together, each by its own distribution", () => {
+    const rain = (factor: number) =>
+      weatherOf({ rainMmPerH: { value: 20, scatter: { kind: "lognormal", factor } }, extentKm: 10 });
+    const two = prepare(quietScenario({ weather: { now: rain(1.2), later: rain(2) } }));
+    const drawing = drawingOf(two, cases(two));
+    const labels = drawing.causes.filter(({ id }) => id === "rain.rate").map(({ label }) => label);
+    expect(labels).toEqual(["rain rate, now", "rain rate, later"]);
+    const sample = sampleOf(drawing, { draws: 1000, seed: 1, precision: 0.1 });
+    expect(rankCorrelation(...(sample.margins as [Float64Array, Float64Array]))).toBeGreaterThan(0.999);
+    const [now, later] = sample.margins.map((margins) => Math.sqrt(variance(margins)));
+    expect(later! / now!).toBeGreaterThan(3);
   });
 
   it("stops as soon as every chance is known well enough, and says how well", () => {
