@@ -1,5 +1,5 @@
 import type { EndName, Scenario } from "../scenario/types.ts";
-import { type Cause, column, type Sketch, tiedUniforms, uniformsOf } from "./causes.ts";
+import { type Cause, column, type Sketch, STILL, tiedUniforms, uniformsOf } from "./causes.ts";
 import type { Doubts } from "./doubts.ts";
 import type { PreparedEnd } from "./types.ts";
 
@@ -31,7 +31,6 @@ export function aimLevels(
     const offset = scenario.dish[name]!.pointingOffsetDeg / beamwidthDeg;
     const mean = 24 * error * error;
     const scatter = { kind: "exponential", mean } as const;
-    const still = 1 - Math.exp(-1); // the mean of an exponential
     const cause: Cause = {
       id: entry.id,
       matter: "aim",
@@ -40,7 +39,7 @@ export function aimLevels(
       scatter,
       unit: "dB",
       stated: true,
-      still,
+      still: STILL,
     };
     const own = uniformsOf(sketch, cause);
     const radius = before === undefined ? own : tiedUniforms(sketch, before, own, correlation.aim);
@@ -52,7 +51,9 @@ export function aimLevels(
 
 function straight(sketch: Sketch, radius: Float64Array, mean: number): Float64Array {
   return column(sketch, (out) => {
-    for (let i = 0; i < out.length; i++) out[i] = mean * (1 + Math.log(1 - radius[i]!));
+    for (let i = 0; i < out.length; i++) {
+      out[i] = radius[i] === STILL ? 0 : mean * (1 + Math.log(1 - radius[i]!));
+    }
   });
 }
 
@@ -73,7 +74,7 @@ function aside(
   });
   return column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      const far = error * Math.sqrt(-2 * Math.log(1 - radius[i]!));
+      const far = error * Math.sqrt(radius[i] === STILL ? 2 : -2 * Math.log(1 - radius[i]!));
       const square = far * far + 2 * offset * far * Math.cos(2 * Math.PI * side[i]!);
       out[i] = 12 * (2 * error * error - square);
     }

@@ -2,7 +2,6 @@ import type { Matter } from "../budget/causes.ts";
 import { type Drawing, drawingOf } from "../budget/drawing.ts";
 import type { Case, Link } from "../budget/types.ts";
 import { mean, quantilesOf, rankCorrelation, skewness, variance } from "../numeric/ranking.ts";
-import type { Scatter } from "../numeric/scatter.ts";
 import { uniformStream } from "../numeric/uniformStream.ts";
 import { varianceShare } from "../numeric/varianceShare.ts";
 import { fill } from "./spreadSampling.ts";
@@ -68,11 +67,7 @@ export function spreadRanking(link: Link, cases: readonly Case[], seed: number):
       );
     return { matter, mixed: take(second, first), alone: take(first, still), known: take(still, first) };
   });
-  const aside = matters.filter((matter) =>
-    causes.some((one) => one.matter === matter && isAside(one.scatter)),
-  );
   return cases.map((one, k): SpreadRanking => {
-    const asideDb = base[k]! - drawing.budgets[k]!.marginDb;
     const found = all.map(({ matter, mixed, alone, known }): MatterOfSpread => {
       const by = alone[k]!;
       return {
@@ -80,7 +75,7 @@ export function spreadRanking(link: Link, cases: readonly Case[], seed: number):
         varianceShare: Math.min(1, Math.max(0, varianceShare(a[k]!, b[k]!, mixed[k]!))),
         rankCorrelation: Math.max(0, rankCorrelation(a[k]!, by)),
         sigmaDb: Math.sqrt(variance(by)),
-        shiftDb: mean(by) - base[k]! + (aside.includes(matter) ? asideDb / aside.length : 0),
+        shiftDb: mean(by) - base[k]!,
         skewness: skewness(by),
         knownCloses: shareAbove0(known[k]!),
         knownLowDb: quantilesOf(known[k]!.slice(), [0.05])[0]!,
@@ -99,11 +94,6 @@ export function spreadRanking(link: Link, cases: readonly Case[], seed: number):
 
 /** Less than this is no spread [dB]. */
 const LEAST_DB = 1e-6;
-
-/** Whether one draw cannot stand for the budget's value: a mixture's mean is none of its parts, ends may be tied. */
-function isAside({ kind }: Scatter): boolean {
-  return kind === "mixture" || kind === "exponential";
-}
 
 function marginsWith({ uniforms, margins, work }: Drawing, columns: readonly Float64Array[]): Float64Array[] {
   for (const [i, some] of columns.entries()) uniforms[i]!.set(some);
