@@ -104,8 +104,8 @@ function litDish(heading: EndHeading, frequencyGHz: number, feed: Feed, dish: Di
   if (surfaceRmsMm > 0) {
     entries.push(lossEntry(heading("surface", "surface error", "Ruze 1966"), surfaceLossDb));
   }
-  const { value: otherDb, sigma } = dish.otherLossesDb;
-  if (otherDb > 0) {
+  const { value: otherDb, sigma = 0 } = dish.otherLossesDb;
+  if (otherDb > 0 || sigma > 0) {
     entries.push(lossEntry(heading("other", "other losses of the dish", "scenario"), otherDb, sigma));
   }
   return entries;

@@ -182,6 +182,16 @@ const overDish: typeof fields = [
   ],
 ];
 
+describe("other losses of a dish that may well be none", () => {
+  it("are drawn, above 0 alone: of a normal spread about 0 half is none", () => {
+    const dish = (otherLossesDb: Uncertain) => ({ tripod: dishOf({ otherLossesDb, pointingErrorDeg: 0 }) });
+    const none = varianceOf(quietScenario({ dish: dish({ value: 0 }) }));
+    const some = varianceOf(quietScenario({ dish: dish({ value: 0, sigma: 1 }) }));
+    // Half of a normal distribution and nought for the rest: variance (1 - 1/pi)/2; both ends have the dish.
+    expect(some - none).toBeCloseTo(1 - 1 / Math.PI, 1);
+  });
+});
+
 describe("a reading that scatters otherwise", () => {
   const sheet = (insertionLossDb: Uncertain) => coverOf({ measured: { insertionLossDb } });
   const flat = {

@@ -283,7 +283,7 @@ function expectAgreement(row: SpreadRow, { margins, costs }: Found) {
   );
 }
 
-const DRAWS = 1200;
+const DRAWS = 1000;
 const ends = (powerDbm: number, cover: string) => ({
   transmitter: { powerDbm: { value: powerDbm }, cover },
   receiver: { cover },
