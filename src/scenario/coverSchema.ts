@@ -32,13 +32,20 @@ const layer = group(
   "a layer: material and thickness",
 ).transform(({ material, thickness, fill, permittivity, loss_tangent }, context): CoverLayer => {
   const known = material === "air" ? undefined : findMaterial(material);
-  const eps = permittivity && spreadOf(permittivity, 1);
+  // As likely anywhere between two ends is how a published range is taken too; beside figures with a sigma it has one.
+  const range =
+    thickness.sigma === undefined && loss_tangent?.sigma === undefined ? permittivity?.scatter : undefined;
+  const eps =
+    permittivity &&
+    (range?.kind === "flat"
+      ? { nominal: permittivity.value, low: range.low, high: range.high }
+      : spreadOf(permittivity, 1));
   const loss = loss_tangent && spreadOf(loss_tangent, 0);
   const spreads = [thickness, permittivity, loss_tangent].map((figure) => figure?.sigma);
   const common = {
     thicknessMm: thickness.value,
     thicknessSigmaMm: thickness.sigma,
-    statedSpread: spreads.some((sigma) => sigma !== undefined) || undefined,
+    statedSpread: (range?.kind !== "flat" && spreads.some((sigma) => sigma !== undefined)) || undefined,
     statedLossTangent: loss_tangent?.sigma !== undefined || undefined,
   };
   if (material === "air") {

@@ -186,11 +186,29 @@ describe("spreads of feeds and layers", () => {
     ["permittivity: 2.1", undefined],
     ["permittivity: 2.1 +/- 0.05", true],
     ["loss_tangent: 0.001 +/- 0.0005", true],
-    ["permittivity: { flat: [2, 2.2] }", true],
+    ["permittivity: { normal: 2.1, sigma: 0.05 }", true],
+    ["permittivity: { flat: [2, 2.2] }", undefined], // a range, as a published one is
   ])("knows a stated spread from a published one: %s", async (key, stated) => {
     for (const material of ["FEP film", "air", "a film of my own"]) {
       if (material.endsWith("own") && !key.startsWith("permittivity")) continue;
       expect((await layer(`{ material: ${material}, thickness: 1 mm, ${key} }`)).statedSpread).toBe(stated);
     }
+  });
+
+  it("takes a flat permittivity from end to end, and by its deviation beside figures that have one", async () => {
+    const flat = "material: FEP film, permittivity: { flat: [2, 2.2] }";
+    const range = await layer(`{ ${flat}, thickness: 1 mm }`);
+    expect(range.permittivity).toEqual({ low: 2, nominal: 2.1, high: 2.2 });
+    const beside = await layer(`{ ${flat}, thickness: 1 mm +/- 0.1 mm }`);
+    expect(beside.permittivity.high).toBeCloseTo(2.1 + 0.2 / Math.sqrt(12), 9);
+    expect(beside.statedSpread).toBe(true);
+  });
+
+  it("knows a stated spread of the loss tangent from that of its neighbours", async () => {
+    const stated = async (keys: string) =>
+      (await layer(`{ material: FEP film, thickness: 1 mm, ${keys} }`)).statedLossTangent;
+    expect(await stated("loss_tangent: 0.001 +/- 0.0005")).toBe(true);
+    expect(await stated("loss_tangent: 0.001")).toBeUndefined();
+    expect(await stated("permittivity: 2.1 +/- 0.05")).toBeUndefined();
   });
 });
