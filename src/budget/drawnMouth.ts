@@ -12,7 +12,7 @@ export interface DrawnMouth {
   /** Mismatch but for what the phase adds, and what heats cover and water [dB]. */
   readonly mismatchDb: Float64Array;
   readonly heatDb: Float64Array;
-  /** |1 - x e^(j psi)|^2: what the phase adds to the mismatch, as a power ratio. */
+  /** |1 - x e^(j psi)|^2: what the phase adds to the mismatch, as a power ratio; of a known one, beside its nominal. */
   readonly beat: Float64Array;
   readonly nominal: { readonly mismatchDb: number; readonly heatDb: number };
 }
@@ -68,9 +68,16 @@ export function drawnMouth(
     rain,
     nodes.map(({ parts }) => parts.waterHeatDb),
   );
+  const { beat: tunedBeat = 0, cosine = 1 } = mouth.parts.tuned ?? {};
   const beat = column(sketch, (out) => {
-    if (nominalBeat === 0) out.fill(1);
-    else {
+    if (nominalBeat === 0 && tunedBeat === 0) out.fill(1);
+    else if (nominalBeat === 0) {
+      const held = 1 + tunedBeat * (tunedBeat - 2 * cosine);
+      for (let i = 0; i < out.length; i++) {
+        const x = Math.min(MOST_BEAT, tunedBeat * feed.gammaRatio[i]!);
+        out[i] = (1 + x * (x - 2 * cosine)) / held;
+      }
+    } else {
       for (let i = 0; i < out.length; i++) {
         const x = Math.min(MOST_BEAT, nominalBeat * feed.gammaRatio[i]!);
         out[i] = 1 + x * (x - 2 * feed.cosine[i]!);

@@ -1,4 +1,5 @@
 import type { Bounded } from "../cover/bounded.ts";
+import type { CoveredFeed } from "../cover/coveredFeed.ts";
 import type { Mode } from "../receiver/modes.ts";
 import type { EndName, Scenario, Site, Snow, Uncertain, Weather } from "../scenario/types.ts";
 import type { Doubts } from "./doubts.ts";
@@ -177,6 +178,8 @@ export interface MouthParts {
   readonly waterHeatDb: number;
   /** x of the loss 20 log10|1 - x e^(j psi)| that an unknown phase adds, 0 where it is known or has been read. */
   readonly beat: number;
+  /** Of a known phase: what the nominal holds of it, so that another match of the feed can be told. */
+  readonly tuned: CoveredFeed["tuned"];
   readonly scatter: CoverScatter;
 }
 

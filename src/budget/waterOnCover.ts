@@ -20,6 +20,7 @@ export interface WaterCost {
   readonly phaseSpreadDb: number;
   /** As of a covered feed, with the water on. */
   readonly beat: number;
+  readonly tuned: CoveredFeed["tuned"];
   readonly returnLossDb: Bounded;
   readonly filmMm: number;
   readonly source: string;
@@ -60,6 +61,7 @@ export function waterOnCover(
     noun,
     phaseSpreadDb: wet.phaseSpreadDb,
     beat: wet.beat,
+    tuned: wet.tuned,
     filmMm: filmMm.nominal,
     warnings: deposit.warnings,
   };
@@ -91,6 +93,7 @@ export function waterOnCover(
     dissipationDb: bounded(0, published.lossDb, whole),
     phaseSpreadDb: dry.phaseSpreadDb,
     beat: dry.beat,
+    tuned: dry.tuned,
     returnLossDb: bounded(wet.returnLossDb.low, dry.returnLossDb.nominal, dry.returnLossDb.high),
     filmMm: 0,
     source: published.source,
@@ -148,6 +151,7 @@ function beads(
     ),
     phaseSpreadDb: wet.phaseSpreadDb,
     beat: wet.beat,
+    tuned: wet.tuned,
     returnLossDb: wet.returnLossDb,
     filmMm: 0,
   };

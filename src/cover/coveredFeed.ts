@@ -32,6 +32,8 @@ export interface CoveredFeed {
   readonly phaseSpreadDb: number;
   /** x of the loss 20 log10|1 - x e^(j psi)| that an unknown phase psi adds to the nominal, 0 with the phase known. */
   readonly beat: number;
+  /** With the phase known: the same x, and the cosine of its psi; the nominal holds what they add. */
+  readonly tuned?: { readonly beat: number; readonly cosine: number } | undefined;
 }
 
 /**
@@ -98,6 +100,7 @@ export function coveredFeed({
       sidewaysLossDb,
       phaseSpreadDb: 0,
       beat: 0,
+      tuned: { beat: g * abs(returned), cosine: b > 0 ? returned.re / abs(returned) : 1 },
     };
   }
 

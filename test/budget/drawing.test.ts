@@ -121,6 +121,21 @@ describe("one cause moved is the engine with that input changed", () => {
     }
   });
 
+  it("return loss of a feed whose phase to its cover is known, in and out of tune", () => {
+    for (const phaseDeg of [0, 70, 180, 250]) {
+      const feed = (returnLossDb: number, sigma?: number) => ({
+        ...plain,
+        covers: { bare: coverOf(), plate: coverOf({ layers: [layerOf(3, 3, 0.01)] }) },
+        feeds: {
+          stub: feedOf(),
+          own: feedOf({ returnLossDb, phaseDeg, returnLossSpread: { value: returnLossDb, sigma } }),
+        },
+        receiver: { ...plain.receiver, feed: "own", cover: "plate" },
+      });
+      expectMoves(feed(10, 1.5), feed(10 + 1.5 * Z), "rx.return_loss", P, 1e-7);
+    }
+  });
+
   it("rain rate: path rain, wet covers and sky together, the models asked at other rates", () => {
     const film = {
       bare: coverOf(),
@@ -222,14 +237,13 @@ describe("one cause moved is the engine with that input changed", () => {
   });
 
   it("a phase drawn is a phase known, at either end: the same margins in order, level and noise together", () => {
-    for (const end of ["transmitter", "receiver"] as const) {
+    for (const [id, end] of [["tx.phase", "transmitter"] as const, ["rx.phase", "receiver"] as const]) {
       const plate = { bare: coverOf(), plate: coverOf({ layers: [layerOf(4, 3, 0.02)] }) };
       const at = (phaseDeg?: number) => ({
         ...scenarioOf({ ...bare, covers: plate, [end]: { cover: "plate", feed: "own" } }),
         feeds: { stub: feedOf(), own: feedOf({ returnLossDb: 10, phaseDeg }) },
       });
       const chosen = caseOf(at(), "dry");
-      const id = end === "transmitter" ? "tx.phase" : "rx.phase";
       const turns = Array.from({ length: 180 }, (_, i) => (i + 0.5) / 180);
       const rising = (some: readonly number[]) => some.toSorted((a, b) => a - b);
       const drawn = rising(turns.map((turn) => marginsAt(at(), [chosen], id, turn)[0]!.moved));
