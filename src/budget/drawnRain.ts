@@ -29,7 +29,7 @@ export function drawnRain(sketch: Sketch, link: Link, name: string): DrawnRain |
       : {
           ...common,
           id: "rain.rate",
-          matter: "rain",
+          matter: "rate",
           label: isStated(rainMmPerH) ? `rain rate, ${name}` : "rain rate",
           unit: "rate",
           stated: isStated(rainMmPerH) || link.scenario.spread?.rainRateFactor !== undefined,
@@ -67,7 +67,7 @@ export function rainLossOf(
   const logsAtNodes = atNodes.map(({ weathers }) => Math.log(Math.max(1e-12, weathers[name]!.rainLossDb)));
   const lengths = normalsOf(sketch, {
     id: "rain.length",
-    matter: "rain",
+    matter: "extent",
     end: undefined,
     label: "length of path in the rain",
     scatter: { kind: "normal", sigma: rainLengthShare },

@@ -8,7 +8,7 @@ export interface Way {
   readonly excessDb: number;
 }
 
-const verdictWords = { closes: "closes", thin: "is thin", fails: "fails" } as const satisfies Record<
+export const verdictWords = { closes: "closes", thin: "is thin", fails: "fails" } as const satisfies Record<
   Verdict,
   string
 >;

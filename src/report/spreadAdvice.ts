@@ -61,7 +61,8 @@ function comparison({ case: { weather, transmitter, receiver }, matters }: Sprea
   const covers = matters.filter(({ matter }) => COVER.includes(matter));
   const [first] = matters.filter(({ matter }) => !COVER.includes(matter));
   if (first === undefined) return "";
-  const { name, many } = matterWords[first.matter];
+  const { many } = matterWords[first.matter];
+  const name = subject(first.matter);
   const verb = many ? "matter" : "matters";
   const own = deviation(covers);
   if (own < 0.05) {
@@ -79,6 +80,14 @@ function comparison({ case: { weather, transmitter, receiver }, matters }: Sprea
   }
   if (times < 1.25) return `${capital(weather)}: ${name} ${verb} about as much as ${what} ${figures}.`;
   return `${capital(weather)}: ${name} ${verb} ${timesWords(times)} as much as ${what} ${figures}.`;
+}
+
+/** A matter as a sentence begins with it: "the" before what is one of its kind. */
+function subject(matter: Matter): string {
+  const { name } = matterWords[matter];
+  return /^(threshold|extent|place|match|way|rain rate|receiver|transmitter)\b/.test(name)
+    ? `the ${name}`
+    : name;
 }
 
 const counts = [

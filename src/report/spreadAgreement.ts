@@ -51,46 +51,70 @@ function differs({ marginDb, closes, verdict, budget }: SpreadRow): boolean {
   );
 }
 
-/** In each weather why its ranked case parts from the budget, or the first that does. */
+/** Where in each weather the ranked case parts from the budget, or the first that does; then all reasons, once. */
 function reasonTexts(apart: readonly SpreadRow[], rankings: readonly SpreadRanking[], link: Link): string[] {
   const weathers = [...new Set(apart.map(({ case: { weather } }) => weather))];
-  return weathers.map((weather) => {
+  const told = weathers.map((weather) => {
     const rows = apart.filter((row) => row.case.weather === weather);
     const ranked = rankings.find(({ case: one }) => one.weather === weather);
     const own = rows.find((row) => ranked !== undefined && coverName(row) === coverName(ranked));
-    const matters = ranked?.matters ?? [];
     // Another cover's share in it is not ranked; all else is alike.
-    return own === undefined
-      ? reasonText(
-          rows[0]!,
-          matters.filter(({ matter }) => !COVER.includes(matter)),
-          link,
-        )
-      : reasonText(own, matters, link);
+    const matters = (ranked?.matters ?? []).filter(
+      ({ matter }) => own !== undefined || !COVER.includes(matter),
+    );
+    const row = own ?? rows[0]!;
+    return { line: partingText(row), reasons: reasonsOf(row, matters, link) };
   });
+  const reasons = new Map<string, Reason>();
+  for (const reason of told.flatMap((one) => one.reasons)) {
+    const known = reasons.get(reason.about);
+    if (known === undefined || reason.weight > known.weight) reasons.set(reason.about, reason);
+  }
+  const why =
+    reasons.size > 0 ? [...reasons.values()].map(({ text }) => text) : ["the tails are no normal ones"];
+  return [...told.map(({ line }) => line), `because ${why.join("; ")}.`];
 }
 
-function reasonText(row: SpreadRow, matters: readonly MatterOfSpread[], link: Link): string {
+/** Why draws part from a budget; of those about one thing the weightiest is told. */
+interface Reason {
+  readonly about: string;
+  readonly weight: number;
+  readonly text: string;
+}
+
+function reasonsOf(row: SpreadRow, matters: readonly MatterOfSpread[], link: Link): Reason[] {
   const { case: one } = row;
   const whole = Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
-  const reasons = [
-    ...blunderReason(link),
-    ...rateReason(one.weather, link),
+  const always = (about: string, texts: readonly string[]) =>
+    texts.map((text) => ({ about, weight: 1, text }));
+  const tied =
+    link.doubts.correlation.water !== 0 && isWet(link, one, "transmitter") && isWet(link, one, "receiver");
+  return [
+    ...always("blunder", blunderReason(link)),
+    ...always("rate as written", rateReason(one.weather, link)),
     ...matters
       .filter(({ sigmaDb, skewness, shiftDb }) => {
         const counts = sigmaDb > whole / 5;
         return (counts && Math.abs(skewness) > SKEW) || Math.abs(shiftDb) > SHIFT_DB;
       })
-      .map(bentReason),
-    ...(link.doubts.correlation.water !== 0 && isWet(link, one, "transmitter") && isWet(link, one, "receiver")
-      ? ["water at both ends is tied, which a root-sum-square takes as independent"]
-      : []),
+      .map((matter) => ({
+        about: matter.matter,
+        weight: Math.abs(matter.shiftDb) + matter.sigmaDb * Math.abs(matter.skewness),
+        text: bentReason(matter, one.weather),
+      })),
+    ...always(
+      "tied water",
+      tied ? ["water at both ends is tied, which a root-sum-square takes as independent"] : [],
+    ),
   ];
+}
+
+function partingText(row: SpreadRow): string {
   const { budget, marginDb, closes } = row;
   const [drawn, summed] = [percent(closes.share), percent(budget.holdProbability)];
   const chance = drawn === summed ? `chance ${drawn} in both` : `chance ${drawn} for ${summed}`;
-  const here = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, ${chance}`;
-  return `${one.weather}, ${coverName(row)}: ${here}; because ${reasons.length > 0 ? reasons.join("; ") : "the tails are no normal ones"}.`;
+  const figures = `median ${tenth(marginDb.medianDb)} for ${tenth(budget.marginDb)} dB, ${chance}`;
+  return `${row.case.weather}, ${coverName(row)}: ${figures};`;
 }
 
 /** Whether water costs anything at an end. */
@@ -114,13 +138,13 @@ function rateReason(weather: string, { doubts, scenario }: Link): string[] {
   const stated = rainMmPerH.sigma !== undefined || rainMmPerH.scatter !== undefined;
   if (!rains || stated || doubts.rainRateFactor === 1) return [];
   return [
-    `the rain rate, which a budget takes as written, is drawn within a factor of ${doubts.rainRateFactor}`,
+    `the rain rate, which a budget takes as written, is drawn with a deviation of a factor of ${doubts.rainRateFactor}`,
   ];
 }
 
-function bentReason({ matter, skewness, shiftDb }: MatterOfSpread): string {
+function bentReason({ matter, skewness, shiftDb }: MatterOfSpread, weather: string): string {
   const { name, many } = matterWords[matter];
-  const moves = `${many ? "move" : "moves"} the mean by ${signed(shiftDb)} dB`;
+  const moves = `${many ? "move" : "moves"} the mean by ${signed(shiftDb)} dB (${weather})`;
   if (Math.abs(skewness) <= SKEW) return `${name} ${moves}`;
   const tail = `${name} ${many ? "have their" : "has its"} long tail towards ${skewness < 0 ? "loss" : "gain"}`;
   return Math.abs(shiftDb) > SHIFT_DB ? `${tail} and ${moves}` : tail;

@@ -3,6 +3,7 @@ import type { Chance, SpreadRow, SpreadStudy } from "../study/spread.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { dishCoverText } from "./coversText.ts";
 import { coverName, meanings, pathLines } from "./marginText.ts";
+import { carriedText, verdictWords } from "./mechanismText.ts";
 import { warningText } from "./notes.ts";
 import { adviceText, rankingTable } from "./spreadAdvice.ts";
 import { agreementText } from "./spreadAgreement.ts";
@@ -24,6 +25,7 @@ export function spreadText(
     paragraph(howDrawn(study, link)),
     dishCoverText(link),
     weathers.map((weather) => paragraph(sentence(rowsIn(weather), weather), "- ")).join("\n"),
+    wayText(study, link),
     ...weathers.map((weather) =>
       [
         paint("strong", `${capital(weather)}: margin in dB`),
@@ -33,11 +35,11 @@ export function spreadText(
       ].join("\n"),
     ),
     paragraph(
-      "5 %, 95 %: one draw in twenty lies below, one above. close: draws with a margin above 0; keep: with more than " +
-        `the reserve of ${tenth(link.scenario.decision.reserveDb)} dB. takes: bare less covered in the same draws, ` +
-        "median (5 to 95 %). lost: draws that close with bare feeds and not with the cover. *: as the scenario has it.",
+      "5 %, 95 %: one draw in twenty lies below, one above. hold: draws with a margin above 0. takes: bare less covered " +
+        "in the same draws, median (5 to 95 %). lost: draws that hold with bare feeds and not with the cover. *: as the " +
+        "scenario has it. Bars: 5 to 95 %, o the median, | a margin of 0, : the reserve.",
     ),
-    `${paint("strong", "What the spread hangs on, scenario's covers, blunders left out")}\n${rankingTable(study)}`,
+    `${paint("strong", "What the spread hangs on, scenario's covers, blunders left out")}\n${rankingTable(study)}\n${rankingLegend}`,
     adviceText(study),
     agreementText(study, link),
     detail ? `${paint("strong", "What was drawn")}\n${causeTable(study)}` : "",
@@ -47,6 +49,11 @@ export function spreadText(
   ];
   return `${parts.filter((part) => part !== "").join("\n\n")}\n`;
 }
+
+const rankingLegend = paragraph(
+  "share: part of the variance that would go if it were known; rank: rank correlation with the margin, 0 to 1; dB: " +
+    "standard deviation that it makes by itself.",
+);
 
 const leftOut = paragraph(
   "Not drawn: errors of the standards themselves where they state none, multipath fading and ducting, a station off " +
@@ -73,16 +80,27 @@ function sentence(rows: readonly SpreadRow[], weather: string): string {
   const [row] = rows as [SpreadRow];
   const { marginDb, closes } = row;
   const range = `${tenth(marginDb.medianDb)} dB in the middle, ${tenth(marginDb.lowDb)} to ${tenth(marginDb.highDb)} dB in nine draws of ten`;
-  const answer = `${capital(weather)}: ${coverName(row)} closes in ${chance(closes)} of the draws (${range})`;
+  const answer = `${capital(weather)}: ${coverName(row)} ${verdictWords[row.verdict]} and holds in ${chance(closes)} of the draws (${range})`;
   if (row.costDb === undefined) return `${answer}.`;
   const turned = [
     { verb: "loses", hundredth: 100 * row.lost },
     { verb: "wins", hundredth: 100 * row.won },
   ].filter(({ hundredth }) => hundredth >= 0.05);
   const what = turned.map(
-    ({ verb, hundredth }, i) => `${verb} ${countOf(hundredth)}${i === 0 ? " contacts in a hundred" : ""}`,
+    ({ verb, hundredth }, i) => `${verb} ${countOf(hundredth)}${i === 0 ? " of a hundred draws" : ""}`,
   );
-  return `${answer}; against bare feeds the cover ${what.length === 0 ? "changes no answer" : listed(what)}.`;
+  return `${answer}; against bare feeds the cover ${what.length === 0 ? "changes no outcome" : listed(what)}.`;
+}
+
+/** What carries the path, as a budget has it; draws take the best way each. */
+function wayText({ rows }: SpreadStudy, link: Link): string {
+  if (link.ground === undefined)
+    return paragraph("Line of sight is taken: no hill, tree or building in the way.");
+  const first = rows[0]!;
+  const own = rows.filter((row) => coverName(row) === coverName(first));
+  return carriedText(own.map(({ case: one, budget }) => ({ case: one, ...budget })))
+    .map((line) => paragraph(line))
+    .join("\n");
 }
 
 const countOf = (hundredth: number) => hundredth.toFixed(hundredth < 9.95 ? 1 : 0);
@@ -103,8 +121,7 @@ function marginTable(rows: readonly SpreadRow[], { scenario }: Link, paint: Pain
     { head: "5 %", of: ({ marginDb }) => tenth(marginDb.lowDb) },
     { head: "median", of: ({ marginDb }) => tenth(marginDb.medianDb) },
     { head: "95 %", of: ({ marginDb }) => tenth(marginDb.highDb) },
-    { head: "close %", of: ({ closes }) => share(closes.share) },
-    { head: "keep %", of: ({ keepsReserve }) => share(keepsReserve.share) },
+    { head: "hold %", of: ({ closes }) => share(closes.share) },
     { head: "verdict", of: ({ verdict }) => verdict },
     {
       head: "takes",

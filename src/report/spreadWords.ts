@@ -25,7 +25,11 @@ export const matterWords: Readonly<
     name: "water on the covers",
     advice: "see how drops run off a wetted cover, renew a repellent coat, or take another cover",
   },
-  rain: { name: "rain", advice: "read a gauge or the weather radar before you give the path up" },
+  rate: {
+    name: "rain rate",
+    advice: "read a gauge or the weather radar: a forecast is good to a factor of 1.6, a word to 2",
+  },
+  extent: { name: "extent of the rain", advice: "see on the weather radar how much of the path lies in it" },
   air: { name: "gas and fog", advice: "state temperature and humidity" },
   place: { name: "place of the stations", advice: "use more characters of the locator, or coordinates" },
   ground: {
@@ -36,7 +40,10 @@ export const matterWords: Readonly<
   tilt: { name: "tilted polarization", advice: "level the tripods" },
   noise: { name: "receiver's noise", advice: "measure the noise figure, or the step from ground to sky" },
   sky: { name: "what the antenna sees", advice: "measure the step from ground to sky on the site" },
-  operator: { name: "operator's threshold", advice: "practise, or change to a mode that asks for less" },
+  operator: {
+    name: "threshold of the mode",
+    advice: "try it on a known signal, or take a mode that asks for less",
+  },
   blunder: { name: "blunder", advice: "run through relays, sideband and power before you blame the path" },
 };
 

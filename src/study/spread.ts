@@ -33,7 +33,7 @@ export interface SpreadRow {
   /** By the rule of a budget, with the median and the drawn probability in the place of its own. */
   readonly verdict: Verdict;
   /** What the budget says of the same case. */
-  readonly budget: Pick<Budget, "marginDb" | "marginSigmaDb" | "holdProbability" | "verdict">;
+  readonly budget: Pick<Budget, "marginDb" | "marginSigmaDb" | "holdProbability" | "verdict" | "mechanisms">;
   /** Bare mouths less this case, draw by draw; undefined for bare ones. */
   readonly costDb: Range | undefined;
   /** Share of the draws that close with bare mouths and not with these covers, and the other way round. */
@@ -80,7 +80,7 @@ export function spreadOf(link: Link, chosen: readonly Case[], sampling: Sampling
   const rows = chosen.map((one): SpreadRow => {
     const margins = marginsOf.get(keyOf(one))!;
     const bare = marginsOf.get(keyOf(bareOf(one)))!;
-    const { marginDb, marginSigmaDb, holdProbability, verdict } = budgetOf.get(keyOf(one))!;
+    const { marginDb, marginSigmaDb, holdProbability, verdict, mechanisms } = budgetOf.get(keyOf(one))!;
     const closes = chanceOf(margins, 0);
     const range = rangeOf(margins.slice());
     return {
@@ -91,7 +91,7 @@ export function spreadOf(link: Link, chosen: readonly Case[], sampling: Sampling
       closes,
       keepsReserve: chanceOf(margins, decision.reserveDb),
       verdict: verdictOf(range.medianDb, closes.share, decision),
-      budget: { marginDb, marginSigmaDb, holdProbability, verdict },
+      budget: { marginDb, marginSigmaDb, holdProbability, verdict, mechanisms },
       costDb: isBare(one) ? undefined : rangeOf(difference(bare, margins)),
       lost: shareOf(margins.length, (i) => bare[i]! > 0 && margins[i]! <= 0),
       won: shareOf(margins.length, (i) => bare[i]! <= 0 && margins[i]! > 0),

@@ -55,7 +55,7 @@ describe("words of a spread that follow from the figures", () => {
   it("count few draws in plain numbers and claim no more than they hold", () => {
     const one = textOf(scenarioOf(weak(-60)), 1);
     expect(one).toMatch(/: 1 draw, chances good to \d\d points, where 0\.5 were asked for/);
-    expect(one).toMatch(/closes in (all|none) of the draws/);
+    expect(one).toMatch(/holds in (all|none) of the draws/);
     expect(one).not.toMatch(/e\+|over 99\.9 % of|under 0\.1 % of/);
   });
 
