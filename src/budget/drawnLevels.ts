@@ -208,7 +208,7 @@ function operatorLevels({ scenario, modes, doubts }: Link, mode: string): Level[
 }
 
 /** Sum of columns, row by row; nothing where there are none. */
-export function sumOfColumns(sketch: Sketch, parts: readonly Float64Array[]): Float64Array {
+function sumOfColumns(sketch: Sketch, parts: readonly Float64Array[]): Float64Array {
   return column(sketch, (out) => {
     out.fill(0);
     for (const part of parts) for (let i = 0; i < out.length; i++) out[i]! += part[i]!;

@@ -66,7 +66,7 @@ function coverCost(own: CoverLadder, bare: CoverLadder): string {
   const cost = Number(rateFigure(open.zeroMmPerH)) - Number(rateFigure(under.zeroMmPerH));
   if (cost === 0) return ": the cover costs no rain that could be told";
   const figure = Math.abs(cost).toFixed(under.zeroMmPerH < 10 ? 1 : 0);
-  return `: the cover ${cost > 0 ? "costs" : "wins"} ${figure} mm/h of rain`;
+  return `: till nothing is left the cover ${cost > 0 ? "costs" : "wins"} ${figure} mm/h of rain`;
 }
 
 /** What rain on the path, water on the covers and both together take in one rain. */

@@ -108,7 +108,7 @@ describe("the answer", () => {
   it("says how hard it may rain, in every authority's words, and what the cover takes of that", () => {
     expect(answerOf(evenAt(23.4, 34), evenAt(31, 42))).toBe(
       "CW by ear closes up to 23 mm/h (heavy by AMS, UK rain, UK showers and WMO) under film and has nothing left " +
-        "from 34 mm/h on. Bare, it closes up to 31 mm/h and has nothing left from 42 mm/h on: the cover costs 8 " +
+        "from 34 mm/h on. Bare, it closes up to 31 mm/h and has nothing left from 42 mm/h on: till nothing is left the cover costs 8 " +
         "mm/h of rain.",
     );
   });
