@@ -1,4 +1,4 @@
-import { closeSync, existsSync, linkSync, openSync, renameSync, rmSync, writeSync } from "node:fs";
+import { closeSync, linkSync, openSync, renameSync, rmSync, type Stats, statSync, writeSync } from "node:fs";
 import { UserError } from "./terminal.ts";
 
 /** A file that is being written under another name. */
@@ -22,7 +22,11 @@ export function writeWhole(file: string, text: string, force: boolean): void {
 
 /** The same for a file that is written piece by piece. What fails to be written is given up. */
 export function openDraft(file: string, force: boolean): Draft {
-  if (!force && existsSync(file)) throw new UserError(`${file} exists already; --force replaces it`);
+  const old = statusOf(file);
+  if (old?.isDirectory()) throw new UserError(`${file} is a folder, expected the name of a file`);
+  // A rename would put a file in the place of the device or pipe itself.
+  if (old && !old.isFile()) throw new UserError(`${file} is no plain file and cannot be replaced by one`);
+  if (old && !force) throw new UserError(`${file} exists already; --force replaces it`);
   const draft = `${file}.${process.pid}.part`;
   let descriptor: number | undefined;
   const close = () => {
@@ -60,6 +64,24 @@ export function openDraft(file: string, force: boolean): Draft {
     },
     drop,
   };
+}
+
+/** Refuses to write over what is read, which `--force` is not meant for. */
+export function notOver(file: string, inputs: readonly string[]): void {
+  const place = statusOf(file);
+  const same = (input: string) => {
+    const one = statusOf(input);
+    return one !== undefined && one.dev === place?.dev && one.ino === place.ino;
+  };
+  if (inputs.some(same)) throw new UserError(`${file} is one of the files read; it is not replaced`);
+}
+
+function statusOf(file: string): Stats | undefined {
+  try {
+    return statSync(file, { throwIfNoEntry: false });
+  } catch (error) {
+    throw inOurWords(file, error as NodeJS.ErrnoException);
+  }
 }
 
 function inOurWords(file: string, { code, message }: NodeJS.ErrnoException): UserError {

@@ -79,7 +79,7 @@ describe("oilskin new", () => {
     mkdirSync(join(place, "folder"));
     const { status, stdout, stderr } = oilskin(["new", join(place, "folder"), "--force"]);
     expect({ status, stdout }).toEqual({ status: 2, stdout: "" });
-    expect(stderr).toContain("cannot be written");
+    expect(stderr).toContain("is a folder");
     expect(stderr).not.toContain("    at ");
     expect(readdirSync(place)).toEqual(["folder"]);
   });

@@ -1,3 +1,4 @@
+import { execFileSync } from "node:child_process";
 import { mkdirSync, readdirSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { beforeEach, describe, expect, it, vi } from "vitest";
@@ -49,6 +50,14 @@ describe("writing a file whole", () => {
     expect(() => writeWhole(file, "new", false)).toThrow("exists already; --force replaces it");
     expect(readFileSync(file, "utf8")).toBe("theirs");
     expect(readdirSync(folder)).toEqual(["path.yaml"]);
+  });
+
+  it.each([false, true])("puts nothing in the place of a folder or a pipe, force %j", (force) => {
+    execFileSync("mkfifo", [file]);
+    expect(() => openDraft(file, force)).toThrow("is no plain file");
+    expect(readdirSync(folder)).toEqual(["path.yaml"]);
+    expect(() => openDraft(folder, force)).toThrow("is a folder");
+    expect(readdirSync(parent).filter((name) => name.includes(".part"))).toEqual([]);
   });
 
   // FAT answers EPERM to a link, Android EACCES (from memory).
