@@ -153,7 +153,7 @@ export { describeRefusal, type QuantityKind, readQuantity } from "./scenario/qua
 export { type BenchReadings, loadReadings, loadSweeps } from "./scenario/readings.ts";
 export type { FileFault } from "./scenario/readingsFaults.ts";
 export { openRoster, type Roster, type RosterLines, rosterLines } from "./scenario/rosterFile.ts";
-export { type RowFault, type RowForm, rowReader, type Station } from "./scenario/rosterRow.ts";
+export { isIdleRow, type RowFault, type RowForm, rowReader, type Station } from "./scenario/rosterRow.ts";
 export { scenarioJsonSchema } from "./scenario/schema.ts";
 export { TerrainError } from "./scenario/terrain/faults.ts";
 export { openTerrain } from "./scenario/terrain/openTerrain.ts";

@@ -20,7 +20,7 @@ import type { RosterJob, Worked } from "./rosterWork.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { stopOnSignal } from "./stopOnSignal.ts";
 import { paintFor, UserError } from "./terminal.ts";
-import { type Draft, openDraft } from "./wholeFile.ts";
+import { type Draft, notOver, openDraft } from "./wholeFile.ts";
 
 /** Lines of a table from one site, where `--top` does not say another number. */
 const USUAL_TABLE = 2000;
@@ -52,8 +52,8 @@ export const rosterCommand = new Command("roster")
       .choices(["dry", "wet"])
       .preset("dry"),
   )
-  .option("--within <distance>", "only stations as near as this, such as 300km")
-  .option("--beyond <distance>", "only stations as far as this")
+  .option("--within <distance>", "only stations as near as this, not by the squares, such as 300km")
+  .option("--beyond <distance>", "only stations as far as this, not by the squares")
   .option(
     "--towards <headings>",
     "only stations at true headings from one clockwise to another, such as 330..20",
@@ -94,6 +94,9 @@ of them, ${MOST_SORTED} at the most, or those of --top.`,
   )
   .action(async (file: string, stations: string, options: RosterOptions) => {
     if (options.force && options.output === undefined) throw new UserError("--force goes with --output");
+    if (options.output !== undefined) {
+      notOver(options.output, [file, stations, ...(options.sites === undefined ? [] : [options.sites])]);
+    }
     const top = wholeNumber("--top", options.top, 1, MOST_SORTED);
     const asked = wholeNumber("--workers", options.workers, 1, MOST_WORKERS);
     const scenario = await scenarioIn(file);
@@ -172,7 +175,7 @@ async function work(
     const left = kept.map((site, i) => site.seen() - sorted[i]!.length).filter((count) => count > 0);
     if (left.length > 0) {
       told.push(
-        `the table holds the ${most} stations with the most margin, ${left.join(" and ")} more are left out; ` +
+        `the table holds the ${most} stations${plan.sites.length > 1 ? " of each site" : ""} with the most margin, ${left.reduce((sum, count) => sum + count)} more are left out; ` +
           "--top takes another number, --csv and --jsonl have all",
       );
     }

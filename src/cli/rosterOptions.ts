@@ -2,6 +2,7 @@ import { dirname } from "node:path";
 import {
   declination,
   driest,
+  isIdleRow,
   mostDemandingFirst,
   openRoster,
   openTerrain,
@@ -65,6 +66,14 @@ export async function planOf(
   const dry = options.dry ?? driest(scenario);
   const wet = options.wet ?? wettest(scenario);
   if (wet === undefined) notes.push("the scenario has no weather with rain: there is no wet half");
+  if (options.closes === "wet" && (wet === undefined || wet === dry)) {
+    throw new UserError("--closes wet: there is no wet weather beside the dry one; --wet names it");
+  }
+  const withinKm = quantityOption("--within", options.within, "distanceKm", [0, 20_000], "km");
+  const beyondKm = quantityOption("--beyond", options.beyond, "distanceKm", [0, 20_000], "km");
+  if (withinKm !== undefined && beyondKm !== undefined && withinKm < beyondKm) {
+    throw new UserError(`--within ${options.within} and --beyond ${options.beyond} leave no distance`);
+  }
   const own = options.cover && coversAsked[0];
   const pattern = await withTerrainOf(scenario, folder, notes);
   const asked =
@@ -84,8 +93,8 @@ export async function planOf(
       bothWays: options.oneWay === undefined,
       filter: {
         closesIn: options.closes === undefined ? undefined : options.closes === "dry" ? 0 : 1,
-        withinKm: quantityOption("--within", options.within, "distanceKm", [0, 20_000], "km"),
-        beyondKm: quantityOption("--beyond", options.beyond, "distanceKm", [0, 20_000], "km"),
+        withinKm,
+        beyondKm,
         towardsDeg: sectorOf(options.towards),
       },
     },
@@ -141,7 +150,7 @@ async function listedSites(file: string, heightM: number): Promise<Pick<RosterSi
   const wrong = [];
   for await (const { lines, firstLine, fault } of rosterLines(roster, MOST_SITES + 1)) {
     for (const [i, text] of lines.entries()) {
-      if (text.startsWith("#") || text.trim() === "") continue;
+      if (isIdleRow(text, roster.separator)) continue;
       const { station, faults: unread } = read(text, firstLine + i);
       if (station)
         found.push({ name: station.name, site: { ...station, heightM: station.heightM ?? heightM } });

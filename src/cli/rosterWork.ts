@@ -1,4 +1,5 @@
 import {
+  isIdleRow,
   keeps,
   type Ranked,
   type RosterLine,
@@ -78,7 +79,7 @@ export async function rosterWork(job: RosterJob): Promise<(rows: RosterLines) =>
     const pieces: Buffer[] = [];
     let end = 0;
     for (const [i, text] of texts.entries()) {
-      if (text.startsWith("#") || text.trim() === "") continue;
+      if (isIdleRow(text, form.separator)) continue;
       const line = firstLine + i;
       const { station, faults: found } = read(text, line);
       if (station === undefined) {

@@ -58,6 +58,11 @@ export function cellsOf(line: string, separator: string): string[] {
   return cells.map((cell) => cell.trim());
 }
 
+/** Whether a line holds no station: empty, a remark, or cells without anything in them, as spreadsheets leave below. */
+export function isIdleRow(line: string, separator: string): boolean {
+  return line.startsWith("#") || line.replaceAll(separator, "").trim() === "";
+}
+
 /** Character of the line at which a cell begins, from 1. */
 export function columnAt(line: string, separator: string, cell: number): number {
   let quoted = false;

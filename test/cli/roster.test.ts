@@ -215,6 +215,15 @@ describe("a faulty roster", () => {
     expect(stderr).toContain("5 faults; 4 rows left out, 2 rows done");
   });
 
+  it.each([",", ";", "\t"])("passes over rows without anything in them, between %j", (separator) => {
+    const rows = ["name,locator,note", "A,IO84aa,", ",,", "  , ,", "B,IO84ab,", ",,"];
+    const text = rows.join("\r\n").replaceAll(",", separator);
+    const { status, stdout } = roster(fileOf("blank.csv", text), "--jsonl");
+    expect([status, stdout.trimEnd().split("\n").length]).toEqual([0, 2]);
+    const sites = fileOf("blank-sites.csv", text);
+    expect(roster(stations, "--sites", sites, "--jsonl").status).toBe(0);
+  });
+
   it("finds a station written twice wherever it stands, and the first stands", () => {
     const rows = manyRows(1000);
     const file = fileOf("twice.csv", rows + rows.split("\n")[1]!.replace("S0", "s0"));
@@ -252,6 +261,14 @@ describe("a faulty roster", () => {
     [[stations, "--towards", "40-90"], /--towards: read "40-90", expected two true headings/],
     [[stations, "--within", "300"], /--within: read "300".*write 300 km/],
     [[stations, "--top", "0"], /--top: read "0", expected a whole number/],
+    [
+      [stations, "--within", "200km", "--beyond", "300km"],
+      /--within 200km and --beyond 300km leave no distance/,
+    ],
+    [
+      [stations, "--closes", "wet", "--wet", "dry"],
+      /--closes wet: there is no wet weather beside the dry one/,
+    ],
     [[stations, "--workers", "many"], /--workers: read "many"/],
     [[stations, "--dry", "drj"], /no weather "drj".*did you mean dry/],
     [[stations, "--mode", "cww"], /no mode "cww"/],
@@ -286,6 +303,29 @@ describe("where a roster goes", () => {
     expect(roster(stations, "--csv", "--output", file, "--force").status).toBe(0);
     expect(readFileSync(file, "utf8")).toBe(text);
     expect(readdirSync(folder).filter((name) => name.includes(".part"))).toEqual([]);
+  });
+
+  it.each([0, 1, 2])("is never one of the files read, forced or not: %i", (which) => {
+    const inputs = [
+      fileOf("own.yaml", readFileSync(demo, "utf8")),
+      fileOf("club.csv", "name,locator\nA,IO84aa\n"),
+      fileOf("hills.csv", "name,locator\nHill,IO83aa\n"),
+    ] as const;
+    const [own, club, hills] = inputs;
+    const before = readFileSync(inputs[which]!, "utf8");
+    const output = `${folder}/.${inputs[which]!.slice(folder.length)}`; // another spelling of it
+    const { status, stderr } = oilskin([
+      "roster",
+      own,
+      club,
+      "--sites",
+      hills,
+      "--output",
+      output,
+      "--force",
+    ]);
+    expect([status, stderr]).toEqual([2, `${output} is one of the files read; it is not replaced\n`]);
+    expect(readFileSync(inputs[which]!, "utf8")).toBe(before);
   });
 
   it("may be a pipe that closes early", () => {
