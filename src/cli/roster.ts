@@ -52,8 +52,8 @@ export const rosterCommand = new Command("roster")
       .choices(["dry", "wet"])
       .preset("dry"),
   )
-  .option("--within <distance>", "only stations as near as this, not by the squares, such as 300km")
-  .option("--beyond <distance>", "only stations as far as this, not by the squares")
+  .option("--within <distance>", "only stations at most so far (true distance), such as 300km")
+  .option("--beyond <distance>", "only stations at least so far (true distance)")
   .option(
     "--towards <headings>",
     "only stations at true headings from one clockwise to another, such as 330..20",

@@ -90,7 +90,7 @@ function siteText(site: RosterSite, lines: readonly RosterLine[], table: RosterT
   const compass =
     declinationDeg === undefined
       ? "no magnetic headings"
-      : `magnetic heading = true ${shift(-declinationDeg)} deg on ${date}`;
+      : `magnetic heading = ${shifted(-declinationDeg)} on ${date}`;
   const count = `${lines.length === 1 ? "1 station" : `${lines.length} stations`}`;
   const title = paint("strong", paragraph(`From ${site.name}: ${count}, by ${sort}; ${compass}`));
   return lines.length === 0 ? title : `${title}\n${tableOf(lines, table, paint)}`;
@@ -121,7 +121,7 @@ function tableOf(lines: readonly RosterLine[], { plan }: RosterTable, paint: Pai
       ],
       [
         ...["station", "km", "true", ...(magnetic ? ["magn"] : []), "way", ...halves],
-        ...(bothWays ? [""] : []),
+        ...(bothWays ? ["weak"] : []),
         ...(covered ? ["cover"] : []),
         ...halves,
       ].map((text) => cell(text)),
@@ -138,7 +138,7 @@ function tableOf(lines: readonly RosterLine[], { plan }: RosterTable, paint: Pai
           ...(magnetic ? [cell(wholeDegrees(line.magneticDeg))] : []),
           cell(mark + [...new Set(weathers.map(({ way }) => letters[way]))].join("/")),
           ...weathers.map(({ marginDb }) => cell(tenth(marginDb))),
-          ...(bothWays ? [cell(last.weaker === undefined ? "" : last.weaker === "out" ? ">" : "<")] : []),
+          ...(bothWays ? [cell(last.weaker ?? "")] : []),
           ...(covered ? [cell(tenth(last.costDb))] : []),
           ...weathers.map((one) => bestCell(one, plan, paint)),
         ];
@@ -163,9 +163,10 @@ function wholeDegrees(deg: number | undefined): string {
   return deg === undefined ? "-" : String(Math.round(deg) % 360);
 }
 
-/** `+ 1.2` or `- 1.2`. */
-function shift(deg: number): string {
-  return `${deg < 0 ? "-" : "+"} ${tenth(Math.abs(deg))}`;
+/** `true + 1.2 deg`, `true - 1.2 deg`, or what is left where they agree. */
+function shifted(deg: number): string {
+  const size = tenth(Math.abs(deg));
+  return size === "0.0" ? "the true one" : `true ${deg < 0 ? "-" : "+"} ${size} deg`;
 }
 
 function shortened(text: string, width: number): string {
@@ -184,16 +185,21 @@ function legend({ plan, lines }: RosterTable): string {
   const ways = (Object.keys(letters) as MechanismName[]).filter((way) =>
     weathers.some((one) => one.way === way),
   );
+  const two = all.some((line) => new Set(line.weathers.map(({ way }) => way)).size > 1);
   const [dry, wet] = plan.weathers;
   const sentences = [
     "km: for scoring, between the centres of the squares (common practice, no source; rules differ).",
-    ...(ways.length > 0 ? [`Way: ${listed(ways.map((way) => `${letters[way]} ${letterWords[way]}`))}.`] : []),
+    ...(ways.length > 0
+      ? [
+          `Way: ${listed(ways.map((way) => `${letters[way]} ${letterWords[way]}`))}${two ? "; two letters, dry/wet" : ""}.`,
+        ]
+      : []),
     ...(all.some(({ headingErrorDeg }) => headingErrorDeg >= UNCERTAIN_DEG)
       ? [`~: a short locator leaves the heading open by ${UNCERTAIN_DEG} deg or more.`]
       : []),
     ...(weathers.some(({ weaker }) => weaker !== undefined)
       ? [
-          `Weaker way${wet === undefined ? "" : " in the wet"}: > out, I am heard worse; < back, I hear worse.`,
+          `Weak: the weaker way${wet === undefined ? "" : " in the wet"} (out, I am heard worse; back, I hear worse; blank, alike).`,
         ]
       : []),
     ...(plan.covers[0] !== "bare" && plan.covers.includes("bare")

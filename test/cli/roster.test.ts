@@ -107,6 +107,9 @@ describe("oilskin roster", () => {
     const rows = csvParse(stdout).filter(({ cover, name }) => cover === "film" && name === "Plover Edge");
     expect(rows.map(({ from }) => from)).toEqual(["Heron Scar", "Gannet side", "Far side"]);
     expect(new Set(rows.map((row) => row["distance_km"])).size).toBe(3);
+    expect(flowing(roster(stations, "--sites", sites, "--top", "4").stdout)).toContain(
+      "the table holds the 4 stations of each site with the most margin, 18 more are left out",
+    );
   });
 
   it("keeps what its filters ask for", () => {

@@ -102,7 +102,7 @@ describe("the table of a roster", () => {
       "S/R",
       "20.0",
       "-9.5",
-      "<",
+      "back",
       "4.5",
       "ssb",
       "(cw)*",
@@ -111,12 +111,21 @@ describe("the table of a roster", () => {
 
   it("says what its letters mean, and no others", () => {
     const text = flowing(textOf([row]));
-    expect(text).toContain("Way: S in sight and R rain scatter.");
+    expect(text).toContain("Way: S in sight and R rain scatter; two letters, dry/wet.");
     expect(text).toContain("in brackets, thin");
     expect(text).toContain("*: a bare mouth would do better.");
     expect(text).toContain("magnetic heading = true + 1.3 deg on 2026-07-01"); // west of north is added
     expect(text).not.toContain("~:");
     expect(text).not.toContain("tiles");
+  });
+
+  it("says that magnetic headings are the true ones where a compass shows no difference", () => {
+    const at = (declinationDeg: number) =>
+      flowing(textOf([row], { plan: { ...plan, sites: [{ ...plan.sites[0]!, declinationDeg }] } }));
+    for (const small of [0.04, -0.04, 0]) {
+      expect(at(small)).toContain("magnetic heading = the true one on 2026-07-01");
+    }
+    expect(at(0.06)).toContain("magnetic heading = true - 0.1 deg on 2026-07-01");
   });
 
   it("marks a heading that a short locator leaves open, and terrain that is not whole", () => {
@@ -165,7 +174,7 @@ describe("the table of a roster", () => {
       "63.1",
       "S",
       "21.0",
-      ">",
+      "out",
       "ssb",
     ]);
     expect(flowing(text)).toContain("no magnetic headings");
