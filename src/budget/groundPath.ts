@@ -2,7 +2,7 @@ import { type DeltaBullingtonLoss, deltaBullingtonLoss } from "../path/deltaBull
 import { effectiveRadiusKm } from "../path/horizon.ts";
 import { type Obstacle, obstacles, type Sight } from "../path/obstacles.ts";
 import { analysePath, type PathAnalysis } from "../path/pathAnalysis.ts";
-import { type Profile, pathLengthKm, smoothSurface } from "../path/profile.ts";
+import { type Profile, pathLengthKm, smoothSurface, withoutWideSteps } from "../path/profile.ts";
 import type { LinearPolarization } from "../path/smoothEarth.ts";
 import type { Polarization, Scenario, Site } from "../scenario/types.ts";
 import { type PathSettings, pathSettings } from "./pathSettings.ts";
@@ -42,7 +42,7 @@ export function groundPath(
   geometry: PathGeometry,
 ): GroundPath {
   const settings = pathSettings(path);
-  const profile = path.profile ?? smoothEarth(geometry);
+  const profile = path.profile ? withoutWideSteps(path.profile) : smoothEarth(geometry);
   const groundM = [profile.heightsM[0]!, profile.heightsM[profile.heightsM.length - 1]!] as const;
   const over = ({ groundM: siteM, heightM }: Site, underM: number) =>
     Math.max(LOWEST_ANTENNA_M, siteM + heightM - underM);

@@ -174,6 +174,21 @@ describe("oilskin roster", () => {
     expect(flowing(stdout)).toContain("trees of the scenario's path are left out");
   });
 
+  it("sees the bulge of the Earth under a gap of the tiles", () => {
+    mkdirSync(join(folder, "shore"));
+    writeTile(join(folder, "shore"), "N53W004.hgt", 1201, () => 0);
+    const shore = changedDemo(folder, "shore.yaml", "\n  from: {", "\n  terrain: shore\n  from: {");
+    // A smooth Earth with no tiles and the same Earth with a gap of 300 km are the same path.
+    const far = fileOf("far.csv", "name,locator,ground\nFar,JO02pp11,0 m\n");
+    const [whole, holed] = [demo, shore].map(
+      (own) =>
+        csvParse(oilskin(["roster", own, far, "--csv", "--cover", "film", "--mode", "ssb"]).stdout)[0]!,
+    );
+    expect(holed!["terrain"]).toBe("gaps");
+    expect([holed!["dry_way"], whole!["dry_way"]]).toEqual(["troposcatter", "troposcatter"]);
+    expect(Math.abs(Number(holed!["dry_margin_db"]) - Number(whole!["dry_margin_db"]))).toBeLessThan(1);
+  });
+
   it("counts the terrain of tiles, the same in every thread", () => {
     mkdirSync(join(folder, "dem"));
     writeTile(join(folder, "dem"), "N53W004.hgt", 1201, (row) => (Math.abs(row - 600) <= 2 ? 900 : 100));

@@ -4,6 +4,7 @@ import {
   type Profile,
   requireProfile,
   smoothSurface,
+  withoutWideSteps,
   type Zone,
   zoneLengths,
 } from "../../src/path/profile.ts";
@@ -27,6 +28,26 @@ describe("a profile is refused", () => {
   });
   it("not when whole", () => {
     expect(() => requireProfile({ ...level, distancesKm: new Float64Array([0, 1, 2, 3]) })).not.toThrow();
+  });
+});
+
+describe("wide steps of a profile", () => {
+  it("are filled straight, without trees, in the zone of the nearer end", () => {
+    const profile: Profile = {
+      distancesKm: [0, 0.5, 4.5, 5],
+      heightsM: [10, 20, 60, 0],
+      coverM: [1, 2, 3, 4],
+      zones: ["inland", "sea", "coastal", "inland"],
+    };
+    expect(withoutWideSteps(profile)).toEqual({
+      distancesKm: [0, 0.5, 1.5, 2.5, 3.5, 4.5, 5],
+      heightsM: [10, 20, 30, 40, 50, 60, 0],
+      coverM: [1, 2, 0, 0, 0, 3, 4],
+      zones: ["inland", "sea", "sea", "coastal", "coastal", "coastal", "inland"],
+    });
+  });
+  it("are none where the points stand close", () => {
+    expect(withoutWideSteps(level)).toBe(level);
   });
 });
 
