@@ -118,7 +118,13 @@ of them, ${MOST_SORTED} at the most, or those of --top.`,
       const outcome = await work(
         job,
         roster,
-        { ...options, top, threads: threadsFor(roster, plan, asked), notes, date },
+        {
+          ...options,
+          top,
+          threads: threadsFor(roster, plan, asked),
+          notes: [...notes, ...columnNotes(roster)],
+          date,
+        },
         output,
       );
       if (outcome.interrupted === undefined) output?.keep();
@@ -188,6 +194,13 @@ async function work(
     for (const note of told) process.stderr.write(`note: ${note}\n`);
   }
   return outcome;
+}
+
+/** Columns of a list that say nothing here. */
+function columnNotes({ passedOver }: Roster): string[] {
+  const names = passedOver.map((name) => (name === "" ? "one without a name" : name));
+  if (names.length === 0) return [];
+  return [`column${names.length === 1 ? "" : "s"} passed over: ${[...new Set(names)].join(", ")}`];
 }
 
 /** What was taken for what the rows do not say. */

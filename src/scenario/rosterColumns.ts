@@ -69,26 +69,37 @@ export interface HeaderFault {
 
 const withUnits: readonly RosterColumn[] = ["ground", "height", "power", "dish", "noise figure"];
 
-/** The columns that the header of a roster names, or all that is wrong with it. */
+/**
+ * The columns that the header of a roster names, or all that is wrong with it. A club's list has columns of its own
+ * beside, which are passed over; one that is nearly a known word is a slip.
+ */
 export function readRosterHeader(
   cells: readonly string[],
   kind: RosterKind,
-): { readonly columns: RosterCells; readonly faults: readonly HeaderFault[] } {
+): {
+  readonly columns: RosterCells;
+  /** Columns that nothing here knows, as typed. */
+  readonly passedOver: readonly string[];
+  readonly faults: readonly HeaderFault[];
+} {
   const known = kind === "sites" ? siteColumns : rosterColumns;
   const expected = `columns name, locator (or latitude and longitude), ${listed(known.slice(4))}`;
   const read = cells.map((text) => columnOf(text));
   if (!read.some(({ column }) => column !== undefined)) {
     const first = shown(cells.join(","));
     const message = `no header: the first row reads ${first}, expected ${expected}`;
-    return { columns: {}, faults: [{ cell: 0, message }] };
+    return { columns: {}, passedOver: [], faults: [{ cell: 0, message }] };
   }
   const columns: RosterCells = {};
   const faults: HeaderFault[] = [];
+  const passedOver: string[] = [];
   for (const [cell, { column, name, unit }] of read.entries()) {
     const fault = (message: string) => faults.push({ cell, message });
     if (name === "" && cell === cells.length - 1) continue; // a separator at the end of each line
-    if (column === undefined || !known.includes(column)) {
-      fault(`unknown column ${shown(cells[cell])}, expected ${expected}${didYouMean(name, known)}`);
+    const hint = didYouMean(name, known);
+    if (column === undefined && hint === "") passedOver.push(cells[cell]!.trim());
+    else if (column === undefined || !known.includes(column)) {
+      fault(`unknown column ${shown(cells[cell])}, expected ${expected}${hint}`);
     } else if (columns[column]) fault(`the column ${column} twice`);
     else columns[column] = { cell, unit };
   }
@@ -98,7 +109,7 @@ export function readRosterHeader(
   if (faults.length === 0 && !place) {
     faults.push({ cell: 0, message: `no column locator, nor latitude and longitude, expected ${expected}` });
   }
-  return { columns, faults };
+  return { columns, passedOver, faults };
 }
 
 /** `Ground [m]`, `ground_m`, `ground-height (m)`: the column, and the unit where one that is known stands behind it. */

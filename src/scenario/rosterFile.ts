@@ -8,11 +8,16 @@ import { visible } from "./wording.ts";
 /** Longest stretch without the end of a line before reading stops [characters]. */
 const LONGEST_LINE = 1_000_000;
 
+/** What a spreadsheet may write above its header to say how cells are parted. */
+const SEPARATOR_LINE = /^"?sep=.?"?\s*$/i;
+
 /** A roster whose header has been read. */
 export interface Roster {
   readonly path: string;
   readonly columns: RosterCells;
   readonly separator: string;
+  /** Columns that nothing here knows. */
+  readonly passedOver: readonly string[];
   readonly headerLine: number;
   readonly bytes: number;
 }
@@ -42,13 +47,13 @@ export function openRoster(path: string, kind: RosterKind): OpenedRoster {
     if (!status.isFile()) return fault(1, `is no plain file, expected a CSV file of ${kind}`);
     const lines = headLines(path);
     if (lines.some((line) => line.includes("\0"))) return fault(1, "is a binary file, expected CSV in UTF-8");
-    const index = lines.findIndex((line) => !isIdle(line));
+    const index = lines.findIndex((line) => !isIdle(line) && !SEPARATOR_LINE.test(line));
     if (index < 0) return fault(1, `the file is empty, expected a header and ${kind} below it`);
     const header = lines[index]!;
     const separator = separatorOf(header);
-    const { columns, faults } = readRosterHeader(cellsOf(header, separator), kind);
+    const { columns, passedOver, faults } = readRosterHeader(cellsOf(header, separator), kind);
     if (faults.length === 0) {
-      return { roster: { path, columns, separator, headerLine: index + 1, bytes: status.size } };
+      return { roster: { path, columns, separator, passedOver, headerLine: index + 1, bytes: status.size } };
     }
     const placed = faults.map(({ cell, message }) => {
       const column = columnAt(header, separator, cell);

@@ -34,6 +34,11 @@ describe("the lines of a roster", () => {
     expect(found.map(({ share }) => share)).toEqual([29 / 30, 1]); // of 30 bytes, the line behind not counted
   });
 
+  it("begin below the line in which a spreadsheet names its separator", async () => {
+    const found = await readAll("sep=;\r\nname;locator\r\na;IO84aa\r\n");
+    expect(found).toEqual([expect.objectContaining({ firstLine: 3, lines: ["a;IO84aa"] })]);
+  });
+
   it.each([
     ["\n", ""],
     ["\r\n", ""],

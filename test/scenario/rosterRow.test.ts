@@ -60,6 +60,13 @@ describe("the header of a roster", () => {
     expect(headed(text).faults.map((fault) => fault.message)).toEqual([expect.stringMatching(message)]);
   });
 
+  it("may hold columns of a list's own, which are passed over", () => {
+    const { columns, passedOver, faults } = headed("No.,name,E-mail,locator,Joined,");
+    expect(faults).toEqual([]);
+    expect(passedOver).toEqual(["No.", "E-mail", "Joined"]);
+    expect(columns).toEqual({ name: { cell: 1, unit: "" }, locator: { cell: 3, unit: "" } });
+  });
+
   it("of own sites knows no dish", () => {
     expect(headed("name,locator,ground", "sites").faults).toEqual([]);
     expect(headed("name,locator,dish", "sites").faults).toHaveLength(1);
