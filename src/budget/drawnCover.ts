@@ -48,14 +48,6 @@ const dishEntry: Readonly<Record<CoverPart, string>> = {
   planeWave: ".none",
 };
 
-/**
- * Causes of an end's covers; what no cover of the study has is not drawn.
- *
- * @param mouths    all mouths of the end that the study looks at
- * @param over      the states of a cover over its dish, none where there is none
- * @param other     the other end's: the water of both hangs together
- * @param oneBatch  true where the sheets of both ends are one cover of the scenario, so that they do too
- */
 /** What a reading is off by [dB], from its standard normal deviates: normally, or as the scenario says that it scatters. */
 export function readingOff(
   sketch: Sketch,
@@ -78,6 +70,14 @@ export function readingOff(
   });
 }
 
+/**
+ * Causes of an end's covers; what no cover of the study has is not drawn.
+ *
+ * @param mouths    all mouths of the end that the study looks at
+ * @param over      the states of a cover over its dish, none where there is none
+ * @param other     the other end's: the water of both hangs together
+ * @param oneBatch  true where the sheets of both ends are one cover of the scenario, so that they do too
+ */
 export function drawnCover(
   sketch: Sketch,
   { doubts, scenario: { spread } }: Link,

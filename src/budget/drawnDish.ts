@@ -1,9 +1,10 @@
+import { NEPERS_PER_DB } from "../numeric/decibels.ts";
 import type { EndName } from "../scenario/types.ts";
 import { column, logSpread, type Sketch } from "./causes.ts";
 import { type DrawnCover, readingOff } from "./drawnCover.ts";
 import { addBent } from "./drawnMouth.ts";
 import { atRate } from "./drawnRain.ts";
-import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
+import type { DrawnWeather } from "./drawnWeather.ts";
 import type { DishCoverState, Link } from "./types.ts";
 
 /** A cover over the whole dish in a block of draws; undefined where there is none, or where it is known. */
@@ -57,7 +58,10 @@ export function drawnDish(
     nominal,
     passed: column(sketch, (out) => {
       for (let i = 0; i < out.length; i++) {
-        out[i] = Math.min(nominal.passed + nominal.heated, nominal.passed * Math.exp(-NEPERS * excessDb[i]!));
+        out[i] = Math.min(
+          nominal.passed + nominal.heated,
+          nominal.passed * Math.exp(-NEPERS_PER_DB * excessDb[i]!),
+        );
       }
     }),
   };

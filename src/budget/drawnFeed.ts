@@ -1,3 +1,4 @@
+import { NEPERS_PER_DB } from "../numeric/decibels.ts";
 import type { EndName } from "../scenario/types.ts";
 import {
   type Cause,
@@ -10,7 +11,6 @@ import {
   valuesOf,
 } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
-import { NEPERS } from "./drawnWeather.ts";
 import type { Link } from "./types.ts";
 
 /** Match of the bare feed in a block of draws. */
@@ -19,7 +19,6 @@ export interface DrawnFeed {
   /** Reflection over that of the scenario. */
   readonly gammaRatio: Float64Array;
   readonly cosine: Float64Array;
-  readonly nominalDb: number;
 }
 
 /**
@@ -69,19 +68,19 @@ export function drawnFeed(
   const values = valuesOf(sketch, returnLossDb, cause(end).scatter, uniforms);
   const gammaRatio = column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      out[i] = Math.exp((NEPERS / 2) * (returnLossDb - Math.max(LEAST_RETURN_LOSS_DB, values[i]!)));
+      out[i] = Math.exp((NEPERS_PER_DB / 2) * (returnLossDb - Math.max(LEAST_RETURN_LOSS_DB, values[i]!)));
     }
   });
-  const gamma2 = Math.exp(-NEPERS * returnLossDb);
+  const gamma2 = Math.exp(-NEPERS_PER_DB * returnLossDb);
   return {
     gammaRatio,
     mismatchDb: column(sketch, (out) => {
-      for (let i = 0; i < out.length; i++) out[i] = -Math.log(1 - gamma2 * gammaRatio[i]! ** 2) / NEPERS;
+      for (let i = 0; i < out.length; i++)
+        out[i] = -Math.log(1 - gamma2 * gammaRatio[i]! ** 2) / NEPERS_PER_DB;
     }),
     cosine: column(sketch, (out) => {
       for (let i = 0; i < out.length; i++) out[i] = Math.cos(2 * Math.PI * phases[i]!);
     }),
-    nominalDb: -Math.log(1 - gamma2) / NEPERS,
   };
 }
 

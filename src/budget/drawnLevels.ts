@@ -111,7 +111,7 @@ function lossLevel(entry: Entry, matter: Matter, end: EndName, input?: Uncertain
 }
 
 /** A cause out of an entry: it scatters as its input is stated to, else normally with the entry's deviation. */
-export function causeOf(
+function causeOf(
   { id, label, sigma }: Entry,
   matter: Matter,
   end: EndName | undefined,

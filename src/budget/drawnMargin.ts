@@ -1,9 +1,10 @@
 import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
+import { NEPERS_PER_DB } from "../numeric/decibels.ts";
 import { column, type Sketch } from "./causes.ts";
 import type { DrawnDish } from "./drawnDish.ts";
 import type { DrawnMouth } from "./drawnMouth.ts";
 import type { DrawnReceiver } from "./drawnReceiver.ts";
-import { type DrawnWeather, NEPERS } from "./drawnWeather.ts";
+import type { DrawnWeather } from "./drawnWeather.ts";
 import type { Budget } from "./types.ts";
 
 /** Everything that a case's margin is made of, in a block of draws. */
@@ -32,11 +33,11 @@ export function marginColumn(sketch: Sketch, budget: Budget, parts: DrawnParts):
     sent.nominal.heatDb +
     heard.nominal.mismatchDb +
     heard.nominal.heatDb +
-    Math.log(budget.systemTemperatureK) / NEPERS;
+    Math.log(budget.systemTemperatureK) / NEPERS_PER_DB;
   return column(sketch, (out) => {
     for (let i = 0; i < out.length; i++) {
-      const raw = Math.exp(-NEPERS * heard.mismatchDb[i]!) / heard.beat[i]!;
-      const warm = Math.exp(-NEPERS * heard.heatDb[i]!);
+      const raw = Math.exp(-NEPERS_PER_DB * heard.mismatchDb[i]!) / heard.beat[i]!;
+      const warm = Math.exp(-NEPERS_PER_DB * heard.heatDb[i]!);
       const matched = Math.min(1, raw);
       const passed = matched * Math.min(1, warm);
       const through = overPassed === undefined ? over.passed : overPassed[i]!;
@@ -50,7 +51,7 @@ export function marginColumn(sketch: Sketch, budget: Budget, parts: DrawnParts):
       let margin = nominalDb + common[i]! + level[i]! - sent.mismatchDb[i]! - sent.heatDb[i]!;
       if (overSender.excessDb !== undefined) margin -= overSender.excessDb[i]!;
       if (overReceiver.excessDb !== undefined) margin -= overReceiver.excessDb[i]!;
-      out[i] = margin + Math.log(ratio) / NEPERS;
+      out[i] = margin + Math.log(ratio) / NEPERS_PER_DB;
     }
   });
 }

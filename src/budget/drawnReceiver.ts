@@ -1,7 +1,7 @@
 import { REFERENCE_TEMPERATURE_K } from "../numeric/constants.ts";
+import { NEPERS_PER_DB } from "../numeric/decibels.ts";
 import { column, type Sketch, STILL, uniformsOf, valuesOf } from "./causes.ts";
 import { isStated } from "./drawnLevels.ts";
-import { NEPERS } from "./drawnWeather.ts";
 import { LABEL_NOISE_FIGURE_SIGMA_DB } from "./noiseSide.ts";
 import type { Link } from "./types.ts";
 
@@ -38,11 +38,11 @@ export function drawnReceiver(sketch: Sketch, { scenario }: Link, lineLossDb: Fl
   return {
     receiverK: column(sketch, (out) => {
       for (let i = 0; i < out.length; i++) {
-        out[i] = REFERENCE_TEMPERATURE_K * (Math.exp(NEPERS * Math.max(0, values[i]!)) - 1);
+        out[i] = REFERENCE_TEMPERATURE_K * (Math.exp(NEPERS_PER_DB * Math.max(0, values[i]!)) - 1);
       }
     }),
     linePassed: column(sketch, (out) => {
-      for (let i = 0; i < out.length; i++) out[i] = Math.exp(-NEPERS * lineLossDb[i]!);
+      for (let i = 0; i < out.length; i++) out[i] = Math.exp(-NEPERS_PER_DB * lineLossDb[i]!);
     }),
   };
 }

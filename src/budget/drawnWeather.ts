@@ -1,3 +1,4 @@
+import { NEPERS_PER_DB } from "../numeric/decibels.ts";
 import { levelBeamDefault, MEDIUM_K } from "../receiver/antennaTemperature.ts";
 import {
   type Cause,
@@ -14,9 +15,6 @@ import { isStated } from "./drawnLevels.ts";
 import { type DrawnRain, drawnRain, rainLossOf } from "./drawnRain.ts";
 import { wayLevel } from "./drawnWays.ts";
 import type { Link } from "./types.ts";
-
-/** Nepers of power in a dB. */
-export const NEPERS = Math.LN10 / 10;
 
 /** One weather in a block of draws. */
 export interface DrawnWeather {
@@ -57,7 +55,7 @@ export function drawnWeather(sketch: Sketch, link: Link, ends: EndsInUse, name: 
     if (rainDb + fogDb === 0) out.set(clear);
     else {
       for (let i = 0; i < out.length; i++) {
-        const passed = Math.exp(-NEPERS * (rainLoss[i]! + fogDb * fogTimes[i]!));
+        const passed = Math.exp(-NEPERS_PER_DB * (rainLoss[i]! + fogDb * fogTimes[i]!));
         out[i] = MEDIUM_K + (clear[i]! - MEDIUM_K) * passed;
       }
     }

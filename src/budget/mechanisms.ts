@@ -54,7 +54,7 @@ const lineOfSight: Omit<Mechanism, "lossDb"> = {
  * @param transmitter  end with the feed of the case: narrow beams lose gain to scatter
  */
 export function mechanismsOf(
-  { scenario, path, ground }: Pick<Link, "scenario" | "path" | "ground">,
+  { scenario, path, ground, doubts }: Pick<Link, "scenario" | "path" | "ground" | "doubts">,
   weather: PreparedWeather,
   transmitter: PreparedEnd,
   receiver: PreparedEnd,
@@ -66,7 +66,6 @@ export function mechanismsOf(
     lossDb: freeSpaceDb + mechanism.excessDb,
   });
   if (ground === undefined) return [overAll(lineOfSight)];
-  const doubts = doubtsOf(scenario);
   return [
     alongGround(ground, doubts),
     ...troposcatter(ground, doubts, freeSpaceDb, transmitter, receiver),

@@ -7,6 +7,7 @@ import { doubtsOf } from "./doubts.ts";
 import { type Entry, gainEntry, lossEntry } from "./entry.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
 import { countedGround } from "./groundPath.ts";
+import { mapValues } from "./mapValues.ts";
 import { foliageEntries, foliageWarnings } from "./mechanisms.ts";
 import { isNothing, mouthUnder } from "./mouth.ts";
 import type { Link, PathGeometry, PreparedEnd, PreparedWeather, Warning, Wetness } from "./types.ts";
@@ -178,11 +179,4 @@ export function aimWarnings(
     });
   }
   return warnings;
-}
-
-function mapValues<T, U>(
-  group: Readonly<Record<string, T>>,
-  f: (value: T, name: string) => U,
-): Record<string, U> {
-  return Object.fromEntries(Object.entries(group).map(([name, value]) => [name, f(value, name)]));
 }

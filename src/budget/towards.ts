@@ -5,6 +5,7 @@ import { prepareWeather } from "./air.ts";
 import { endHeading } from "./antennaEntries.ts";
 import { geometryOf, geometryWarnings } from "./geometry.ts";
 import { countedGround } from "./groundPath.ts";
+import { mapValues } from "./mapValues.ts";
 import { foliageEntries, foliageWarnings } from "./mechanisms.ts";
 import { aimWarnings, powerEntry, prepare, prepareEnd, wetnessAt } from "./prepare.ts";
 import { startsFromPathRain } from "./publishedWater.ts";
@@ -217,13 +218,4 @@ function mouthsInRain(
     mapValues(weathers, (weather) => mouthUnder[name]!(wetnessAt(end, weather))),
   ]);
   return { ...mouth, ...Object.fromEntries(anew) };
-}
-
-function mapValues<T, U>(
-  group: Readonly<Record<string, T>>,
-  f: (value: T, name: string) => U,
-): Record<string, U> {
-  const made: Record<string, U> = {};
-  for (const name in group) made[name] = f(group[name]!, name);
-  return made;
 }

@@ -82,3 +82,11 @@ export function listOption(
   }
   return values;
 }
+
+/** A whole number in an option. */
+export function wholeNumber(option: string, text: string, low: number, high: number): number {
+  const number = Number(text);
+  if (/^\d+$/.test(text) && number >= low && number <= high) return number;
+  const expected = low === high ? `${low} alone` : `a whole number from ${low} to ${high}`;
+  throw new UserError(`${option}: read "${text}", expected ${expected}`);
+}

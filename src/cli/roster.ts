@@ -13,6 +13,7 @@ import {
 } from "../index.ts";
 import { faultsError } from "./benchFile.ts";
 import { namesOption } from "./namesAsked.ts";
+import { wholeNumber } from "./optionQuantity.ts";
 import { rateBar } from "./progress.ts";
 import { planOf, type RosterOptions } from "./rosterOptions.ts";
 import { type RosterOutcome, runRoster } from "./rosterRun.ts";
@@ -97,8 +98,9 @@ of them, ${MOST_SORTED} at the most, or those of --top.`,
     if (options.output !== undefined) {
       notOver(options.output, [file, stations, ...(options.sites === undefined ? [] : [options.sites])]);
     }
-    const top = wholeNumber("--top", options.top, 1, MOST_SORTED);
-    const asked = wholeNumber("--workers", options.workers, 1, MOST_WORKERS);
+    const { top: topText, workers } = options;
+    const top = topText === undefined ? undefined : wholeNumber("--top", topText, 1, MOST_SORTED);
+    const asked = workers === undefined ? undefined : wholeNumber("--workers", workers, 1, MOST_WORKERS);
     const scenario = await scenarioIn(file);
     const { roster, faults } = openRoster(stations, "stations");
     if (roster === undefined) throw faultsError(faults);
@@ -255,16 +257,4 @@ function threadsFor({ bytes }: Roster, { sites, scenario }: RosterPlan, asked: n
 function toStandardOutput(text: string | Uint8Array): void | Promise<void> {
   if (process.stdout.write(text)) return;
   return new Promise((resolve) => process.stdout.once("drain", resolve));
-}
-
-function wholeNumber(
-  option: string,
-  text: string | undefined,
-  low: number,
-  high: number,
-): number | undefined {
-  if (text === undefined) return undefined;
-  const number = Number(text);
-  if (/^\d+$/.test(text) && number >= low && number <= high) return number;
-  throw new UserError(`${option}: read "${text}", expected a whole number from ${low} to ${high}`);
 }

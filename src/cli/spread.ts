@@ -2,10 +2,10 @@ import { Command, Option } from "commander";
 import { type Case, cases, prepare, spreadCsv, spreadJson, spreadOf, spreadText } from "../index.ts";
 import { knownName } from "./knownName.ts";
 import { namesAsked, namesOption } from "./namesAsked.ts";
-import { within } from "./optionQuantity.ts";
+import { wholeNumber, within } from "./optionQuantity.ts";
 import { progressBar } from "./progress.ts";
 import { scenarioIn } from "./scenarioFile.ts";
-import { paintFor, print, UserError } from "./terminal.ts";
+import { paintFor, print } from "./terminal.ts";
 
 interface SpreadOptions {
   readonly weather?: readonly string[];
@@ -37,8 +37,8 @@ export const spreadCommand = new Command("spread")
   .addOption(new Option("--json", "everything as JSON").conflicts("csv"))
   .option("--csv", "a flat table, a row for each weather and cover")
   .action(async (file: string, options: SpreadOptions) => {
-    const draws = whole("--draws", options.draws, 1, MOST_DRAWS);
-    const seed = whole("--seed", options.seed, 0, MOST_SEED);
+    const draws = wholeNumber("--draws", options.draws, 1, MOST_DRAWS);
+    const seed = wholeNumber("--seed", options.seed, 0, MOST_SEED);
     const precision = within("--precision", options.precision, "percent", [0.001, 50], "0.001 to 50 %") / 100;
     const link = prepare(await scenarioIn(file));
     const { mode = link.scenario.receiver.modes[0]! } = options;
@@ -68,10 +68,4 @@ function choose(
       return own || covers.includes(cover);
     })
     .map((one) => ({ ...one, mode }));
-}
-
-function whole(option: string, text: string, low: number, high: number): number {
-  const value = Number(text);
-  if (text.trim() !== "" && Number.isInteger(value) && value >= low && value <= high) return value;
-  throw new UserError(`${option}: read "${text}", expected a whole number from ${low} to ${high}`);
 }

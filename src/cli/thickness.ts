@@ -1,7 +1,7 @@
 import { Command, Option } from "commander";
 import { type Scenario, thickness, thicknessCsv, thicknessJson, thicknessText } from "../index.ts";
 import { knownName } from "./knownName.ts";
-import { bandOf, within } from "./optionQuantity.ts";
+import { bandOf, wholeNumber, within } from "./optionQuantity.ts";
 import { scenarioIn } from "./scenarioFile.ts";
 import { paintFor, print, UserError } from "./terminal.ts";
 
@@ -79,13 +79,6 @@ function layerOf({ covers }: Scenario, { cover, layer }: ThicknessOptions): numb
     throw new UserError(`cover "${cover}" ${why}: there is no layer to vary; give it layers in the scenario`);
   }
   return layer === undefined ? undefined : wholeNumber("--layer", layer, 1, layers.length) - 1;
-}
-
-function wholeNumber(option: string, text: string, low: number, high: number): number {
-  const number = Number(text);
-  if (/^\d+$/.test(text) && number >= low && number <= high) return number;
-  const expected = low === high ? `${low} alone` : `a whole number from ${low} to ${high}`;
-  throw new UserError(`${option}: read "${text}", expected ${expected}`);
 }
 
 /** A thickness with its unit; nothing is 0 in any. */

@@ -1,6 +1,9 @@
 /** dB of natural-log units: 10 / ln 10. */
 const DB_PER_NEPER_POWER = 10 / Math.LN10;
 
+/** The other way round, for products in a loop that drawn decibels go through. */
+export const NEPERS_PER_DB = Math.LN10 / 10;
+
 /** Power ratio to dB; 0 gives -Infinity. */
 export function powerToDb(ratio: number): number {
   return 10 * Math.log10(ratio);

@@ -62,6 +62,13 @@ export function skewness(sample: Float64Array): number {
   return sum / sample.length;
 }
 
+/** Part of a sample that lies above a level, 0 to 1. */
+export function shareAbove(sample: Float64Array, level: number): number {
+  let above = 0;
+  for (let i = 0; i < sample.length; i++) if (sample[i]! > level) above++;
+  return above / sample.length;
+}
+
 /** The library reads any list by index and length; its types know plain ones alone. */
 function listOf(sample: Float64Array): number[] {
   return sample as unknown as number[];

@@ -1,5 +1,6 @@
 import { sumOf } from "../budget/entry.ts";
 import type { Budget, Case, Link, Verdict } from "../budget/types.ts";
+import { isBare } from "../study/coverPairs.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { carriedText } from "./mechanismText.ts";
@@ -90,9 +91,9 @@ function coverCosts(report: MarginReport, own: readonly ReportBudget[]): string[
   const costs = own.flatMap((budget) => {
     const { weather, mode } = budget.case;
     const bare = report.budgets.find(
-      (other) => isBare(other) && other.case.mode === mode && other.case.weather === weather,
+      (other) => isBare(other.case) && other.case.mode === mode && other.case.weather === weather,
     );
-    if (bare === undefined || isBare(budget)) return [];
+    if (bare === undefined || isBare(budget.case)) return [];
     const cost = bare.marginDb - budget.marginDb;
     return Math.abs(cost) < UNSEEN_DB
       ? `nothing that a bench could show in ${weather}`
@@ -113,10 +114,6 @@ function dishCoverCosts(own: readonly ReportBudget[], { scenario }: Link): strin
     const noise = end === "receiver" ? ", beside the noise that it adds" : "";
     return `The cover over the ${end}'s dish (${dishCover}) takes ${listed(costs)}${noise}.`;
   });
-}
-
-function isBare({ case: { transmitter, receiver } }: ReportBudget): boolean {
-  return transmitter.cover === "bare" && receiver.cover === "bare";
 }
 
 /** The cover of both ends, or the transmitter's and the receiver's where they differ. */

@@ -1,6 +1,7 @@
 import type { Matter } from "../budget/causes.ts";
+import { isBare } from "../study/coverPairs.ts";
 import type { SpreadStudy } from "../study/spread.ts";
-import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
+import { coverMatters, type MatterOfSpread, type SpreadRanking } from "../study/spreadRanking.ts";
 import { cell, columns, RULE } from "./columns.ts";
 import { matterWords } from "./spreadWords.ts";
 import { abreast, capital, listed, paragraph, signed, tenth } from "./words.ts";
@@ -9,8 +10,6 @@ import { abreast, capital, listed, paragraph, signed, tenth } from "./words.ts";
 const LEAST_SHARE = 0.02;
 /** Matters worth advice in one weather. */
 const MOST_ADVICE = 2;
-
-export const COVER: readonly Matter[] = ["cover", "water"];
 
 /** Matter by weather: share of the variance and rank correlation, the largest first. */
 export function rankingTable({ rankings }: SpreadStudy): string {
@@ -56,18 +55,16 @@ export function adviceText({ rankings }: SpreadStudy): string {
   return [...comparisons, ...advices].map((line) => paragraph(line, "- ")).join("\n");
 }
 
-function comparison({ case: { weather, transmitter, receiver }, matters }: SpreadRanking): string {
-  const deviation = (some: readonly MatterOfSpread[]) => Math.hypot(...some.map(({ sigmaDb }) => sigmaDb));
-  const covers = matters.filter(({ matter }) => COVER.includes(matter));
-  const [first] = matters.filter(({ matter }) => !COVER.includes(matter));
+function comparison({ case: one, matters, coverSigmaDb: own }: SpreadRanking): string {
+  const { weather } = one;
+  const covers = matters.filter(({ matter }) => coverMatters.includes(matter));
+  const [first] = matters.filter(({ matter }) => !coverMatters.includes(matter));
   if (first === undefined) return "";
   const { many } = matterWords[first.matter];
   const name = subject(first.matter);
   const verb = many ? "matter" : "matters";
-  const own = deviation(covers);
   if (own < 0.05) {
-    const isBare = transmitter.cover === "bare" && receiver.cover === "bare";
-    const what = isBare ? "the feeds are bare" : "the cover adds nothing to the spread";
+    const what = isBare(one) ? "the feeds are bare" : "the cover adds nothing to the spread";
     return `${capital(weather)}: ${what}; ${name} ${many ? "lead" : "leads"}.`;
   }
   const times = first.sigmaDb / own;

@@ -1,9 +1,8 @@
 import type { Case, Link } from "../budget/types.ts";
 import type { EndName } from "../scenario/types.ts";
 import type { SpreadRow, SpreadStudy } from "../study/spread.ts";
-import type { MatterOfSpread, SpreadRanking } from "../study/spreadRanking.ts";
+import { coverMatters, type MatterOfSpread, type SpreadRanking } from "../study/spreadRanking.ts";
 import { coverName } from "./marginText.ts";
-import { COVER } from "./spreadAdvice.ts";
 import { matterWords } from "./spreadWords.ts";
 import { listed, paragraph, percent, signed, tenth } from "./words.ts";
 
@@ -60,10 +59,11 @@ function reasonTexts(apart: readonly SpreadRow[], rankings: readonly SpreadRanki
     const own = rows.find((row) => ranked !== undefined && coverName(row) === coverName(ranked));
     // Another cover's share in it is not ranked; all else is alike.
     const matters = (ranked?.matters ?? []).filter(
-      ({ matter }) => own !== undefined || !COVER.includes(matter),
+      ({ matter }) => own !== undefined || !coverMatters.includes(matter),
     );
+    const whole = (own === undefined ? ranked?.otherSigmaDb : ranked?.sigmaDb) ?? 0;
     const row = own ?? rows[0]!;
-    return { line: partingText(row), reasons: reasonsOf(row, matters, link) };
+    return { line: partingText(row), reasons: reasonsOf(row, matters, whole, link) };
   });
   const reasons = new Map<string, Reason>();
   for (const reason of told.flatMap((one) => one.reasons)) {
@@ -82,9 +82,8 @@ interface Reason {
   readonly text: string;
 }
 
-function reasonsOf(row: SpreadRow, matters: readonly MatterOfSpread[], link: Link): Reason[] {
+function reasonsOf(row: SpreadRow, matters: readonly MatterOfSpread[], whole: number, link: Link): Reason[] {
   const { case: one } = row;
-  const whole = Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
   const always = (about: string, texts: readonly string[]) =>
     texts.map((text) => ({ about, weight: 1, text }));
   const tied =

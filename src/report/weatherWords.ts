@@ -1,13 +1,10 @@
 import type { Link } from "../budget/types.ts";
 import type { RainStretch } from "../study/breakEven.ts";
+import { isBare } from "../study/coverPairs.ts";
 import type { CoverLadder, ModeLadder, WeatherLadder } from "../study/weatherLadder.ts";
 import { pairName } from "./marginText.ts";
 import { askedFigure, backWords, rainWordsText, rateFigure, wayWords } from "./rateWords.ts";
 import { capital, listed, tenth } from "./words.ts";
-
-export function isBare({ transmitter, receiver }: CoverLadder): boolean {
-  return transmitter.cover === "bare" && receiver.cover === "bare";
-}
 
 /** The answer for a mode: how hard it may rain, and what the cover takes of that. */
 export function modeAnswer({ mode, covers }: ModeLadder, link: Link): string {

@@ -1,4 +1,5 @@
 import type { Link } from "../budget/types.ts";
+import { isBare } from "../study/coverPairs.ts";
 import type { Span } from "../study/span.ts";
 import type { CoverYear, YearOutage } from "../study/yearOutage.ts";
 import { cell, columns, RULE } from "./columns.ts";
@@ -24,10 +25,6 @@ export function yearText(year: YearOutage, link: Link, paint: Paint = plain): st
     `${paint("strong", "Caution")}\n${cautionLines()}`,
   ];
   return `${parts.filter((part) => part !== "").join("\n\n")}\n`;
-}
-
-function isBare({ transmitter, receiver }: CoverYear): boolean {
-  return transmitter.cover === "bare" && receiver.cover === "bare";
 }
 
 /** Rain first, then multipath, then what the cover costs; of the covers that the scenario has on. */

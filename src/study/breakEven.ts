@@ -113,7 +113,7 @@ function openRain(
 }
 
 /** The weather with the most rain among those named; the first of them where all are dry. */
-export function rainiest({ scenario }: Link, weathers: readonly string[]): string {
+export function rainiest({ scenario }: Pick<Link, "scenario">, weathers: readonly string[]): string {
   const rate = (name: string) => scenario.weather[name]!.rainMmPerH.value;
   return weathers.reduce((a, b) => (rate(b) > rate(a) ? b : a));
 }

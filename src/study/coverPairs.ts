@@ -4,6 +4,11 @@ import type { EndName } from "../scenario/types.ts";
 /** Feeds and covers of both ends. */
 export type BothEnds = Pick<Case, EndName>;
 
+/** Open mouths at both ends. */
+export function isBare({ transmitter, receiver }: BothEnds): boolean {
+  return transmitter.cover === "bare" && receiver.cover === "bare";
+}
+
 /** The scenario's feeds under a cover each. */
 export function endsUnder({ scenario }: Link, sent: string, heard: string): BothEnds {
   return {

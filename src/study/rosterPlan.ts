@@ -1,6 +1,8 @@
 import { powerToDb } from "../numeric/decibels.ts";
 import { requiredSnrInBandwidth } from "../receiver/modes.ts";
 import type { Dish, Scenario, Site } from "../scenario/types.ts";
+import { rainiest } from "./breakEven.ts";
+import { isClear } from "./clearWeather.ts";
 import type { RosterFilter } from "./rosterOrder.ts";
 
 /** A site that the operator calls from. */
@@ -34,22 +36,17 @@ const USUAL_EFFICIENCY = 0.5;
 /** A feed stands before no more of a dish than this: own choice. */
 const MOST_BLOCKED = 0.5;
 
-/** The weather of a scenario that is dry, the first such; where none is, the one with the least rain. */
+/** The weather of a scenario that is clear, the first such; where none is, the one with the least rain. */
 export function driest({ weather }: Scenario): string {
   const names = Object.keys(weather);
-  const isDry = (name: string) => {
-    const { rainMmPerH, fogGPerM3, dewMm, coversWetAsAtMmPerH = 0, iceMm, snow } = weather[name]!;
-    return (
-      rainMmPerH.value + fogGPerM3 + dewMm.value + coversWetAsAtMmPerH + iceMm === 0 && snow === undefined
-    );
-  };
-  return names.find(isDry) ?? leastBy(names, (name) => weather[name]!.rainMmPerH.value);
+  const rate = (name: string) => weather[name]!.rainMmPerH.value;
+  return names.find((name) => isClear(weather[name]!)) ?? names.reduce((a, b) => (rate(b) < rate(a) ? b : a));
 }
 
 /** The weather with the most rain; undefined where none has any. */
-export function wettest({ weather }: Scenario): string | undefined {
-  const most = leastBy(Object.keys(weather), (name) => -weather[name]!.rainMmPerH.value);
-  return weather[most]!.rainMmPerH.value > 0 ? most : undefined;
+export function wettest(scenario: Scenario): string | undefined {
+  const most = rainiest({ scenario }, Object.keys(scenario.weather));
+  return scenario.weather[most]!.rainMmPerH.value > 0 ? most : undefined;
 }
 
 /** Modes by what they ask of the signal, the most first: voice comes before telegraphy. */
@@ -104,8 +101,4 @@ export function patternOf(scenario: Scenario, weathers: readonly string[]): Scen
     weather: Object.fromEntries(weathers.map((name) => [name, weather[name]!])),
     path: { from, to: { ...elsewhere, longitude: from.longitude }, k, kLow, N0, dN },
   };
-}
-
-function leastBy<T>(items: readonly T[], of: (item: T) => number): T {
-  return items.reduce((a, b) => (of(b) < of(a) ? b : a));
 }

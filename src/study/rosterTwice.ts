@@ -1,3 +1,4 @@
+import { textHash } from "../numeric/textHash.ts";
 import type { Point } from "../path/geodesic.ts";
 
 /** Places nearer than this in either coordinate are one [deg]: some metres. */
@@ -10,13 +11,12 @@ export type StationKey = readonly [number, number];
 export function stationKey({ name, latitude, longitude }: Point & { readonly name: string }): StationKey {
   const cell = [latitude, longitude].map((degrees) => Math.round(degrees / SAME_PLACE_DEG));
   const text = `${name.toLowerCase()}\n${cell.join(" ")}`;
-  return [hash(text, 0x811c9dc5), hash(text, 0x2f0b4c47)];
+  return [mixed(text), mixed(text, 0x2f0b4c47)];
 }
 
-/** FNV-1a with an end that mixes (murmur3's), from memory: 64 bits of two are alike once in 10^7 rosters of a million. */
-function hash(text: string, start: number): number {
-  let h = start;
-  for (let i = 0; i < text.length; i++) h = Math.imul(h ^ text.charCodeAt(i), 0x01000193);
+/** With an end that mixes (murmur3's, from memory): 64 bits of two are alike once in some 10^7 rosters of a million. */
+function mixed(text: string, start?: number): number {
+  let h = textHash(text, start);
   h = Math.imul(h ^ (h >>> 16), 0x85ebca6b);
   h = Math.imul(h ^ (h >>> 13), 0xc2b2ae35);
   return (h ^ (h >>> 16)) >>> 0;

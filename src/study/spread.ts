@@ -3,9 +3,11 @@ import { drawingOf } from "../budget/drawing.ts";
 import type { Budget, Case, Link, PathGeometry, Verdict, Warning } from "../budget/types.ts";
 import { verdictOf } from "../budget/verdict.ts";
 import { proportionInterval } from "../numeric/proportion.ts";
-import { mean, quantilesOf, variance } from "../numeric/ranking.ts";
+import { mean, quantilesOf, shareAbove, variance } from "../numeric/ranking.ts";
+import { isBare } from "./coverPairs.ts";
 import { type SpreadRanking, spreadRanking } from "./spreadRanking.ts";
 import { type Sampling, sampleOf } from "./spreadSampling.ts";
+import { warningsOnce } from "./warningsOnce.ts";
 
 /** Quantiles of a margin or of a cost [dB]: in one of twenty draws it is less than `lowDb`, in one more than `highDb`. */
 export interface Range {
@@ -100,11 +102,8 @@ export function spreadOf(link: Link, chosen: readonly Case[], sampling: Sampling
   const own = chosen.filter(
     (one) => one.transmitter.cover === transmitter.cover && one.receiver.cover === receiver.cover,
   );
-  const warnings = new Map<string, Warning>();
-  for (const one of cases) {
-    for (const warning of budgetOf.get(keyOf(one))!.warnings)
-      warnings.set(`${warning.code} ${warning.where} ${warning.message}`, warning);
-  }
+  const warnings = warningsOnce();
+  for (const one of cases) warnings.add(budgetOf.get(keyOf(one))!.warnings);
   return {
     title,
     frequencyGHz,
@@ -118,7 +117,7 @@ export function spreadOf(link: Link, chosen: readonly Case[], sampling: Sampling
     causes: drawing.causes,
     rows,
     rankings: spreadRanking(link, own.length > 0 ? own : chosen, sampling.seed),
-    warnings: [...warnings.values()],
+    warnings: warnings.all(),
   };
 }
 
@@ -128,10 +127,6 @@ function bareOf(one: Case): Case {
     transmitter: { ...one.transmitter, cover: "bare" },
     receiver: { ...one.receiver, cover: "bare" },
   };
-}
-
-function isBare({ transmitter, receiver }: Case): boolean {
-  return transmitter.cover === "bare" && receiver.cover === "bare";
 }
 
 function keyOf({ weather, transmitter, receiver }: Case): string {
@@ -148,10 +143,12 @@ function rangeOf(sample: Float64Array): Range {
 }
 
 function chanceOf(margins: Float64Array, levelDb: number): Chance {
-  let hits = 0;
-  for (let i = 0; i < margins.length; i++) if (margins[i]! > levelDb) hits++;
-  const { low, high } = proportionInterval({ hits, trials: margins.length });
-  return { share: hits / margins.length, low, high };
+  const share = shareAbove(margins, levelDb);
+  const { low, high } = proportionInterval({
+    hits: Math.round(share * margins.length),
+    trials: margins.length,
+  });
+  return { share, low, high };
 }
 
 function difference(a: Float64Array, b: Float64Array): Float64Array {

@@ -1,7 +1,7 @@
 import type { Matter } from "../budget/causes.ts";
 import { type Drawing, drawingOf } from "../budget/drawing.ts";
 import type { Case, Link } from "../budget/types.ts";
-import { mean, quantilesOf, rankCorrelation, skewness, variance } from "../numeric/ranking.ts";
+import { mean, quantilesOf, rankCorrelation, shareAbove, skewness, variance } from "../numeric/ranking.ts";
 import { uniformStream } from "../numeric/uniformStream.ts";
 import { varianceShare } from "../numeric/varianceShare.ts";
 import { fill } from "./spreadSampling.ts";
@@ -33,7 +33,14 @@ export interface SpreadRanking {
   readonly lowDb: number;
   readonly closes: number;
   readonly matters: readonly MatterOfSpread[];
+  /** Root-sum-square of the matters' deviations: of all, of the covers with their water, and of all others [dB]. */
+  readonly sigmaDb: number;
+  readonly coverSigmaDb: number;
+  readonly otherSigmaDb: number;
 }
+
+/** Matters that a cover brings. */
+export const coverMatters: readonly Matter[] = ["cover", "water"];
 
 /**
  * What the spread of cases hangs on: two independent samples, and mixtures of them matter by matter. Matters that
@@ -77,17 +84,21 @@ export function spreadRanking(link: Link, cases: readonly Case[], seed: number):
         sigmaDb: Math.sqrt(variance(by)),
         shiftDb: mean(by) - base[k]!,
         skewness: skewness(by),
-        knownCloses: shareAbove0(known[k]!),
+        knownCloses: shareAbove(known[k]!, 0),
         knownLowDb: quantilesOf(known[k]!.slice(), [0.05])[0]!,
       };
     });
+    const matters = found
+      .filter(({ sigmaDb }) => sigmaDb > LEAST_DB)
+      .sort((x, y) => y.varianceShare - x.varianceShare || y.sigmaDb - x.sigmaDb);
     return {
       case: one,
       lowDb: quantilesOf(a[k]!.slice(), [0.05])[0]!,
-      closes: shareAbove0(a[k]!),
-      matters: found
-        .filter(({ sigmaDb }) => sigmaDb > LEAST_DB)
-        .sort((x, y) => y.varianceShare - x.varianceShare || y.sigmaDb - x.sigmaDb),
+      closes: shareAbove(a[k]!, 0),
+      matters,
+      sigmaDb: deviationOf(matters),
+      coverSigmaDb: deviationOf(matters.filter(({ matter }) => coverMatters.includes(matter))),
+      otherSigmaDb: deviationOf(matters.filter(({ matter }) => !coverMatters.includes(matter))),
     };
   });
 }
@@ -101,8 +112,6 @@ function marginsWith({ uniforms, margins, work }: Drawing, columns: readonly Flo
   return margins.map((some) => some.slice());
 }
 
-function shareAbove0(sample: Float64Array): number {
-  let above = 0;
-  for (let i = 0; i < sample.length; i++) if (sample[i]! > 0) above++;
-  return above / sample.length;
+function deviationOf(matters: readonly MatterOfSpread[]): number {
+  return Math.hypot(...matters.map(({ sigmaDb }) => sigmaDb));
 }

@@ -8,6 +8,7 @@ import { bisect } from "../numeric/roots.ts";
 import { rainWorstMonth } from "../path/fadingPeriod.ts";
 import { rainFadeValidity } from "../path/rainFade.ts";
 import type { EndName, Scenario, Weather } from "../scenario/types.ts";
+import { isClear } from "./clearWeather.ts";
 import { type BothEnds, coverPairs, endsUnder } from "./coverPairs.ts";
 import { type MultipathOfYear, multipathOfYear } from "./multipathOfYear.ts";
 import { type RainOfYear, rainOfYear } from "./rainOfYear.ts";
@@ -159,23 +160,17 @@ function sightWarnings({ name, label }: Budget["mechanisms"][number]): Warning[]
 
 /** The scenario's first weather without rain, fog, water, ice or snow, or its first one freed of them. */
 function clearWeather({ weather }: Scenario): Weather {
-  const all = Object.values(weather).map((one) => ({
-    one,
-    freed: {
-      ...one,
-      rainMmPerH: { value: 0 },
-      fogGPerM3: 0,
-      coversWetAsAtMmPerH: undefined,
-      driedForMin: 0,
-      dewMm: { value: 0 },
-      iceMm: 0,
-      snow: undefined,
-    },
-  }));
-  const isClear = ({ one }: (typeof all)[number]) =>
-    one.rainMmPerH.value + one.fogGPerM3 + (one.coversWetAsAtMmPerH ?? 0) + one.dewMm.value + one.iceMm ===
-      0 && one.snow === undefined;
-  return (all.find(isClear) ?? all[0]!).freed;
+  const all = Object.values(weather);
+  return {
+    ...(all.find(isClear) ?? all[0]!),
+    rainMmPerH: { value: 0 },
+    fogGPerM3: 0,
+    coversWetAsAtMmPerH: undefined,
+    driedForMin: 0,
+    dewMm: { value: 0 },
+    iceMm: 0,
+    snow: undefined,
+  };
 }
 
 type RainShare = { readonly percent: Span; readonly atRain: Outage["atRain"] };

@@ -82,12 +82,4 @@ describe("the work of a draw", () => {
     // Code that is compiled beside may cost one; numbers on the heap cost thirty.
     expect(between.match(/Scavenge/g)?.length ?? 0).toBeLessThanOrEqual(2);
   });
-
-  it("makes nothing anew: the columns of every block are the same ones", () => {
-    const drawing = drawingOf(prepare(scenario), all, 64);
-    const before = drawing.margins.map((margins) => margins.buffer);
-    drawing.work();
-    drawing.work();
-    expect(drawing.margins.every((margins, k) => margins.buffer === before[k])).toBe(true);
-  });
 });

@@ -4,6 +4,7 @@ import {
   mean,
   quantilesOf,
   rankCorrelation,
+  shareAbove,
   skewness,
   variance,
 } from "../../src/numeric/ranking.ts";
@@ -49,5 +50,12 @@ describe("moments", () => {
     expect(variance(sample)).toBe(3.5); // (4 + 1 + 0 + 9)/4
     expect(skewness(sample)).toBeCloseTo(4.5 / 3.5 ** 1.5, 12); // (-8 - 1 + 0 + 27)/4 = 4.5
     expect(skewness(list(2, 2))).toBe(0);
+  });
+});
+
+describe("the share above a level", () => {
+  it("does not count the level itself", () => {
+    expect(shareAbove(list(-1, 0, 0, 2), 0)).toBe(0.25);
+    expect(shareAbove(list(3, 4), -1)).toBe(1);
   });
 });
