@@ -5,7 +5,7 @@ import type { ComparedEntry, ComparedWeather, Comparison } from "../study/compar
 import { type Cell, cell, columns, RULE } from "./columns.ts";
 import { compareAnswer } from "./compareAnswer.ts";
 import { inputsText } from "./compareInputsText.ts";
-import { meanings } from "./marginText.ts";
+import { marginCell } from "./marginText.ts";
 import { warningText } from "./notes.ts";
 import { abreast, lengthOf, listed, type Paint, paragraph, percent, plain, signed, tenth } from "./words.ts";
 
@@ -65,15 +65,12 @@ function cut(name: string, width: number): string {
 }
 
 function marginTable(weathers: readonly ComparedWeather[], paint: Paint): string {
-  const margin = ({ budget }: ComparedWeather, side: Side, paint: Paint) => {
-    const { marginDb, marginSigmaDb, verdict } = budget[side];
-    const figures = `${tenth(marginDb)} ±${tenth(marginSigmaDb)} `;
-    const word = verdict.padEnd(6);
-    return cell(figures + word, figures + paint(meanings[verdict], word));
-  };
   const margins = {
     heads: ["A", "B"],
-    cells: (one: ComparedWeather, paint: Paint) => [margin(one, "a", paint), margin(one, "b", paint)],
+    cells: ({ budget: { a, b } }: ComparedWeather, paint: Paint) => [
+      marginCell(a, paint),
+      marginCell(b, paint),
+    ],
   };
   const differences = {
     heads: ["B less A", "B better with"],

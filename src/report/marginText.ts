@@ -3,7 +3,7 @@ import type { Budget, Case, Link, Verdict } from "../budget/types.ts";
 import { isBare } from "../study/coverPairs.ts";
 import type { MarginReport } from "../study/marginReport.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
-import { carriedText } from "./mechanismText.ts";
+import { carriedText, verdictWords } from "./mechanismText.ts";
 import {
   abreast,
   capital,
@@ -69,19 +69,18 @@ export function answer(report: MarginReport, link: Link): string {
 
 /** One mode in all weathers, the worst first. */
 function modeAnswer(label: string, budgets: readonly ReportBudget[]): string {
-  const words = { fails: "fails", thin: "is thin", closes: "closes" } as const;
   const said = (["fails", "thin", "closes"] as const).flatMap((verdict) => {
     const some = budgets.filter((budget) => budget.verdict === verdict);
     if (some.length === 0) return [];
     if (some.length === budgets.length && some.length > 1) {
       const least = Math.min(...some.map(({ marginDb }) => marginDb));
-      return `${words[verdict]} in every weather (${tenth(least)} dB at the least)`;
+      return `${verdictWords[verdict]} in every weather (${tenth(least)} dB at the least)`;
     }
     const weathers = some.map(({ case: { weather }, marginDb, holdProbability }) => {
       const holds = verdict === "thin" ? `, holds with ${percent(holdProbability)}` : "";
       return `${weather} (${tenth(marginDb)} dB${holds})`;
     });
-    return `${words[verdict]} in ${listed(weathers)}`;
+    return `${verdictWords[verdict]} in ${listed(weathers)}`;
   });
   return `${capital(label)} ${listed(said)}.`;
 }

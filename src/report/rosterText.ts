@@ -2,9 +2,10 @@ import type { MechanismName } from "../budget/types.ts";
 import type { SortKey } from "../study/rosterOrder.ts";
 import type { RosterPlan, RosterSite } from "../study/rosterPlan.ts";
 import { type Cell, cell, columns, RULE } from "./columns.ts";
+import { meanings } from "./marginText.ts";
 import { cautionLines } from "./notes.ts";
 import type { RosterLine } from "./rosterData.ts";
-import { LINE_WIDTH, lengthOf, listed, type Meaning, type Paint, paragraph, plain, tenth } from "./words.ts";
+import { LINE_WIDTH, lengthOf, listed, type Paint, paragraph, plain, tenth } from "./words.ts";
 
 /** One letter for each way, so that two of them fit. */
 const letters: Readonly<Record<MechanismName, string>> = {
@@ -95,11 +96,6 @@ function siteText(site: RosterSite, lines: readonly RosterLine[], table: RosterT
   const title = paint("strong", paragraph(`From ${site.name}: ${count}, by ${sort}; ${compass}`));
   return lines.length === 0 ? title : `${title}\n${tableOf(lines, table, paint)}`;
 }
-
-const meanings = { closes: "good", thin: "doubtful", fails: "bad" } as const satisfies Record<
-  string,
-  Meaning
->;
 
 function tableOf(lines: readonly RosterLine[], { plan }: RosterTable, paint: Paint): string {
   const wet = plan.weathers.length > 1;

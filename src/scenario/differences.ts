@@ -1,4 +1,5 @@
 import { kinds, type QuantityKind, readQuantity } from "./quantity.ts";
+import { isGroup, type Raw } from "./raw.ts";
 import type { ReadScenario, Scenario } from "./types.ts";
 
 /** One thing that two files say differently, each in its own words; undefined where a file does not say it. */
@@ -10,7 +11,6 @@ export interface TypedDifference {
 }
 
 type Path = TypedDifference["path"];
-type Group = Readonly<Record<string, unknown>>;
 
 /** Keys under which names and files stand: `1 in` and `25.4 mm` are two names there. */
 const naming = new Set([
@@ -31,7 +31,7 @@ export function typedDifferences(a: ReadScenario, b: ReadScenario): TypedDiffere
     const whole = (value: unknown) => (value === undefined && path.length === 1 ? {} : value);
     const both = [left, right].some(isGroup) ? [whole(left), whole(right)] : [left, right];
     if (both.every(isGroup)) {
-      const [one, other] = both as [Group, Group];
+      const [one, other] = both as [Raw, Raw];
       for (const key of new Set([...Object.keys(one), ...Object.keys(other)])) {
         walk(own(one, key), own(other, key), [...path, key]);
       }
@@ -51,15 +51,11 @@ export function typedDifferences(a: ReadScenario, b: ReadScenario): TypedDiffere
   return found;
 }
 
-function isGroup(value: unknown): value is Group {
-  return typeof value === "object" && value !== null && !Array.isArray(value);
-}
-
 function isListOfGroups(value: unknown): boolean {
   return Array.isArray(value) && value.some(isGroup);
 }
 
-function own(group: Group, key: string): unknown {
+function own(group: Raw, key: string): unknown {
   return Object.hasOwn(group, key) ? group[key] : undefined;
 }
 
