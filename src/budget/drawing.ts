@@ -18,7 +18,7 @@ export interface Drawing {
   readonly budgets: readonly Budget[];
   /** Draws of a block. */
   readonly block: number;
-  /** Random numbers strictly inside (0, 1): by cause, then by draw. */
+  /** Random numbers strictly inside (0, 1), or `STILL`: by cause, then by draw. */
   readonly uniforms: readonly Float64Array[];
   /** Margins [dB]: by case, then by draw; good until the next `work`. */
   readonly margins: readonly Float64Array[];
