@@ -3,6 +3,7 @@ import { reflectionFigures } from "../cover/reflectionFigures.ts";
 import { group } from "./fields.ts";
 import { describeRefusal, readQuantity } from "./quantity.ts";
 import { quantity, uncertain } from "./quantityField.ts";
+import { stationFields } from "./stationFields.ts";
 import type { Dish, Feed } from "./types.ts";
 import { instead } from "./wording.ts";
 
@@ -113,7 +114,7 @@ export const feedSchema = group(
 /** A dish by its diameter, or by a gain that its user states. */
 export const dishSchema = group(
   {
-    diameter: quantity("lengthM", { about: "diameter of the dish", range: [0.05, 40] }).optional(),
+    diameter: quantity("lengthM", stationFields.diameter).optional(),
     focal_ratio: quantity("ratio", { about: "focal length over diameter", range: [0.251, 3] }).optional(),
     efficiency: quantity("percent", { about: "aperture efficiency", range: [1, 100] }).optional(),
     gain: uncertain("gainDbi", { about: "gain of dish and feed together", range: [5, 75] }).optional(),

@@ -3,9 +3,10 @@ import type { Point } from "../path/geodesic.ts";
 import { type LocatorCell, locatorToPoint } from "../path/locator.ts";
 import { readCoordinate } from "./coordinates.ts";
 import { faultOfText } from "./fields.ts";
-import { outOfRange } from "./judgedQuantity.ts";
+import { type FieldOptions, outOfRange } from "./judgedQuantity.ts";
 import { describeRefusal, type QuantityKind, readQuantity } from "./quantity.ts";
 import type { RosterCells, RosterColumn } from "./rosterColumns.ts";
+import { stationFields } from "./stationFields.ts";
 import type { Uncertain } from "./types.ts";
 import { didYouMean, listed, shown, visible } from "./wording.ts";
 
@@ -104,12 +105,7 @@ export function rowReader({
     const textIn = (column: RosterColumn) => cells[columns[column]?.cell ?? -1] ?? "";
     const fault = (column: RosterColumn, message: string): undefined =>
       faultAt(columns[column]?.cell ?? 0, `${column}: ${message}`);
-    const quantity = (
-      column: RosterColumn,
-      about: string,
-      kind: QuantityKind,
-      range: readonly [number, number],
-    ) => {
+    const quantity = (column: RosterColumn, kind: QuantityKind, field: FieldOptions) => {
       const typed = numberWithUnit(textIn(column), columns[column]?.unit ?? "", separator);
       if (typed === "") return undefined;
       const reading = readQuantity(typed, kind, { spread: kind === "powerDbm" || kind === "levelDb" });
@@ -117,7 +113,7 @@ export function rowReader({
         const inHeader = `, or name the unit in the header, such as "${column} ${headerUnit(kind)}"`;
         return fault(column, describeRefusal(reading) + (reading.code === "bare_number" ? inHeader : ""));
       }
-      const message = outOfRange(reading, kind, { about, range });
+      const message = outOfRange(reading, kind, field);
       return message === undefined ? { value: reading.value, sigma: reading.sigma } : fault(column, message);
     };
 
@@ -128,10 +124,10 @@ export function rowReader({
     const station = {
       line,
       name,
-      groundM: quantity("ground", "ground above sea level", "lengthM", [-450, 9000])?.value,
-      heightM: quantity("height", "antenna above ground", "lengthM", [0, 1000])?.value,
-      powerDbm: quantity("power", "power at the transmitter", "powerDbm", [-60, 70]),
-      noiseFigureDb: quantity("noise figure", "noise figure of the receiver", "levelDb", [0, 30]),
+      groundM: quantity("ground", "lengthM", stationFields.ground)?.value,
+      heightM: quantity("height", "lengthM", stationFields.height)?.value,
+      powerDbm: quantity("power", "powerDbm", stationFields.power),
+      noiseFigureDb: quantity("noise figure", "levelDb", stationFields.noiseFigure),
       dish: readDish(),
       mode: readMode(textIn("mode"), modes, fault),
     };
@@ -151,7 +147,7 @@ export function rowReader({
       const gain = readQuantity(typed, "gainDbi", { spread: true });
       if (gain.ok && gain.value >= 0 && gain.value <= 75)
         return { gainDbi: { value: gain.value, sigma: gain.sigma } };
-      const size = quantity("dish", "diameter of the dish", "lengthM", [0.05, 40]);
+      const size = quantity("dish", "lengthM", stationFields.diameter);
       return size && { diameterM: size.value };
     }
   };

@@ -8,6 +8,7 @@ import { group, named, oneOf, text } from "./fields.ts";
 import { pathSchema } from "./pathSchema.ts";
 import { quantity, uncertain } from "./quantityField.ts";
 import { spreadSchema } from "./spreadSchema.ts";
+import { stationFields } from "./stationFields.ts";
 import type { Scenario, Uncertain } from "./types.ts";
 import { weatherSchema } from "./weatherSchema.ts";
 import { instead } from "./wording.ts";
@@ -40,13 +41,13 @@ const end = ({
 }) => ({ feed, dish, cover, dishCover, lineLossDb });
 
 const transmitter = group(
-  { power: uncertain("powerDbm", { about: "power at the transmitter", range: [-60, 70] }), ...endShape },
+  { power: uncertain("powerDbm", stationFields.power), ...endShape },
   "the transmitter: power, feed, dish, cover, line_loss",
 ).transform(({ power: powerDbm, ...rest }) => ({ powerDbm, ...end(rest) }));
 
 const receiver = group(
   {
-    noise_figure: uncertain("levelDb", { about: "noise figure of the receiver", range: [0, 30] }),
+    noise_figure: uncertain("levelDb", stationFields.noiseFigure),
     antenna_temperature: uncertain("temperatureK", {
       about: "noise temperature of what the antenna sees in dry weather",
       range: [2.7, 10000],

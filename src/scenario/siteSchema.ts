@@ -5,6 +5,7 @@ import { type Axis, readCoordinate } from "./coordinates.ts";
 import { group, text } from "./fields.ts";
 import { describeRefusal } from "./quantity.ts";
 import { quantity } from "./quantityField.ts";
+import { stationFields } from "./stationFields.ts";
 import type { Site } from "./types.ts";
 import { instead, shown } from "./wording.ts";
 
@@ -40,8 +41,8 @@ export const siteSchema = group(
     locator: locator.optional(),
     latitude: coordinate("latitude").optional(),
     longitude: coordinate("longitude").optional(),
-    ground: quantity("lengthM", { about: "ground above sea level", range: [-450, 9000] }),
-    height: quantity("lengthM", { about: "antenna above ground", range: [0, 1000] }),
+    ground: quantity("lengthM", stationFields.ground),
+    height: quantity("lengthM", stationFields.height),
   },
   "a place: locator, or latitude and longitude; ground; height",
   (has) => {
